@@ -1,0 +1,13 @@
+import { accountEndpoints } from './account';
+import type { Endpoint } from './endpoint';
+import { houseEndpoints } from './house';
+import { outboxEndpoints } from './outbox';
+import { userEndpoints } from './users';
+
+/** Every call of the interface. A route that is missing here fails a test. */
+export const ALL_ENDPOINTS: readonly Endpoint[] = [
+  accountEndpoints,
+  houseEndpoints,
+  outboxEndpoints,
+  userEndpoints,
+].flatMap((group) => Object.values<Endpoint>(group));

@@ -1,0 +1,99 @@
+import { AsyncLocalStorage } from 'node:async_hooks';
+import { mkdirSync } from 'node:fs';
+import path from 'node:path';
+import { Sequelize, Transaction } from 'sequelize';
+import { environment } from '@/lib/config/env';
+import { ALL_MODELS } from './all-models';
+import { waitForLocks } from './sqlite';
+
+/**
+ * The connection, and the only way to write. Sequelize gives every transaction its own SQLite
+ * connection; writers that wait for each other inside the database hold the few threads the holder
+ * needs to finish. So writers queue here, in the process, and start IMMEDIATE: nobody loses an update.
+ */
+
+const contexts = new AsyncLocalStorage<Map<string, unknown>>();
+
+/** Lets a query find the transaction of the work it belongs to without being handed it. */
+const transactionContext = {
+  get: (key: string) => contexts.getStore()?.get(key),
+  set: (key: string, value: unknown) => contexts.getStore()?.set(key, value),
+  run: (work: (context: Map<string, unknown>) => unknown) => {
+    const context = new Map(contexts.getStore() ?? []);
+    contexts.run(context, () => work(context));
+    return context;
+  },
+  bind: (work: (...args: unknown[]) => unknown, context = contexts.getStore() ?? new Map<string, unknown>()) =>
+    (...args: unknown[]) => contexts.run(context, () => work(...args)),
+};
+
+interface House {
+  database: Sequelize;
+  lastWrite: Promise<unknown>;
+}
+/** Kept on the global object: development reloads modules, and each bundle would open its own. */
+const shared = globalThis as typeof globalThis & { benchwrightHouse?: House };
+
+export function dataDirectory(): string {
+  return path.resolve(/* turbopackIgnore: true */ environment().DATA_DIR);
+}
+
+function open(): House {
+  const directory = dataDirectory();
+  mkdirSync(directory, { recursive: true });
+  Sequelize.useCLS(transactionContext);
+  const database = new Sequelize({
+    dialect: 'sqlite',
+    storage: path.join(directory, 'benchwright.sqlite'),
+    logging: false,
+    retry: { max: 1 },
+  });
+  waitForLocks(database, 5000);
+  for (const model of ALL_MODELS) model.define(database);
+  return { database, lastWrite: Promise.resolve() };
+}
+
+function house(): House {
+  shared.benchwrightHouse ??= open();
+  return shared.benchwrightHouse;
+}
+
+/** The database of this process, opened on first use. */
+export function database(): Sequelize {
+  return house().database;
+}
+
+/** Closes the connection, for scripts and tests. */
+export async function closeDatabase(): Promise<void> {
+  const open = shared.benchwrightHouse;
+  if (!open) return;
+  shared.benchwrightHouse = undefined;
+  await open.lastWrite.catch(() => undefined);
+  await open.database.close();
+}
+
+/** The transaction that the running work belongs to, if any. */
+export function currentTransaction(): Transaction | undefined {
+  return contexts.getStore()?.get('transaction') as Transaction | undefined;
+}
+
+/**
+ * Runs work in one write transaction: all of it is kept or none. A write inside a write joins it.
+ * Every query inside belongs to the transaction without being handed it.
+ */
+export async function write<T>(work: () => Promise<T>): Promise<T> {
+  if (currentTransaction()) return work();
+  const open = house();
+  const turn = open.lastWrite.then(
+    () => open.database.transaction({ type: Transaction.TYPES.IMMEDIATE }, work),
+  );
+  open.lastWrite = turn.catch(() => undefined);
+  return turn;
+}
+
+/** Runs work once the current transaction is kept; at once where there is none. */
+export function afterCommit(work: () => void): void {
+  const transaction = currentTransaction();
+  if (transaction) transaction.afterCommit(work);
+  else work();
+}
