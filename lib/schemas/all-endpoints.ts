@@ -2,6 +2,9 @@ import { accountEndpoints } from './account';
 import type { Endpoint } from './endpoint';
 import { houseEndpoints } from './house';
 import { outboxEndpoints } from './outbox';
+import { recordEndpoints } from './records';
+import { reviewEndpoints } from './reviews';
+import { searchEndpoints } from './search';
 import { userEndpoints } from './users';
 
 /** Every call of the interface. A route that is missing here fails a test. */
@@ -9,5 +12,8 @@ export const ALL_ENDPOINTS: readonly Endpoint[] = [
   accountEndpoints,
   houseEndpoints,
   outboxEndpoints,
+  recordEndpoints,
+  reviewEndpoints,
+  searchEndpoints,
   userEndpoints,
 ].flatMap((group) => Object.values<Endpoint>(group));
