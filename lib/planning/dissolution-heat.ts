@@ -35,7 +35,7 @@ export const SOLUTION_ENTHALPY_KJ_PER_MOL: Readonly<Record<string, number>> = {
 
 /**
  * Heat set free on diluting an acid of molality m (mol per kg water) to infinite dilution, kJ/mol at 25 °C:
- * `[molality, heat]`, ascending. Source: Parker, NSRDS-NBS 2 (1965), as printed in the CRC Handbook, Enthalpy of
+ * `[molality, heat]`, ascending; molality Infinity is the pure acid. Source: Parker, NSRDS-NBS 2 (1965), as printed in the CRC Handbook, Enthalpy of
  * Dilution of Acids. Sulfuric acid: integral heats of solution in Felder and Rousseau, Elementary Principles of
  * Chemical Processes, table B.11, from memory, counted from infinite dilution (96.19 kJ/mol), with
  * m = 55.51 / (mol water per mol acid).
@@ -72,6 +72,7 @@ const DILUTION_HEAT_KJ_PER_MOL: Readonly<Record<string, readonly (readonly [numb
     [15, 6.883],
     [20, 9.498],
     [55.506, 19.73],
+    [Number.POSITIVE_INFINITY, 33.28],
   ],
   HClO4: [
     [0, 0],
@@ -83,6 +84,7 @@ const DILUTION_HEAT_KJ_PER_MOL: Readonly<Record<string, readonly (readonly [numb
     [10, 2.013],
     [15, 7.92],
     [20, 13.81],
+    [Number.POSITIVE_INFINITY, 88.76],
   ],
   CH3COOH: [
     [0, 0],
@@ -92,6 +94,7 @@ const DILUTION_HEAT_KJ_PER_MOL: Readonly<Record<string, readonly (readonly [numb
     [10, 1.824],
     [20, 2.075],
     [55.506, 2.167],
+    [Number.POSITIVE_INFINITY, 1.51],
   ],
   H2SO4: [
     [0, 0],
@@ -108,23 +111,28 @@ const DILUTION_HEAT_KJ_PER_MOL: Readonly<Record<string, readonly (readonly [numb
     [37.004, 59.29],
     [55.506, 68.12],
     [111.012, 80.46],
+    [Number.POSITIVE_INFINITY, 96.19],
   ],
 };
 
-/** Molality of a solution, mol per kg of water, from its mass fraction. */
-function molalityOf(massPercent: number, molarMassGPerMol: number): number {
-  return (1000 * massPercent) / ((100 - massPercent) * molarMassGPerMol);
+/** Water per kilogram, mol. */
+const WATER_MOL_PER_KG = 55.508;
+
+/** Mole fraction of the acid from its molality; 1 for the pure acid. */
+function moleFraction(molality: number): number {
+  return molality === Number.POSITIVE_INFINITY ? 1 : molality / (molality + WATER_MOL_PER_KG);
 }
 
-/** Linear between rows; beyond the last row the last slope goes on, which is why such figures are called rough. */
-function heatToInfiniteDilution(rows: readonly (readonly [number, number])[], molality: number): number {
-  const above = rows.findIndex(([m]) => m >= molality);
-  const upper = Math.max(above === -1 ? rows.length - 1 : above, 1);
-  const [[m1, h1], [m2, h2]] = [
-    rows[upper - 1] as readonly [number, number],
-    rows[upper] as readonly [number, number],
+/** Linear in mole fraction between rows: near a straight line in molality when dilute, in water per acid when strong. */
+function heatToInfiniteDilution(rows: readonly (readonly [number, number])[], fraction: number): number {
+  const above = rows.findIndex(([molality]) => moleFraction(molality) >= fraction);
+  if (above <= 0) return above === 0 ? (rows[0]?.[1] ?? 0) : (rows.at(-1)?.[1] ?? 0);
+  const [low, high] = [
+    rows[above - 1] as readonly [number, number],
+    rows[above] as readonly [number, number],
   ];
-  return h1 + ((h2 - h1) * (molality - m1)) / (m2 - m1);
+  const [x1, x2] = [moleFraction(low[0]), moleFraction(high[0])];
+  return low[1] + ((high[1] - low[1]) * (fraction - x1)) / (x2 - x1);
 }
 
 export interface TemperatureRise {
@@ -132,8 +140,6 @@ export interface TemperatureRise {
   readonly riseC: number;
   readonly heatKj: number;
   readonly basis: 'dilution of a stock' | 'dissolution at infinite dilution';
-  /** Whether a table had to be followed beyond its last row. */
-  readonly isRough: boolean;
   readonly source: string;
 }
 
@@ -160,27 +166,23 @@ export function dilutionRise(
   waterMl: number,
 ): TemperatureRise | null {
   requirePositive(waterMl, 'the water in the vessel');
-  requireNotNegative(stock.massG, 'the mass of stock');
+  requirePositive(stock.massG, 'the mass of stock');
   if (!(stock.massPercent > 0 && stock.massPercent <= 100))
     throw new RangeError(`a stock of ${stock.massPercent} %`);
   const rows = DILUTION_HEAT_KJ_PER_MOL[stock.formula];
   if (rows === undefined) return null;
   const amountMol = (stock.massG * stock.massPercent) / 100 / stock.molarMassGPerMol;
   const waterG = waterMl + stock.massG * (1 - stock.massPercent / 100);
-  const end = (rows.at(-1) as readonly [number, number])[0];
-  // Pure acid has no molality; a last trace of water stands for it.
-  const before = molalityOf(Math.min(stock.massPercent, 99.5), stock.molarMassGPerMol);
-  const after = (1000 * amountMol) / waterG;
-  // Weak organic acids hardly warm: their tables end where the heat has levelled off, so the end row holds.
-  const isLevel = stock.formula === 'CH3COOH';
-  const heatOf = (m: number) => heatToInfiniteDilution(rows, isLevel ? Math.min(m, end) : m);
-  const perMolKj = heatOf(Math.min(before, 1.5 * end)) - heatOf(after);
+  const waterMol = (grams: number) => (grams * WATER_MOL_PER_KG) / 1000;
+  const ownWaterMol = waterMol(stock.massG * (1 - stock.massPercent / 100));
+  const before = amountMol / (amountMol + ownWaterMol);
+  const after = amountMol / (amountMol + waterMol(waterG));
+  const perMolKj = heatToInfiniteDilution(rows, before) - heatToInfiniteDilution(rows, after);
   const heatKj = amountMol * perMolKj;
   return {
     heatKj,
     riseC: (1000 * heatKj) / (waterG * WATER_HEAT_CAPACITY_J_PER_G_K),
     basis: 'dilution of a stock',
-    isRough: before > end && !isLevel,
     source: stock.formula === 'H2SO4' ? SOURCE_FELDER : SOURCE_PARKER,
   };
 }
@@ -200,7 +202,6 @@ export function dissolutionRise(formula: string, amountMol: number, waterMl: num
     heatKj,
     riseC: (1000 * heatKj) / (waterMl * WATER_HEAT_CAPACITY_J_PER_G_K),
     basis: 'dissolution at infinite dilution',
-    isRough: false,
     source: FROM_MEMORY.includes(formula) ? 'CRC Handbook, from memory' : SOURCE_PARKER,
   };
 }

@@ -7,6 +7,9 @@ import { GLASS_TOLERANCES, isoToleranceMl } from './glass-tolerances';
 /** Scales are used at half their capacity or more. @see UKAS LAB 15, section 2.9.2 */
 export const SMALLEST_SHARE_OF_SCALE = 0.5;
 
+/** Making the whole volume once more than asked counts as this many fillings: our own weighing of waste and work. */
+const SURPLUS_IN_FILLINGS = 2;
+
 const SCALED: readonly GlassUse[] = ['cylinder', 'graduated pipette', 'piston pipette', 'burette'];
 
 function useOf(item: EquipmentItem): GlassUse | null {
@@ -91,8 +94,8 @@ function asVessel(glass: GlassOwned, volumeMl: number): MakeVessel | null {
 
 /**
  * What to make a volume up in, so that the limit of error stays within the tolerance class (bench 5 %, ordinary 1 %,
- * analytical 0.2 %): fewest fillings, then least surplus, then a flask before a cylinder (for bench work the other
- * way round), then the coarser piece, so that fine glass stays free.
+ * analytical 0.2 %): few fillings and little surplus, then a flask before a cylinder (for bench work the other way
+ * round), then the coarser piece, so that fine glass stays free.
  * @throws RangeError if the volume is not positive
  */
 export function chooseVessel(
@@ -104,9 +107,10 @@ export function chooseVessel(
   const all = glass.map((piece) => asVessel(piece, volumeMl)).filter((vessel) => vessel !== null);
   const first: GlassUse = tolerance === 'bench' ? 'cylinder' : 'flask';
   const rank = (vessel: MakeVessel) => (vessel.glass.use === first ? 0 : 1);
+  const effort = (vessel: MakeVessel) => vessel.fills + (SURPLUS_IN_FILLINGS * vessel.surplusMl) / volumeMl;
   all.sort(
     (a, b) =>
-      a.fills - b.fills ||
+      effort(a) - effort(b) ||
       a.surplusMl - b.surplusMl ||
       rank(a) - rank(b) ||
       b.relativeTolerance - a.relativeTolerance ||
@@ -123,12 +127,18 @@ export function chooseVessel(
 export interface MeasuringChoice {
   readonly glass: GlassOwned;
   readonly volumeMl: number;
+  /** How many times the piece is filled to deliver the volume. */
+  readonly deliveries: number;
   readonly relativeTolerance: number;
 }
 
+/** More refills than this are not asked of anybody. */
+const MOST_DELIVERIES = 3;
+
 /**
- * What to measure out a volume of liquid with, to a limit of error of `maxRelative`: the coarsest piece that does,
- * cylinders first. Single-volume pipettes only for exactly their volume; scales from half their capacity.
+ * What to measure out a volume of liquid with, to a limit of error of `maxRelative`: in as few deliveries as may be,
+ * with the coarsest piece that does. Single-volume pipettes only for exactly their volume; scales from half their
+ * capacity. Limits of error of repeated deliveries add up.
  * @returns null if nothing owned does
  */
 export function chooseMeasure(
@@ -137,18 +147,24 @@ export function chooseMeasure(
   maxRelative: number,
 ): MeasuringChoice | null {
   requirePositive(volumeMl, 'the volume');
-  const fitting = glass.filter((piece) => {
-    if (piece.use === 'flask' || volumeMl > piece.nominalMl * (1 + 1e-9)) return false;
+  const choices = glass.flatMap((piece): MeasuringChoice[] => {
+    const deliveries = Math.ceil(volumeMl / piece.nominalMl - 1e-9);
+    if (piece.use === 'flask' || deliveries > MOST_DELIVERIES) return [];
+    const eachMl = volumeMl / deliveries;
     const reachable = hasScale(piece)
-      ? volumeMl >= SMALLEST_SHARE_OF_SCALE * piece.nominalMl
-      : Math.abs(volumeMl / piece.nominalMl - 1) < 1e-6;
-    return reachable && piece.toleranceMl / volumeMl <= maxRelative;
+      ? eachMl >= SMALLEST_SHARE_OF_SCALE * piece.nominalMl
+      : Math.abs(eachMl / piece.nominalMl - 1) < 1e-6;
+    const relativeTolerance = piece.toleranceMl / eachMl;
+    return reachable && relativeTolerance <= maxRelative
+      ? [{ glass: piece, volumeMl, deliveries, relativeTolerance }]
+      : [];
   });
-  fitting.sort(
-    (a, b) => b.toleranceMl - a.toleranceMl || a.nominalMl - b.nominalMl || a.id.localeCompare(b.id, 'en'),
+  choices.sort(
+    (a, b) =>
+      a.deliveries - b.deliveries ||
+      b.relativeTolerance - a.relativeTolerance ||
+      a.glass.nominalMl - b.glass.nominalMl ||
+      a.glass.id.localeCompare(b.glass.id, 'en'),
   );
-  const best = fitting[0];
-  return best === undefined
-    ? null
-    : { glass: best, volumeMl, relativeTolerance: best.toleranceMl / volumeMl };
+  return choices[0] ?? null;
 }

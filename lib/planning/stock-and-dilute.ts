@@ -36,18 +36,15 @@ function madeVariance(flask: GlassOwned): number {
   return (inputUncertainty(madeVolumeInput(flask, flask.nominalMl)) / flask.nominalMl) ** 2;
 }
 
-/** Least substance first, then least left behind, then the surest. */
-function isBetter(a: Candidate, b: Candidate): boolean {
-  const difference =
-    a.massG - b.massG ||
-    leftBehindMl(a.steps) + a.stockFlask.nominalMl - leftBehindMl(b.steps) - b.stockFlask.nominalMl ||
-    a.variance - b.variance;
-  return difference < 0;
+/** Solution made but not carried on, stock flask included, mL. */
+function wastedMl({ steps, stockFlask }: Candidate): number {
+  return leftBehindMl(steps) + stockFlask.nominalMl - (steps[0]?.takeMl ?? 0);
 }
 
 /**
  * A route for a mass too small to weigh: weigh more into a stock flask, then dilute, with the fewest dilutions that
- * meet the tolerance. The mass is free, so single-volume pipettes do: the stock is made just as strong as they ask.
+ * meet the tolerance; among those, little substance (in minimum weights) and little solution wasted (in volumes of the
+ * batch) count alike. The mass is free, so single-volume pipettes do: the stock is made just as strong as they ask.
  *
  * @param massG - the mass that would be needed in the final vessel
  * @param minimumMassG - smallest mass the balance may weigh
@@ -73,6 +70,9 @@ export function planStockRoute(
   const measures = measuresOf(glass);
   const flasks = flasksOf(glass);
 
+  const effort = (candidate: Candidate) =>
+    candidate.massG / minimumMassG + wastedMl(candidate) / final.makeMl;
+  const isBetter = (a: Candidate, b: Candidate) => (effort(a) - effort(b) || a.variance - b.variance) < 0;
   let best: Candidate | null = null;
   const consider = (steps: readonly DilutionStep[], factor: number, variance: number) => {
     const first = steps[0];
@@ -122,7 +122,7 @@ export function planStockRoute(
       massG: found.massG,
       dilution: {
         steps,
-        leftMl: leftBehindMl(steps) + stockFlask.nominalMl - (steps[0]?.takeMl ?? 0),
+        leftMl: wastedMl(found),
         relativeExpanded: expandedOf(found.variance),
         inputs: [...volumeInputs(steps), madeVolumeInput(stockFlask, stockFlask.nominalMl)],
       },

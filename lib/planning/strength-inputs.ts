@@ -100,3 +100,14 @@ export function molarMassInput(molarMassGPerMol: number): BudgetInput {
     ],
   };
 }
+
+/** The density that turns a volume of a liquid lot into a mass: stated to two decimals, so ± 0.005 g/mL. */
+export function densityInput(densityGPerMl: number, exponent: number): BudgetInput {
+  return {
+    name: 'density',
+    unit: 'g/mL',
+    value: densityGPerMl,
+    exponent,
+    influences: [{ name: 'last digit of the density', distribution: 'rectangular', halfWidth: 0.005 }],
+  };
+}
