@@ -47,7 +47,7 @@ function redoxNotes(input: SpeciationInput, state: Facts): Note[] {
     const amount = input.amounts[id] ?? (state.species.find((species) => species.id === id)?.molarity ?? 0) * input.volumeL;
     return amount / input.volumeL > PRESENT_MOLARITY;
   };
-  return redoxWatch.pairs.filter((pair) => pair.with.every(isPresent)).map((pair) => ({ code: 'redox-not-modelled', message: `Not modelled: ${pair.what}.` }));
+  return redoxWatch.pairs.filter((pair) => pair.with.every(isPresent)).map((pair) => ({ code: pair.kind === 'redox' ? 'redox-not-modelled' : 'not-modelled', message: `Not modelled: ${pair.what}.` }));
 }
 
 function tellingSpecies(state: Facts): string[] {

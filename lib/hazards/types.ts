@@ -1,4 +1,4 @@
-import type { Solute } from '../chemistry/types';
+import type { Appearance, DilutedSolute, EquilibriumState, MixStep, Solute } from '../chemistry/types';
 
 export type Severity = 'stop' | 'review' | 'controlled' | 'caution' | 'note';
 /** `clear` when nothing above a note was found. */
@@ -70,4 +70,17 @@ export interface Classification {
   readonly supplemental: readonly string[];
   /** Ingredients without data, so that "not classified" can't be claimed. */
   readonly incomplete: readonly string[];
+}
+
+/** The answer about one mix: what the vessel holds after every pour, what was found, how it is labelled. */
+export interface MixPreview {
+  readonly finalVolumeMl: number;
+  readonly diluted: readonly DilutedSolute[];
+  readonly steps: readonly MixStep[];
+  readonly equilibrium: EquilibriumState;
+  readonly appearance: Appearance;
+  /** Gravest first. */
+  readonly findings: readonly Finding[];
+  readonly classification: Classification;
+  readonly decision: Decision;
 }

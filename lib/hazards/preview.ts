@@ -1,0 +1,76 @@
+import { pourMix } from '../chemistry/mixing';
+import { findSubstance } from '../chemistry/substances';
+import type { ActivityModel, Mix, NotConverged, Solute } from '../chemistry/types';
+import { classifySolution } from './classification/classify-solution';
+import { screenPolicy } from './policy-gates';
+import { decide, screenMix, sortFindings } from './screen';
+import type { BottleContent, Finding, MixPreview, Room } from './types';
+
+export interface PreviewInput {
+  /** In order of pouring. */
+  readonly portions: readonly BottleContent[];
+  readonly activity: ActivityModel;
+  readonly temperatureC: number;
+  readonly room: Room;
+}
+export type PreviewOutcome = MixPreview | (NotConverged & { readonly afterPortion: string });
+
+/**
+ * The whole answer about one mix.
+ * @throws RangeError for an unknown substance or a volume that is not positive
+ */
+export function previewMix({ portions, activity, temperatureC, room }: PreviewInput): PreviewOutcome {
+  const mix = pourMix({ portions, activity, temperatureC });
+  if (!mix.converged) return mix;
+  const findings = sortFindings([...screenMix(portions, mix, room), ...orderFindings(portions, mix, activity, temperatureC, room), ...screenPolicy(portions)]);
+  return {
+    finalVolumeMl: mix.finalVolumeMl,
+    diluted: mix.diluted,
+    steps: mix.steps,
+    equilibrium: mix.equilibrium,
+    appearance: mix.appearance,
+    findings,
+    classification: classifySolution({ solutes: leftAfterNeutralising(mix), pH: mix.equilibrium.pH }),
+    decision: decide(findings),
+  };
+}
+
+/** Acids and bases that neutralised each other no longer count as what they were; the excess does. */
+function leftAfterNeutralising({ diluted }: Mix): Solute[] {
+  const protons = diluted.map(({ substance, molarity }) => (findSubstance(substance)?.releases?.['H+'] ?? 0) * molarity);
+  const acid = protons.reduce((sum, value) => sum + Math.max(0, value), 0);
+  const base = protons.reduce((sum, value) => sum + Math.max(0, -value), 0);
+  const used = Math.min(acid, base);
+  return diluted.flatMap(({ substance, molarity }, index) => {
+    const own = protons[index] ?? 0;
+    const share = own === 0 ? 1 : 1 - used / (own > 0 ? acid : base);
+    return share > 1e-9 ? [{ substance, molarity: molarity * share }] : [];
+  });
+}
+
+const MOST_PORTIONS_FOR_ORDERS = 4;
+
+/** Findings that another order of pouring would add. */
+function orderFindings(portions: readonly BottleContent[], mix: Mix, activity: ActivityModel, temperatureC: number, room: Room): Finding[] {
+  if (portions.length < 3 || portions.length > MOST_PORTIONS_FOR_ORDERS) return [];
+  const known = new Set(screenMix(portions, mix, room).map(({ rule }) => rule));
+  return permutations(portions)
+    .slice(1)
+    .flatMap((order) => {
+      const other = pourMix({ portions: order, activity, temperatureC });
+      if (!other.converged) return [];
+      return screenMix(order, other, room)
+        .filter(({ rule, severity, scope }) => scope === 'mix' && severity !== 'note' && !known.has(rule))
+        .map((finding) => ({
+          ...finding,
+          scope: 'order' as const,
+          severity: finding.severity === 'stop' ? ('review' as const) : ('caution' as const),
+          reason: `Safe as written, but not if poured in the order ${order.map(({ label }) => label).join(', ')}. ${finding.reason}`,
+        }));
+    });
+}
+
+function permutations<T>(items: readonly T[]): T[][] {
+  if (items.length <= 1) return [[...items]];
+  return items.flatMap((item, index) => permutations(items.filter((_, other) => other !== index)).map((rest) => [item, ...rest]));
+}

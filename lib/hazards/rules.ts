@@ -1,0 +1,147 @@
+import type { EquilibriumState } from '../chemistry/types';
+import type { ScreenedBottle, ScreenedSolute } from './contents';
+import { groupsOf } from './contents';
+import { estimateGas, worstCase } from './gas';
+import { HAZARD_RULES, groupName } from './tables';
+import type { HazardRule } from './tables';
+import { findGas } from './tables';
+import { gravityOf, SEVERITIES } from '../domain/gravity';
+import type { GasEstimate, Room, Severity } from './types';
+
+/** What meets what, and how. */
+export interface Meeting {
+  readonly bottles: readonly ScreenedBottle[];
+  readonly volumeMl: number;
+  /** Equilibrium after all have met; null where none was found: conditions on pH then count as met. */
+  readonly state: EquilibriumState | null;
+  readonly temperatureC: number;
+  readonly isKept: boolean;
+  readonly room: Room;
+}
+
+export interface Firing {
+  readonly rule: HazardRule;
+  readonly severity: Severity;
+  readonly gas: GasEstimate | null;
+  readonly concerns: readonly string[];
+}
+
+/** Rules about solids, powders and dry residues do not meet solutions as poured. */
+const SOLUTION_FORMS = new Set(['ammonia-solution', 'ammonium-salt', 'hydrogencarbonate', 'dilute-permanganate']);
+const DILUTE_PERMANGANATE_UP_TO = 0.02;
+/** Above this pH an ammonium salt gives free ammonia that can bind metals. */
+const FREE_AMMONIA_FROM_PH = 8;
+const NEEDS_FREE_AMMONIA = new Set(['AG01', 'AG02', 'AG03', 'CL08', 'PC05', 'IO01', 'IO02']);
+
+/** Every rule whose groups all meet and whose conditions hold, gravest first. */
+export function firingRules(meeting: Meeting): Firing[] {
+  const byBottle = meeting.bottles.map((bottle) => ({ bottle, groups: groupsOf(bottle) }));
+  const all = new Set(byBottle.flatMap(({ groups }) => [...groups]));
+  const met = HAZARD_RULES.filter(({ groups }) => groups.every((group) => all.has(group)));
+  const fired = met.filter((rule) => holds(rule, meeting));
+  return [...fired, ...unmatchedVariants(met, fired)]
+    .map((rule) => fire(rule, meeting))
+    .sort((a, b) => gravityOf(a.severity) - gravityOf(b.severity) || a.rule.id.localeCompare(b.rule.id));
+}
+
+/** Where a pair has variants and none is matched, the graver one counts. */
+function unmatchedVariants(met: readonly HazardRule[], fired: readonly HazardRule[]): HazardRule[] {
+  const pairs = new Map<string, HazardRule[]>();
+  for (const rule of met.filter(({ variant }) => variant !== undefined)) {
+    const key = rule.groups.join('+');
+    pairs.set(key, [...(pairs.get(key) ?? []), rule]);
+  }
+  return [...pairs.values()]
+    .filter((variants) => variants.length > 1 && !variants.some((rule) => fired.includes(rule)))
+    .filter(([first]) => first && !NEEDS_FREE_AMMONIA.has(first.id))
+    .flatMap((variants) => [...variants].sort((a, b) => gravityOf(a.severity) - gravityOf(b.severity)).slice(0, 1));
+}
+
+function holds(rule: HazardRule, meeting: Meeting): boolean {
+  const { conditions } = rule;
+  const pH = meeting.state?.pH ?? null;
+  if (conditions.pHBelow !== undefined && pH !== null && pH >= conditions.pHBelow) return false;
+  if (conditions.pHAbove !== undefined && pH !== null && pH <= conditions.pHAbove) return false;
+  if (conditions.hotterThanC !== undefined && meeting.temperatureC <= conditions.hotterThanC) return false;
+  if (NEEDS_FREE_AMMONIA.has(rule.id) && pH !== null && pH < FREE_AMMONIA_FROM_PH) return false;
+  const strongest = strengthOf(rule, meeting);
+  if (conditions.strongerThanMolarity !== undefined && strongest <= conditions.strongerThanMolarity) return false;
+  if (conditions.weakerThanMolarity !== undefined && strongest > conditions.weakerThanMolarity) return false;
+  if (conditions.standing === 'over-half-a-year') return false;
+  if (conditions.standing === 'over-an-hour' && !meeting.isKept) return false;
+  if (conditions.standing === 'fresh' && meeting.isKept) return false;
+  if (conditions.order === 'water-into-acid' && !isAcidPouredFirst(meeting.bottles)) return false;
+  return conditions.form === undefined || formHolds(conditions.form, meeting, pH);
+}
+
+/** Strength as poured of the strongest member of the group that the rule's strengths speak of. */
+function strengthOf(rule: HazardRule, { bottles }: Meeting): number {
+  const acid = rule.groups.find((group) => group.startsWith('acid_'));
+  const group = rule.id.startsWith('FC') && acid ? acid : (rule.groups[0] ?? '');
+  const members = bottles.flatMap(({ solutes }) => solutes.filter((solute) => solute.groups.has(group)));
+  return Math.max(0, ...members.map(({ molarity }) => molarity));
+}
+
+function isAcidPouredFirst(bottles: readonly ScreenedBottle[]): boolean {
+  const position = bottles.findIndex(({ solutes }) => solutes.some(({ groups }) => groups.has('concentrated_acid')));
+  return position >= 0 && position < bottles.length - 1;
+}
+
+function formHolds(form: string, { bottles }: Meeting, pH: number | null): boolean {
+  if (!SOLUTION_FORMS.has(form)) return false;
+  const solutes = bottles.flatMap((bottle) => bottle.solutes);
+  const has = (test: (solute: ScreenedSolute) => boolean) => solutes.some(test);
+  if (form === 'ammonia-solution') {
+    const isFree = pH === null || pH >= FREE_AMMONIA_FROM_PH;
+    return has(({ substance }) => substance.id === 'ammonia-solution') || (isFree && has(({ groups }) => groups.has('ammonia_or_ammonium')));
+  }
+  if (form === 'ammonium-salt') return has(({ substance, groups }) => groups.has('ammonia_or_ammonium') && substance.id !== 'ammonia-solution');
+  if (form === 'hydrogencarbonate') return has(({ substance }) => substance.id === 'sodium-hydrogencarbonate');
+  return has(({ substance, molarity }) => substance.id === 'potassium-permanganate' && molarity <= DILUTE_PERMANGANATE_UP_TO);
+}
+
+function fire(rule: HazardRule, meeting: Meeting): Firing {
+  const solutes = meeting.bottles.flatMap((bottle) => bottle.solutes);
+  const gas = gravestGas(rule, solutes, meeting);
+  const escalated = gas && rule.severity !== 'stop' ? escalate(rule.severity, gas) : rule.severity;
+  const concerns = meeting.bottles
+    .filter(({ solutes: own }) => own.some((solute) => rule.groups.some((group) => group !== 'water' && solute.groups.has(group))))
+    .map(({ label }) => label);
+  return { rule, severity: escalated, gas, concerns };
+}
+
+/** Of the gases a rule can give, the one furthest above its limit. */
+function gravestGas(rule: HazardRule, solutes: readonly ScreenedSolute[], meeting: Meeting): GasEstimate | null {
+  const found = (rule.gas ?? []).flatMap((stoichiometry) =>
+    Object.entries(worstCase(stoichiometry, solutes)).flatMap(([gasId, mol]) => {
+      const estimate = estimateGas(gasId, mol, meeting.volumeMl, meeting.state, meeting.room);
+      return estimate ? [estimate] : [];
+    }),
+  );
+  const weight = (gas: GasEstimate) => gas.ppmInBreathingZone / (gas.limit?.ppm ?? 1e6);
+  return [...found].sort((a, b) => weight(b) - weight(a))[0] ?? null;
+}
+
+/** Raises a severity where the worst case passes limits, in the room or before the face. Never lowers one. */
+function escalate(severity: Severity, estimate: GasEstimate): Severity {
+  const gas = findGas(estimate.species);
+  const limit = (kind: string) => gas?.limits.find((named) => named.kind === kind)?.ppm ?? Infinity;
+  let raised = severity;
+  if (estimate.ppmInRoom > limit('short-term') || estimate.ppmInRoom > limit('aegl-2') / 2) raised = graver(raised, 'review');
+  if (estimate.ppmInBreathingZone > limit('idlh') || estimate.ppmInBreathingZone > limit('aegl-3')) raised = graver(raised, 'controlled');
+  return raised;
+}
+
+function graver(a: Severity, b: Severity): Severity {
+  return SEVERITIES.indexOf(a) <= SEVERITIES.indexOf(b) ? a : b;
+}
+
+/** What meets, in words. */
+export function meetingTitle(rule: HazardRule): string {
+  const names = rule.groups.filter((group) => group !== 'water').map((group) => groupName(group).toLowerCase());
+  return sentenceCase(names.join(' with '));
+}
+
+function sentenceCase(text: string): string {
+  return text.charAt(0).toUpperCase() + text.slice(1);
+}
