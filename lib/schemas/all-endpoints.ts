@@ -1,4 +1,9 @@
 import { accountEndpoints } from './account';
+import { batchEndpoints } from './batches';
+import { bottleEndpoints } from './bottles';
+import { lotEndpoints, movementEndpoints } from './lots';
+import { needEndpoints } from './needs';
+import { placeEndpoints } from './places';
 import type { Endpoint } from './endpoint';
 import { houseEndpoints } from './house';
 import { outboxEndpoints } from './outbox';
@@ -16,4 +21,10 @@ export const ALL_ENDPOINTS: readonly Endpoint[] = [
   reviewEndpoints,
   searchEndpoints,
   userEndpoints,
+  batchEndpoints,
+  bottleEndpoints,
+  lotEndpoints,
+  movementEndpoints,
+  needEndpoints,
+  placeEndpoints,
 ].flatMap((group) => Object.values<Endpoint>(group));

@@ -24,13 +24,21 @@ export const molarityField = z.number().positive('Must be more than 0.').max(40,
 /** Volume in mL, from a droplet to a carboy. */
 export const volumeMlField = z.number().min(0.001, 'Must be at least 0.001 mL.').max(100_000, 'At most 100 000 mL.');
 
-/** A number typed into a form: blank is absent, never zero; a comma counts as the decimal sign. */
+/** What was typed as a number: blank is absent, never zero; a comma counts as the decimal sign. */
+function typedNumber(value: unknown): unknown {
+  if (typeof value !== 'string') return value;
+  const text = value.trim().replace(',', '.').replaceAll(/\s/g, '');
+  return text === '' ? undefined : Number(text);
+}
+
+/** A number typed into a form. */
 export function numberField<T extends z.ZodType<unknown, number>>(schema: T) {
-  return z.preprocess((value) => {
-    if (typeof value !== 'string') return value;
-    const text = value.trim().replace(',', '.').replaceAll(/\s/g, '');
-    return text === '' ? undefined : Number(text);
-  }, schema);
+  return z.preprocess(typedNumber, schema);
+}
+
+/** A number that may be left out or left blank. */
+export function optionalNumberField<T extends z.ZodType<unknown, number>>(schema: T) {
+  return z.preprocess(typedNumber, schema.optional()).optional();
 }
 
 export const idParams = z.strictObject({ id: idField });
