@@ -33,11 +33,6 @@ export type ProgramAnswer =
 /** Any solver will do; it is passed in so that the plan itself stays free of loading and of clocks. */
 export type SolveProgram = (program: IntegerProgram, timeLimitSeconds: number) => Promise<ProgramAnswer>;
 
-/** Value of a sum at given values of the variables. */
-export function valueOf(sum: LinearSum, values: readonly number[]): number {
-  return sum.reduce((total, [coefficient, variable]) => total + coefficient * (values[variable] ?? 0), 0);
-}
-
 function sumText(sum: LinearSum): string {
   const terms = sum.filter(([coefficient]) => coefficient !== 0);
   if (terms.length === 0) return '0 x0';

@@ -1,11 +1,10 @@
 import { requirePositive, requireWhole } from './checks';
 import { dayNumber } from './days';
 import { solveWithHighs } from './highs-solver';
-import type { IntegerProgram, LinearSum, ProgramAnswer, SolveProgram } from './integer-program';
-import { valueOf } from './integer-program';
+import type { ProgramAnswer, SolveProgram } from './integer-program';
 import { naiveOrder, neededMicro, priceOrder, serves } from './order-pricing';
-import type { OrderProgram } from './order-program';
 import { buildOrderProgram, needKey } from './order-program';
+import { settleTies } from './order-ties';
 import type {
   NeedCover,
   Offer,
@@ -17,8 +16,6 @@ import type {
 } from './order-types';
 
 export const DEFAULT_TIME_LIMIT_SECONDS = 5;
-
-type Solved = Extract<ProgramAnswer, { readonly values: readonly number[] }>;
 
 function checkInput(
   needs: readonly OrderNeed[],
@@ -65,34 +62,6 @@ function checkInput(
     if (options.forbidden.includes(offerId))
       throw new RangeError(`offer ${offerId} is both pinned and forbidden`);
   }
-}
-
-/**
- * Least cost first; among equal costs least surplus, then fewest packs, so that ties are settled and the same question
- * has the same answer. Where a later step runs out of time the earlier answer stands.
- */
-async function solveInTurn(
-  built: OrderProgram,
-  solve: SolveProgram,
-  timeLimitSeconds: number,
-): Promise<ProgramAnswer> {
-  const first = await solve(built.program, timeLimitSeconds);
-  if (first.status !== 'optimal') return first;
-  let best: Solved = first;
-  let rows = built.program.rows;
-  const steps: readonly (readonly [settled: LinearSum, next: LinearSum, slack: number])[] = [
-    [built.cost, built.boughtShare, 0],
-    // Shares are fractions: a thousandth of a millionth of the need is no surplus.
-    [built.boughtShare, built.packs, 1e-9],
-  ];
-  for (const [settled, objective, slack] of steps) {
-    rows = [...rows, { sum: settled, sense: '<=', bound: valueOf(settled, best.values) + slack }];
-    const program: IntegerProgram = { variables: built.program.variables, objective, rows };
-    const answer = await solve(program, timeLimitSeconds);
-    if (answer.status !== 'optimal') break;
-    best = { ...answer, gap: first.gap };
-  }
-  return best;
 }
 
 const amountText = (micro: number, unit: string): string => `${Number((micro / 1e6).toPrecision(6))} ${unit}`;
@@ -143,7 +112,8 @@ function coverOf(
 
 /**
  * The order of least cost that covers what is needed: whole packs, price breaks, carriage, hazard surcharges, minimum
- * orders, arrival and shelf life, as an integer program solved to a proven gap.
+ * orders, arrival and shelf life, as an integer program solved to a proven gap. Ties are settled by least surplus, then fewest
+ * packs (`settleTies`), so the same question has the same answer in whatever order it is put.
  *
  * Needs that nobody can cover are listed and left out, so that the rest is still planned. A budget that does not
  * reach gives the least plan with what is missing.
@@ -174,9 +144,7 @@ export async function planOrder(
 
   const nothing: ProgramAnswer = { status: 'optimal', values: [], gap: 0 };
   const answer =
-    built.program.variables.length === 0
-      ? nothing
-      : await solveInTurn(built, solve, options.timeLimitSeconds);
+    built.program.variables.length === 0 ? nothing : await solve(built.program, options.timeLimitSeconds);
   if (answer.status === 'infeasible' || answer.status === 'unsolved') {
     const message =
       answer.status === 'infeasible'
@@ -184,7 +152,12 @@ export async function planOrder(
         : 'The solver found no order in the time given.';
     return { status: 'no-plan', message, uncovered };
   }
-  const packsOf = built.packsOf(answer.values);
+  const settings = coverable.map((need) => ({
+    need,
+    conditions: built.conditionsOf.get(needKey(need)) ?? [],
+    pinnedPacks: new Map(options.pinned.map(({ offerId, packs }) => [offerId, packs])),
+  }));
+  const packsOf = settleTies(built.packsOf(answer.values), settings, relevant, houses);
   const priced = priceOrder(packsOf, relevant, houses, (offer, packs) =>
     reasonFor(offer, packs, coverable, packsOf, relevant),
   );

@@ -6,12 +6,10 @@ import type { Offer, OrderNeed, OrderOptions, OrderSupplier, Uncovered } from '.
 /** The order as an integer program, and how to read its answer. */
 export interface OrderProgram {
   readonly program: IntegerProgram;
-  readonly cost: LinearSum;
-  /** Σ bought / needed over all needs: least when the surplus is. */
-  readonly boughtShare: LinearSum;
-  readonly packs: LinearSum;
   readonly packsOf: (values: readonly number[]) => Map<string, number>;
   readonly uncovered: readonly Uncovered[];
+  /** By need, what packs must hold together. */
+  readonly conditionsOf: ReadonlyMap<string, readonly CoverCondition[]>;
   readonly lateOn: ReadonlyMap<string, readonly string[]>;
   /** By need, the offers that could serve all its uses alone. */
   readonly soleServers: ReadonlyMap<string, readonly Offer[]>;
@@ -24,7 +22,8 @@ function gcd(a: number, b: number): number {
   return b === 0 ? a : gcd(b, a % b);
 }
 
-interface Demand {
+/** Packs of these offers together must hold at least this much. */
+export interface CoverCondition {
   readonly offerIds: ReadonlySet<string>;
   readonly amountMicro: number;
 }
@@ -32,7 +31,7 @@ interface Demand {
 /** Which offers can serve each use: arrived, not expired. A use that nothing reaches in time waits for the quickest. */
 function demandsOf(need: OrderNeed, offers: readonly Offer[], arrivalOf: (offer: Offer) => number) {
   const late: string[] = [];
-  const demands = need.uses.map(({ onDay, amountMicro }): Demand => {
+  const demands = need.uses.map(({ onDay, amountMicro }): CoverCondition => {
     const day = dayNumber(onDay);
     const keeps = (offer: Offer, until: number) =>
       offer.shelfLifeDays === null || arrivalOf(offer) + offer.shelfLifeDays >= until;
@@ -51,16 +50,10 @@ function demandsOf(need: OrderNeed, offers: readonly Offer[], arrivalOf: (offer:
 }
 
 /**
- * Cover conditions of one need. Uses with windows are met exactly if, for every union T of their offer sets, the
- * packs of T hold at least all uses that only T can serve (Hall's condition for divisible amounts).
- * @returns rows in units of the common measure of the packs, so that coefficients and bounds are whole numbers
+ * When packs cover a need: uses with windows are met exactly if, for every union T of their offer sets, the packs of T
+ * hold at least all uses that only T can serve (Hall's condition for divisible amounts).
  */
-function coverRows(
-  demands: readonly Demand[],
-  offers: readonly Offer[],
-  sumOf: (offer: Offer, weight: number) => LinearSum,
-) {
-  const measure = offers.reduce((common, offer) => gcd(common, offer.packMicro), 0);
+function coverConditions(demands: readonly CoverCondition[]): CoverCondition[] {
   const unions = new Map<string, ReadonlySet<string>>();
   for (const { offerIds } of demands) {
     for (const held of [new Set<string>(), ...unions.values()]) {
@@ -68,22 +61,35 @@ function coverRows(
       unions.set([...union].sort().join(' '), union);
     }
   }
-  return [...unions.values()].map((union) => {
-    const amount = demands
-      .filter(({ offerIds }) => [...offerIds].every((id) => union.has(id)))
-      .reduce((sum, demand) => sum + demand.amountMicro, 0);
-    const own = offers.filter(({ id }) => union.has(id));
-    const most = own.reduce(
-      (sum, offer) => sum + (offer.maxPacks ?? Number.POSITIVE_INFINITY) * offer.packMicro,
-      0,
-    );
-    const row: ProgramRow = {
-      sum: own.flatMap((offer) => sumOf(offer, offer.packMicro / measure)),
-      sense: '>=',
-      bound: Math.ceil(amount / measure),
-    };
-    return { row, isReachable: most >= amount };
-  });
+  return [...unions.values()].map((offerIds) => ({
+    offerIds,
+    amountMicro: demands
+      .filter((demand) => [...demand.offerIds].every((id) => offerIds.has(id)))
+      .reduce((sum, demand) => sum + demand.amountMicro, 0),
+  }));
+}
+
+/** A condition as a row, in units of the common measure of the packs, so that all its figures are whole numbers. */
+function coverRow(
+  { offerIds, amountMicro }: CoverCondition,
+  offers: readonly Offer[],
+  sumOf: (offer: Offer, weight: number) => LinearSum,
+): ProgramRow {
+  const measure = offers.reduce((common, offer) => gcd(common, offer.packMicro), 0);
+  const own = offers.filter(({ id }) => offerIds.has(id));
+  return {
+    sum: own.flatMap((offer) => sumOf(offer, offer.packMicro / measure)),
+    sense: '>=',
+    bound: Math.ceil(amountMicro / measure),
+  };
+}
+
+/** Whether the suppliers' packs could meet a condition at all. */
+function isReachable({ offerIds, amountMicro }: CoverCondition, offers: readonly Offer[]): boolean {
+  const most = offers
+    .filter(({ id }) => offerIds.has(id))
+    .reduce((sum, offer) => sum + (offer.maxPacks ?? Number.POSITIVE_INFINITY) * offer.packMicro, 0);
+  return most >= amountMicro;
 }
 
 /** Packs beyond which buying more of an offer can't help: all of the need, any price break, any minimum order. */
@@ -199,7 +205,7 @@ export function buildOrderProgram(
   const uncovered: Uncovered[] = [];
   const lateOn = new Map<string, readonly string[]>();
   const soleServers = new Map<string, readonly Offer[]>();
-  const boughtShare: (readonly [number, number])[] = [];
+  const conditionsOf = new Map<string, readonly CoverCondition[]>();
   for (const need of needs) {
     const own = offers.filter((offer) => serves(offer, need));
     const { demands, late } = demandsOf(need, own, arrivalOf);
@@ -214,13 +220,14 @@ export function buildOrderProgram(
     else if (demands.some(({ offerIds }) => offerIds.size === 0))
       refuse(`Every offer of ${substanceId} would expire before it is used.`);
     else {
-      const covers = coverRows(demands, own, sumOf);
-      if (covers.some(({ isReachable }) => !isReachable))
+      const conditions = coverConditions(demands);
+      if (!conditions.every((condition) => isReachable(condition, own))) {
         refuse(`The suppliers do not have enough ${substanceId}.`);
-      else rows.push(...covers.map(({ row }) => row));
+      } else {
+        conditionsOf.set(needKey(need), conditions);
+        rows.push(...conditions.map((condition) => coverRow(condition, own, sumOf)));
+      }
     }
-    const total = neededMicro(need);
-    boughtShare.push(...own.flatMap((offer) => sumOf(offer, offer.packMicro / total)));
   }
   const packsOf = (values: readonly number[]) =>
     new Map(
@@ -229,14 +236,11 @@ export function buildOrderProgram(
         (tiersOf.get(offer.id) ?? []).reduce((sum, { variable }) => sum + (values[variable] ?? 0), 0),
       ]),
     );
-  const packs = offers.flatMap((offer) => sumOf(offer, 1));
   return {
     program: { variables, objective: cost, rows },
-    cost,
-    boughtShare,
-    packs,
     packsOf,
     uncovered,
+    conditionsOf,
     lateOn,
     soleServers,
   };
