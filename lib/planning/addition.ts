@@ -36,6 +36,8 @@ export const MAX_RISE_PER_PORTION_C = 10;
 const FEWEST_PORTIONS = 3;
 /** Above this the vessel is stood in iced water throughout. */
 export const ICE_BATH_FROM_RISE_C = 30;
+/** From room temperature this comes within reach of boiling where the liquids meet. */
+export const BOILING_DANGER_FROM_RISE_C = 60;
 /** Worth a word on the sheet. */
 const NOTEWORTHY_RISE_C = 3;
 

@@ -95,7 +95,7 @@ function asVessel(glass: GlassOwned, volumeMl: number): MakeVessel | null {
 /**
  * What to make a volume up in, so that the limit of error stays within the tolerance class (bench 5 %, ordinary 1 %,
  * analytical 0.2 %): few fillings and little surplus, then a flask before a cylinder (for bench work the other way
- * round), then the coarser piece, so that fine glass stays free.
+ * round), then the smaller and the coarser piece, so that fine glass stays free.
  * @throws RangeError if the volume is not positive
  */
 export function chooseVessel(
@@ -113,6 +113,7 @@ export function chooseVessel(
       effort(a) - effort(b) ||
       a.surplusMl - b.surplusMl ||
       rank(a) - rank(b) ||
+      a.glass.nominalMl - b.glass.nominalMl ||
       b.relativeTolerance - a.relativeTolerance ||
       a.glass.id.localeCompare(b.glass.id, 'en'),
   );

@@ -1,5 +1,5 @@
 import type { Addition } from './addition';
-import { MAX_RISE_PER_PORTION_C, planAddition } from './addition';
+import { BOILING_DANGER_FROM_RISE_C, MAX_RISE_PER_PORTION_C, planAddition } from './addition';
 import type { BatchSheetInput, SheetStep, TakeLine } from './batch-sheet-types';
 import type { GlassOwned } from './equipment';
 import type { MakeVessel } from './glassware';
@@ -18,6 +18,13 @@ const MARK_TEMPERATURE_C = 20;
 const work = (text: string): SheetStep => ({ kind: 'work', text });
 const mlText = (ml: number): string => `${ml >= 100 ? Math.round(ml) : Number(ml.toPrecision(3))} mL`;
 
+/** Nothing is ever drawn up by mouth. */
+function measureText(glass: GlassOwned): string {
+  return glass.use.endsWith('pipette') && glass.use !== 'piston pipette'
+    ? `${glass.name} and a filler`
+    : glass.name;
+}
+
 /** Water to start with, mL: about 65 % of the filling, less where liquids take up the rest. */
 export function firstWaterMl(fillMl: number, liquidsMl: number): number {
   const free = fillMl * (1 - RINSE_SHARE) - liquidsMl;
@@ -35,7 +42,11 @@ function heatText(addition: Addition): string {
       ? Math.abs(rise.riseC).toFixed(0)
       : String(5 * Math.round(Math.abs(rise.riseC) / 5));
   const way = rise.riseC > 0 ? 'warm' : 'cool';
-  return ` All at once it would ${way} by about ${degrees} °C if no heat were lost (${rise.source}).`;
+  const boils =
+    rise.riseC >= BOILING_DANGER_FROM_RISE_C
+      ? ' That is enough to boil and spit: work behind a screen, and ask whether a weaker stock will do.'
+      : '';
+  return ` All at once it would ${way} by about ${degrees} °C if no heat were lost (${rise.source}).${boils}`;
 }
 
 function additionText(line: TakeLine, amount: string, addition: Addition): string {
@@ -94,7 +105,7 @@ function stockSteps(take: SoluteTake): SheetStep[] {
         : 'the solution just made';
     steps.push(
       work(
-        `With the ${step.measure.name} take ${mlText(step.takeMl)} of ${from}, into the ${step.flask.name} half full of water; make up to ${mlText(step.makeMl)} and mix.`,
+        `With the ${measureText(step.measure)} take ${mlText(step.takeMl)} of ${from}, into the ${step.flask.name} half full of water; make up to ${mlText(step.makeMl)} and mix.`,
       ),
     );
   });
@@ -109,7 +120,7 @@ function lastDilutionText(take: SoluteTake): string | null {
     isFirst && take.stock.stockFlask === null
       ? (take.lines[0]?.name ?? 'the bottle')
       : `the diluted ${take.solute.substance.name}`;
-  return `With the ${last.measure.name} add ${mlText(last.takeMl)} of ${isFirst && take.stock.stockFlask !== null ? `the ${take.solute.substance.name} stock` : from}.`;
+  return `With the ${measureText(last.measure)} add ${mlText(last.takeMl)} of ${isFirst && take.stock.stockFlask !== null ? `the ${take.solute.substance.name} stock` : from}.`;
 }
 
 function makeSteps(vessel: MakeVessel, takes: readonly SoluteTake[]): SheetStep[] {
@@ -148,7 +159,11 @@ function makeSteps(vessel: MakeVessel, takes: readonly SoluteTake[]): SheetStep[
     work(
       `${isWarm ? 'Let it come' : 'Bring it'} to ${MARK_TEMPERATURE_C} °C, rinse it over into the ${glass.name}, and make up ${glass.use === 'flask' ? 'to the mark' : `to ${mlText(fillMl)}`}.`,
     ),
-    work('Stopper and invert ten times.'),
+    work(
+      glass.use === 'flask'
+        ? 'Stopper and invert ten times.'
+        : 'Pour it into its bottle, close and invert ten times.',
+    ),
   ];
 }
 

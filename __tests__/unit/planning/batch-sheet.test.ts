@@ -93,6 +93,31 @@ describe('batch sheet', () => {
     expect(texts[acid]).toMatch(/in \d+ portions/);
   });
 
+  test('heat near boiling is said, with iced water, and nothing is drawn up by mouth', () => {
+    const strong = planBatchSheet({
+      ...acidInput(500),
+      solution: {
+        name: 'sulfuric acid',
+        solutes: [{ substance: oilOfVitriol, molarity: 9, solubleMolarity: null }],
+        expected: { pH: null, colour: null },
+      },
+    });
+    const acid = strong.steps.find((step) => step.text.includes('never water into the acid'))?.text ?? '';
+    expect(acid).toContain('iced water');
+    expect(acid).toContain('boil and spit');
+    const trace = planBatchSheet({
+      ...acidInput(1000),
+      solution: {
+        name: 'sulfuric acid',
+        solutes: [{ substance: oilOfVitriol, molarity: 0.005, solubleMolarity: null }],
+        expected: { pH: null, colour: null },
+      },
+    });
+    const pipetted = trace.steps.filter((step) => /With the .* pipette/.test(step.text));
+    expect(pipetted.length).toBeGreaterThan(0);
+    for (const step of pipetted) expect(step.text).toContain('a filler');
+  });
+
   test('a low assay takes more, a split over lots corrects each for its own', () => {
     const input = buildInput({
       lots: [
