@@ -4,7 +4,9 @@ import { pourMix } from '@/lib/chemistry/mixing';
 import { ALL_SUBSTANCES, findSubstance } from '@/lib/chemistry/substances';
 import { DomainError } from '@/lib/domain/errors';
 import type { JsonObject } from '@/lib/domain/json';
-import type { Classification } from '@/lib/hazards/types';
+import { hazardStatements } from '@/lib/hazards/classification/statements';
+import { findSubstanceHazards } from '@/lib/hazards/tables';
+import type { Classification, HazardStatement } from '@/lib/hazards/types';
 import { planBatchSheet } from '@/lib/planning/batch-sheet';
 import type { BatchSheet, SheetLot } from '@/lib/planning/batch-sheet-types';
 import { canServeFor } from '@/lib/planning/weigh-out';
@@ -115,6 +117,14 @@ async function lotsFor(solutes: readonly BatchSolute[]): Promise<SheetLot[]> {
   });
 }
 
+/** What the materials can do as they are taken, before they are diluted: that is what hands and eyes meet. */
+function materialHazards(solutes: readonly BatchSolute[]): HazardStatement[] {
+  const classes = solutes.flatMap(({ substanceId, name }) =>
+    (findSubstanceHazards(substanceId)?.classes ?? []).map((assigned) => ({ class: assigned, because: `${name} as taken` })),
+  );
+  return hazardStatements(classes);
+}
+
 /** Plans the sheet of a batch from what stands on the shelves now. */
 export async function makeSheet(
   solution: SolutionModel,
@@ -143,7 +153,7 @@ export async function makeSheet(
     equipment: equipment.map((item) => item.get({ plain: true })),
     tolerance: solution.toleranceClass,
     onDay: about.makeOn,
-    hazards: about.classification.hazards,
+    hazards: [...about.classification.hazards, ...materialHazards(solutes)],
     conditions: about.conditions,
   });
   return {
