@@ -5,21 +5,33 @@ import { lotEndpoints, movementEndpoints } from './lots';
 import { needEndpoints } from './needs';
 import { placeEndpoints } from './places';
 import type { Endpoint } from './endpoint';
+import { dataSheetEndpoints } from './data-sheets';
+import { demonstrationEndpoints } from './demonstrations';
 import { houseEndpoints } from './house';
+import { labSessionEndpoints } from './lab-sessions';
+import { mixEndpoints } from './mixes';
 import { outboxEndpoints } from './outbox';
 import { recordEndpoints } from './records';
+import { requestEndpoints } from './requests';
 import { reviewEndpoints } from './reviews';
 import { searchEndpoints } from './search';
+import { solutionEndpoints } from './solutions';
 import { userEndpoints } from './users';
 
 /** Every call of the interface. A route that is missing here fails a test. */
 export const ALL_ENDPOINTS: readonly Endpoint[] = [
   accountEndpoints,
+  dataSheetEndpoints,
+  demonstrationEndpoints,
   houseEndpoints,
+  labSessionEndpoints,
+  mixEndpoints,
   outboxEndpoints,
   recordEndpoints,
+  requestEndpoints,
   reviewEndpoints,
   searchEndpoints,
+  solutionEndpoints,
   userEndpoints,
   batchEndpoints,
   bottleEndpoints,
