@@ -3,7 +3,7 @@ import { Op } from 'sequelize';
 import type { WhereOptions } from 'sequelize';
 import { environment } from '@/lib/config/env';
 import { DomainError } from '@/lib/domain/errors';
-import { authorise, mayByRole } from '@/lib/domain/policy';
+import { may, mayByRole } from '@/lib/domain/policy';
 import { fromMicro } from '@/lib/domain/quantities';
 import type { Viewer } from '@/lib/domain/roles';
 import { judgeTake } from '@/lib/planning/actual-strength';
@@ -150,13 +150,14 @@ export function missingFor(takes: readonly { actualMicro: number | null; positio
   ];
 }
 
-/** @throws DomainError `not-found`; `forbidden` where it serves none of the viewer's requests */
+/** @throws DomainError `not-found`, also where it serves none of the viewer's requests and so is not theirs to see */
 export async function loadBatch(viewer: Viewer, id: string): Promise<{ batch: BatchModel; requests: RequestModel[]; links: BatchRequestModel[] }> {
   const batch = await BatchModel.findByPk(id);
   if (!batch) throw new DomainError('not-found', 'There is no such batch.');
   const links = await BatchRequestModel.findAll({ where: { batchId: id } });
   const requests = [...(await rowsById(RequestModel, links.map(({ requestId }) => requestId))).values()];
-  authorise(viewer, 'batch:read', { requesterIds: requests.map(({ requesterId }) => requesterId) });
+  const isSeen = may(viewer, 'batch:read', { requesterIds: requests.map(({ requesterId }) => requesterId) });
+  if (!isSeen) throw new DomainError('not-found', 'There is no such batch.');
   return { batch, requests, links };
 }
 
