@@ -8,7 +8,7 @@ export async function up(schema: QueryInterface): Promise<void> {
     name: { type: DataTypes.STRING, allowNull: false },
     cas: { type: DataTypes.STRING, allowNull: false },
     formula: { type: DataTypes.STRING, allowNull: false },
-    molarMassGPerMol: { type: DataTypes.DOUBLE, allowNull: false },
+    molarMassGPerMol: { type: DataTypes.DOUBLE },
     form: { type: DataTypes.STRING, allowNull: false },
     unit: { type: DataTypes.STRING, allowNull: false },
     storageGroup: { type: DataTypes.STRING, allowNull: false },

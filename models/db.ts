@@ -94,6 +94,6 @@ export async function write<T>(work: () => Promise<T>): Promise<T> {
 /** Runs work once the current transaction is kept; at once where there is none. */
 export function afterCommit(work: () => void): void {
   const transaction = currentTransaction();
-  if (transaction) transaction.afterCommit(work);
+  if (transaction) transaction.afterCommit(() => contexts.exit(work));
   else work();
 }

@@ -8,7 +8,7 @@ export class SubstanceModel extends Model<InferAttributes<SubstanceModel>, Infer
   declare name: string;
   declare cas: string;
   declare formula: string;
-  declare molarMassGPerMol: number;
+  declare molarMassGPerMol: CreationOptional<number | null>;
   declare form: string;
   declare unit: LedgerUnit;
   declare storageGroup: string;
@@ -28,7 +28,7 @@ export class SubstanceModel extends Model<InferAttributes<SubstanceModel>, Infer
         name: { type: DataTypes.STRING, allowNull: false },
         cas: { type: DataTypes.STRING, allowNull: false },
         formula: { type: DataTypes.STRING, allowNull: false },
-        molarMassGPerMol: { type: DataTypes.DOUBLE, allowNull: false },
+        molarMassGPerMol: { type: DataTypes.DOUBLE },
         form: { type: DataTypes.STRING, allowNull: false },
         unit: { type: DataTypes.STRING, allowNull: false },
         storageGroup: { type: DataTypes.STRING, allowNull: false },

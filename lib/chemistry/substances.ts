@@ -8,7 +8,8 @@ export interface CatalogueSubstance extends Substance {
   readonly source: string;
 }
 
-interface RawSubstance extends Omit<CatalogueSubstance, 'releases' | 'form' | 'formula'> {
+interface RawSubstance extends Omit<CatalogueSubstance, 'releases' | 'form' | 'formula' | 'molarMassGPerMol'> {
+  readonly molarMassGPerMol: number | null;
   readonly form: string;
   readonly formula: string | null;
   readonly releases: Readonly<Record<string, number | undefined>> | null;
@@ -17,6 +18,7 @@ interface RawSubstance extends Omit<CatalogueSubstance, 'releases' | 'form' | 'f
 export const ALL_SUBSTANCES: readonly CatalogueSubstance[] = (substanceData.substances as RawSubstance[]).map((raw) => ({
   ...raw,
   formula: raw.formula ?? '',
+  molarMassGPerMol: raw.molarMassGPerMol ?? NaN,
   form: raw.form as Substance['form'],
   releases: raw.releases as Substance['releases'],
 }));

@@ -89,6 +89,7 @@ export interface Substance {
   readonly id: string;
   readonly name: string;
   readonly cas: string;
+  /** Empty for what has none, such as starch; the molar mass is then NaN. */
   readonly formula: string;
   readonly molarMassGPerMol: number;
   readonly form: 'solid' | 'liquid or solution';

@@ -1,14 +1,12 @@
 import 'server-only';
 import { environment } from '@/lib/config/env';
 import { log } from '@/lib/config/log';
-import { drainOutbox } from './outbox';
+import { serveOutbox } from './outbox';
 
 const OUTBOX_EVERY_MS = 5000;
 
 /** Checks the environment, then starts what goes on by itself. */
 export async function startHousekeeping(): Promise<void> {
   environment();
-  const send = () => drainOutbox().catch((error: unknown) => log().error({ err: error }, 'outbox'));
-  setInterval(() => void send(), OUTBOX_EVERY_MS).unref();
-  await send();
+  await serveOutbox(OUTBOX_EVERY_MS).catch((error: unknown) => log().error({ err: error }, 'outbox'));
 }

@@ -41,7 +41,7 @@ export async function enqueue(message: Outgoing): Promise<void> {
     where: { dedupeKey: message.dedupeKey },
     defaults: { ...message, state: 'waiting', nextAttemptAt: new Date() },
   });
-  afterCommit(() => void drainOutbox().catch((error: unknown) => log().error({ err: error }, 'outbox')));
+  sendSoon();
 }
 
 /** Queues a letter. */
@@ -60,14 +60,31 @@ async function deliver(message: OutboxMessageModel): Promise<void> {
   else await deliverOrder(message.payload, message.id);
 }
 
-let draining: Promise<number> | undefined;
+/** Kept on the global object: the server loads this module once for its start and once for its routes. */
+const shared = globalThis as typeof globalThis & { benchwrightOutbox?: { isServing: boolean; round?: Promise<number> } };
+const outbox = (shared.benchwrightOutbox ??= { isServing: false });
+
+/** Sends from now on, at once after each change and every few seconds. Scripts only fill the outbox. */
+export async function serveOutbox(everyMs: number): Promise<void> {
+  outbox.isServing = true;
+  setInterval(drainQuietly, everyMs).unref();
+  await drainOutbox();
+}
+
+function drainQuietly(): void {
+  drainOutbox().catch((error: unknown) => log().error({ err: error }, 'outbox'));
+}
+
+function sendSoon(): void {
+  if (outbox.isServing) afterCommit(drainQuietly);
+}
 
 /** Sends what is due; one round at a time. @returns how many were sent */
 export function drainOutbox(): Promise<number> {
-  draining ??= drainRound().finally(() => {
-    draining = undefined;
+  outbox.round ??= drainRound().finally(() => {
+    outbox.round = undefined;
   });
-  return draining;
+  return outbox.round;
 }
 
 async function drainRound(): Promise<number> {
@@ -138,7 +155,7 @@ export async function resend(viewer: Viewer, id: string): Promise<OutboxItem> {
     if (message.state === 'sent') throw new DomainError('wrong-state', 'It was already sent.');
     await message.update({ state: 'waiting', attempts: 0, nextAttemptAt: new Date() });
     await record(viewer, { subjectType: 'outgoing', subjectId: id, subjectLabel: message.dedupeKey, action: 'sent again' });
-    afterCommit(() => void drainOutbox().catch((error: unknown) => log().error({ err: error }, 'outbox')));
+    sendSoon();
     return present(message);
   });
   return item;

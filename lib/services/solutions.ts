@@ -95,6 +95,7 @@ function resolveSolutes(solutes: SolutionCreate['solutes']): { substanceId: stri
     const pointer = `#/solutes/${index}/substance`;
     const found = findSubstance(substance);
     if (!found) return [{ pointer, detail: 'This substance is not in the catalogue.' }];
+    if (!Number.isFinite(found.molarMassGPerMol)) return [{ pointer, detail: 'It has no molar mass, so it cannot be asked for in mol/L.' }];
     if (seen.has(found.id)) return [{ pointer, detail: 'This substance stands twice.' }];
     seen.add(found.id);
     return [];
