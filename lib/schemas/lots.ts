@@ -51,7 +51,6 @@ export const lotSchema = lotRowSchema.extend({
   heldReason: z.string().nullable(),
   substanceHeldReason: z.string().nullable(),
   supplierName: z.string().nullable(),
-  molarMassGPerMol: z.number(),
   storageGroup: z.string(),
   placeStorageGroup: z.string(),
   /** What came in, before anything was taken; in `unit`. */

@@ -154,7 +154,6 @@ export async function getLot(_viewer: Viewer, id: string): Promise<Lot> {
     heldReason: lot.heldReason,
     substanceHeldReason: substance.heldAt ? (substance.heldReason ?? '') : null,
     supplierName: supplier?.name ?? null,
-    molarMassGPerMol: substance.molarMassGPerMol ?? NaN,
     storageGroup: substance.storageGroup,
     placeStorageGroup: place.storageGroup,
     receivedAmount: fromMicro(received.get(id) ?? 0),
