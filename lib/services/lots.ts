@@ -162,6 +162,12 @@ export async function getLot(_viewer: Viewer, id: string): Promise<Lot> {
   };
 }
 
+/** What a lot can be of, by name. */
+export async function listStockable(_viewer: Viewer): Promise<{ id: string; name: string; unit: string; storageGroup: string }[]> {
+  const substances = await SubstanceModel.findAll({ attributes: ['id', 'name', 'unit', 'storageGroup'], order: [['name', 'ASC']] });
+  return substances.map(({ id, name, unit, storageGroup }) => ({ id, name, unit, storageGroup }));
+}
+
 /** Puts a new lot on the shelf and begins its ledger; to be called inside a write by whoever receives goods. */
 export async function addLot(
   viewer: Viewer,
