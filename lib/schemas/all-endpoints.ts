@@ -16,6 +16,7 @@ import { requestEndpoints } from './requests';
 import { reviewEndpoints } from './reviews';
 import { searchEndpoints } from './search';
 import { solutionEndpoints } from './solutions';
+import { substanceEndpoints } from './substances';
 import { userEndpoints } from './users';
 
 /** Every call of the interface. A route that is missing here fails a test. */
@@ -32,6 +33,7 @@ export const ALL_ENDPOINTS: readonly Endpoint[] = [
   reviewEndpoints,
   searchEndpoints,
   solutionEndpoints,
+  substanceEndpoints,
   userEndpoints,
   batchEndpoints,
   bottleEndpoints,
