@@ -57,12 +57,19 @@ const IDEAL: Omit<SpeciationInput, 'amounts' | 'reactions'> = {
  * totals over five powers of ten, and in two of five systems a ligand at exactly the amount that a complex needs.
  */
 export function strainedSystem(source: SystemSource): SpeciationInput {
-  const metals = Array.from({ length: source.whole(1, 4) }, (_, index) => ({ id: `M${'abcd'[index]}+${index % 3 + 1}`, charge: (index % 3) + 1 }));
-  const ligands = Array.from({ length: source.whole(1, 4) }, (_, index) => ({ id: `L${'pqrs'[index]}${['', '-', '-2', '-'][index]}`, charge: -([0, 1, 2, 1][index] ?? 0) }));
+  const metals = Array.from({ length: source.whole(1, 4) }, (_, index) => ({
+    id: `M${'abcd'[index]}+${(index % 3) + 1}`,
+    charge: (index % 3) + 1,
+  }));
+  const ligands = Array.from({ length: source.whole(1, 4) }, (_, index) => ({
+    id: `L${'pqrs'[index]}${['', '-', '-2', '-'][index]}`,
+    charge: -([0, 1, 2, 1][index] ?? 0),
+  }));
   const hasProtons = source.isChosen(0.6);
   const reactions: Reaction[] = [];
   const amounts: Record<string, number> = {};
-  const named = (stem: string, charge: number) => `${stem}${charge === 0 ? '' : charge > 0 ? `+${charge}` : `${charge}`}`;
+  const named = (stem: string, charge: number) =>
+    `${stem}${charge === 0 ? '' : charge > 0 ? `+${charge}` : `${charge}`}`;
   for (const { id } of [...metals, ...ligands]) amounts[id] = exactAmount(source);
 
   for (const metal of metals) {
@@ -75,7 +82,12 @@ export function strainedSystem(source: SystemSource): SpeciationInput {
         logK = Math.min(60, logK + strength * source.between(0.6, 1));
         if (source.isChosen(0.85)) {
           const charge = metal.charge + count * ligand.charge;
-          reactions.push({ species: named(`${metal.id.slice(0, 2)}${ligand.id.slice(0, 2)}${count}`, charge), phase: 'aq', stoich: { [metal.id]: 1, [ligand.id]: count }, logK });
+          reactions.push({
+            species: named(`${metal.id.slice(0, 2)}${ligand.id.slice(0, 2)}${count}`, charge),
+            phase: 'aq',
+            stoich: { [metal.id]: 1, [ligand.id]: count },
+            logK,
+          });
         }
       }
       if (source.isChosen(0.4)) amounts[ligand.id] = (amounts[metal.id] ?? 0) * source.whole(1, most);
@@ -88,12 +100,22 @@ export function strainedSystem(source: SystemSource): SpeciationInput {
       let logK = 0;
       for (let count = 1; count <= source.whole(0, 3); count += 1) {
         logK += source.between(1, 13);
-        reactions.push({ species: named(`H${count}${ligand.id.slice(0, 2)}`, ligand.charge + count), phase: 'aq', stoich: { 'H+': count, [ligand.id]: 1 }, logK });
+        reactions.push({
+          species: named(`H${count}${ligand.id.slice(0, 2)}`, ligand.charge + count),
+          phase: 'aq',
+          stoich: { 'H+': count, [ligand.id]: 1 },
+          logK,
+        });
       }
     }
     for (const metal of metals) {
       for (let count = 1; count <= source.whole(0, 4); count += 1) {
-        reactions.push({ species: named(`${metal.id.slice(0, 2)}OH${count}`, metal.charge - count), phase: 'aq', stoich: { [metal.id]: 1, 'H+': -count }, logK: -count * source.between(4, 13) });
+        reactions.push({
+          species: named(`${metal.id.slice(0, 2)}OH${count}`, metal.charge - count),
+          phase: 'aq',
+          stoich: { [metal.id]: 1, 'H+': -count },
+          logK: -count * source.between(4, 13),
+        });
       }
     }
   }
@@ -103,12 +125,23 @@ export function strainedSystem(source: SystemSource): SpeciationInput {
 
 type Ion = { readonly id: string; readonly charge: number };
 
-function addSolids(source: SystemSource, metals: readonly Ion[], ligands: readonly Ion[], hasProtons: boolean, reactions: Reaction[]): void {
+function addSolids(
+  source: SystemSource,
+  metals: readonly Ion[],
+  ligands: readonly Ion[],
+  hasProtons: boolean,
+  reactions: Reaction[],
+): void {
   const most = source.whole(0, 8);
   for (let count = 0; count < most; count += 1) {
     const metal = source.pick(metals);
     if (hasProtons && source.isChosen(0.3)) {
-      reactions.push({ species: `S${count}(s)`, phase: 's', stoich: { [metal.id]: 1, 'H+': -metal.charge }, logK: -metal.charge * source.between(3, 12) });
+      reactions.push({
+        species: `S${count}(s)`,
+        phase: 's',
+        stoich: { [metal.id]: 1, 'H+': -metal.charge },
+        logK: -metal.charge * source.between(3, 12),
+      });
       continue;
     }
     const ligand = source.pick(ligands);

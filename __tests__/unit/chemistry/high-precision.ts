@@ -10,6 +10,7 @@ import type { EquilibriumState, Reaction, SpeciationInput } from '@/lib/chemistr
 const Exact = Decimal.clone({ precision: 100, toExpNeg: -400, toExpPos: 400 });
 const LN10 = new Exact(10).ln();
 const ZERO = new Exact(0);
+const TWO_TO_60 = new Exact(2).pow(60);
 const SETTLED = new Exact('1e-40');
 const MOST_STEPS = 60;
 const MOST_CHANGES = 40;
@@ -33,12 +34,18 @@ interface System {
  * @param near - where the search begins
  * @throws Error where the conditions are not met after all
  */
-export function solveToHighPrecision(input: SpeciationInput, near: EquilibriumState, lnGamma: (id: string) => Decimal = () => ZERO): HighPrecisionAnswer {
+export function solveToHighPrecision(
+  input: SpeciationInput,
+  near: EquilibriumState,
+  lnGamma: (id: string) => Decimal = () => ZERO,
+): HighPrecisionAnswer {
   if (input.reactions === 'catalogue') throw new TypeError('A list of reactions is needed');
   const system = systemOf(input, input.reactions, lnGamma);
   const start = new Map(near.species.map(({ id, molarity }) => [id, molarity]));
   let x = system.components.map((id) => new Exact(start.get(id) ?? NaN).ln().plus(lnGamma(id)));
-  let active = near.solids.filter(({ moles }) => moles > 0).map(({ id }) => system.solids.findIndex((solid) => solid.id === id));
+  let active = near.solids
+    .filter(({ moles }) => moles > 0)
+    .map(({ id }) => system.solids.findIndex((solid) => solid.id === id));
   for (let change = 0; change < MOST_CHANGES; change += 1) {
     const found = newton(system, active, x);
     x = found.x;
@@ -47,7 +54,9 @@ export function solveToHighPrecision(input: SpeciationInput, near: EquilibriumSt
       active = active.filter((_, index) => index !== negative.index);
       continue;
     }
-    const saturation = system.solids.map((solid, index) => (active.includes(index) ? ZERO : affinity(solid, x)));
+    const saturation = system.solids.map((solid, index) =>
+      active.includes(index) ? ZERO : affinity(solid, x),
+    );
     const over = lowest(saturation.map((value) => value.neg()));
     if (over.value.lt(SETTLED.neg())) {
       active = [...active, over.index];
@@ -55,35 +64,70 @@ export function solveToHighPrecision(input: SpeciationInput, near: EquilibriumSt
     }
     const volume = new Exact(input.volumeL);
     return {
-      molarity: new Map(system.solutes.map(({ id }, index) => [id, (found.amounts[index] ?? ZERO).div(volume)])),
-      solidMoles: new Map(system.solids.map(({ id }, index) => [id, active.includes(index) ? (found.multipliers[active.indexOf(index)] ?? ZERO) : ZERO])),
+      molarity: new Map(
+        system.solutes.map(({ id }, index) => [id, (found.amounts[index] ?? ZERO).div(volume)]),
+      ),
+      solidMoles: new Map(
+        system.solids.map(({ id }, index) => [
+          id,
+          active.includes(index) ? (found.multipliers[active.indexOf(index)] ?? ZERO) : ZERO,
+        ]),
+      ),
     };
   }
   throw new Error('The set of solids did not settle');
 }
 
-function systemOf(input: SpeciationInput, reactions: readonly Reaction[], lnGamma: (id: string) => Decimal): System {
+/** The binary value of a double of at least 2^−60 steps, not the decimal that it is printed as. */
+function exactly(value: number): Decimal {
+  return new Exact(
+    (BigInt(Math.trunc(value * 2 ** 30)) * 2n ** 30n + BigInt(((value * 2 ** 30) % 1) * 2 ** 30)).toString(),
+  ).div(TWO_TO_60);
+}
+
+function systemOf(
+  input: SpeciationInput,
+  reactions: readonly Reaction[],
+  lnGamma: (id: string) => Decimal,
+): System {
   const components = Object.keys(input.amounts);
   const lnVolume = new Exact(input.volumeL).ln();
   const nuOf = (stoich: Readonly<Record<string, number>>) => components.map((id) => stoich[id] ?? 0);
   const lnKOf = ({ logK }: Reaction) => new Exact(logK).times(LN10);
   return {
     components,
-    totals: components.map((id) => new Exact(input.amounts[id] ?? 0)),
+    totals: components.map((id) => exactly(input.amounts[id] ?? 0)),
     solutes: [
       ...components.map((id) => ({ id, nu: nuOf({ [id]: 1 }), lnK: lnVolume.minus(lnGamma(id)) })),
-      ...reactions.filter(({ phase }) => phase === 'aq').map((reaction) => ({ id: reaction.species, nu: nuOf(reaction.stoich), lnK: lnKOf(reaction).plus(lnVolume).minus(lnGamma(reaction.species)) })),
+      ...reactions
+        .filter(({ phase }) => phase === 'aq')
+        .map((reaction) => ({
+          id: reaction.species,
+          nu: nuOf(reaction.stoich),
+          lnK: lnKOf(reaction).plus(lnVolume).minus(lnGamma(reaction.species)),
+        })),
     ],
-    solids: reactions.filter(({ phase }) => phase === 's').map((reaction) => ({ id: reaction.species, nu: nuOf(reaction.stoich), lnK: lnKOf(reaction) })),
+    solids: reactions
+      .filter(({ phase }) => phase === 's')
+      .map((reaction) => ({ id: reaction.species, nu: nuOf(reaction.stoich), lnK: lnKOf(reaction) })),
   };
 }
 
-function affinity({ nu, lnK }: { readonly nu: readonly number[]; readonly lnK: Decimal }, x: readonly Decimal[]): Decimal {
-  return nu.reduce((sum, count, index) => (count === 0 ? sum : sum.plus((x[index] ?? ZERO).times(count))), lnK);
+function affinity(
+  { nu, lnK }: { readonly nu: readonly number[]; readonly lnK: Decimal },
+  x: readonly Decimal[],
+): Decimal {
+  return nu.reduce(
+    (sum, count, index) => (count === 0 ? sum : sum.plus((x[index] ?? ZERO).times(count))),
+    lnK,
+  );
 }
 
 function lowest(values: readonly Decimal[]): { readonly value: Decimal; readonly index: number } {
-  return values.reduce((best, value, index) => (value.lt(best.value) ? { value, index } : best), { value: ZERO, index: -1 });
+  return values.reduce((best, value, index) => (value.lt(best.value) ? { value, index } : best), {
+    value: ZERO,
+    index: -1,
+  });
 }
 
 function newton(system: System, active: readonly number[], from: readonly Decimal[]) {
@@ -92,8 +136,13 @@ function newton(system: System, active: readonly number[], from: readonly Decima
   let multipliers = active.map(() => ZERO);
   for (let step = 0; step < MOST_STEPS; step += 1) {
     const amounts = system.solutes.map((solute) => affinity(solute, x).exp());
-    const matrix = Array.from({ length: n + active.length }, () => Array.from({ length: n + active.length }, () => ZERO));
-    const right = [...system.totals, ...active.map((solid) => affinity(system.solids[solid] ?? { nu: [], lnK: ZERO }, x).neg())];
+    const matrix = Array.from({ length: n + active.length }, () =>
+      Array.from({ length: n + active.length }, () => ZERO),
+    );
+    const right = [
+      ...system.totals,
+      ...active.map((solid) => affinity(system.solids[solid] ?? { nu: [], lnK: ZERO }, x).neg()),
+    ];
     const add = (row: number, column: number, value: Decimal) => {
       const line = matrix[row];
       if (line) line[column] = (line[column] ?? ZERO).plus(value);
@@ -119,7 +168,8 @@ function newton(system: System, active: readonly number[], from: readonly Decima
     const share = length.gt(2) ? new Exact(2).div(length) : new Exact(1);
     x = x.map((value, index) => value.plus((change[index] ?? ZERO).times(share)));
     multipliers = active.map((_, index) => change[n + index] ?? ZERO);
-    if (length.lt(SETTLED)) return { x, multipliers, amounts: system.solutes.map((solute) => affinity(solute, x).exp()) };
+    if (length.lt(SETTLED))
+      return { x, multipliers, amounts: system.solutes.map((solute) => affinity(solute, x).exp()) };
   }
   throw new Error('Newton did not settle');
 }
@@ -142,13 +192,15 @@ function solveLinear(matrix: Decimal[][], right: Decimal[]): Decimal[] {
       const target = matrix[row];
       if (!target || (target[column] ?? ZERO).isZero()) continue;
       const share = (target[column] ?? ZERO).div(line[column] ?? ZERO);
-      for (let k = column; k < size; k += 1) target[k] = (target[k] ?? ZERO).minus(share.times(line[k] ?? ZERO));
+      for (let k = column; k < size; k += 1)
+        target[k] = (target[k] ?? ZERO).minus(share.times(line[k] ?? ZERO));
       right[row] = (right[row] ?? ZERO).minus(share.times(right[column] ?? ZERO));
     }
   }
   for (let row = size - 1; row >= 0; row -= 1) {
     let sum = right[row] ?? ZERO;
-    for (let k = row + 1; k < size; k += 1) sum = sum.minus((matrix[row]?.[k] ?? ZERO).times(right[k] ?? ZERO));
+    for (let k = row + 1; k < size; k += 1)
+      sum = sum.minus((matrix[row]?.[k] ?? ZERO).times(right[k] ?? ZERO));
     right[row] = sum.div(matrix[row]?.[row] ?? ZERO);
   }
   return right;
