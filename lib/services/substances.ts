@@ -8,6 +8,8 @@ import type { Page } from '@/lib/schemas/list';
 import type { Hold, SpeciesListQuery, SpeciesRow, SubstanceDetail, SubstanceListQuery, SubstanceRow } from '@/lib/schemas/substances';
 import { write } from '@/models/db';
 import { LotModel } from '@/models/lot';
+import { SolutionModel } from '@/models/solution';
+import { SolutionSoluteModel } from '@/models/solution-solute';
 import { SubstanceModel } from '@/models/substance';
 import { contains, orderOf } from './lists';
 import { refuseStale } from './moves';
@@ -81,4 +83,11 @@ export function listSpecies(_viewer: Viewer, query: SpeciesListQuery): Page<Spec
   found.sort((a, b) => (key === 'logK' ? (a.logK ?? -Infinity) - (b.logK ?? -Infinity) : a[key].localeCompare(b[key])) * (isDescending ? -1 : 1));
   const start = (query.page - 1) * query.pageSize;
   return { items: found.slice(start, start + query.pageSize), total: found.length, page: query.page, pageSize: query.pageSize };
+}
+
+/** Recipes in use that a substance is part of. */
+export async function recipesWith(substanceId: string): Promise<{ id: string; name: string }[]> {
+  const solutes = await SolutionSoluteModel.findAll({ where: { substanceId }, attributes: ['solutionId'] });
+  const rows = await SolutionModel.findAll({ where: { id: solutes.map(({ solutionId }) => solutionId), archivedAt: null }, order: [['name', 'ASC']], attributes: ['id', 'name'] });
+  return rows.map(({ id, name }) => ({ id, name }));
 }
