@@ -6,8 +6,8 @@ import type { Classification } from '../types';
 import { classifyMixture } from './classify-mixture';
 import { flashPointOf } from './flash-points';
 import type { Ingredient, Regime, Route } from './mixture';
-import { supplementalCodes } from './other-classes';
 import { hazardStatements, pictogramsFor, precautionsFor, signalWordFor } from './statements';
+import { supplementalCodes } from './supplemental';
 
 export interface SolutionToClassify {
   readonly solutes: readonly Solute[];
@@ -76,10 +76,10 @@ export function classifySolution({ solutes, densityGPerMl, pH, regime = 'CLP' }:
   const classes = classifyMixture(mixture);
   return {
     signalWord: signalWordFor(classes),
-    pictograms: pictogramsFor(classes),
+    pictograms: pictogramsFor(classes, regime),
     hazards: hazardStatements(classes),
     precautions: precautionsFor(classes),
-    supplemental: supplementalCodes(mixture),
+    supplemental: supplementalCodes(mixture, classes),
     incomplete,
   };
 }

@@ -65,7 +65,9 @@ export function organClasses({ ingredients, regime }: Mixture): AssignedClass[] 
   }
   for (const effect of ['respiratory', 'narcotic']) {
     const name = `STOT SE 3 (${effect})`;
-    const counted = ingredients.filter((ingredient) => ingredient.classes.includes(name) && ingredient.percent >= STOT_3_COUNTS_FROM);
+    const counted = ingredients.filter(
+      (ingredient) => (ingredient.classes.includes(name) || specificMinimum(ingredient, name) !== null) && reaches(ingredient.percent, STOT_3_COUNTS_FROM),
+    );
     const shares = counted.reduce((sum, ingredient) => sum + ingredient.percent / (specificMinimum(ingredient, name) ?? STOT_3_FROM), 0);
     const [first] = counted;
     if (first && reaches(shares, 1)) found.push(because(first, name, specificMinimum(first, name) ?? STOT_3_FROM));
@@ -125,10 +127,4 @@ export function physicalClasses({ ingredients, flashPointC, viscosity, regime }:
   const aspirated = ingredients.filter((ingredient) => hasClass(ingredient, 'Asp. Tox. 1') && ingredient.percent >= 1).reduce((sum, { percent }) => sum + percent, 0);
   if (viscosity !== null && viscosity <= ASPIRATION_VISCOSITY && reaches(aspirated, ASPIRATION_FROM)) found.push({ class: 'Asp. Tox. 1', because: `${percentText(aspirated)} of it, thin enough` });
   return found;
-}
-
-/** EUH statements, which only CLP knows. */
-export function supplementalCodes({ ingredients, regime }: Mixture): string[] {
-  if (regime !== 'CLP') return [];
-  return [...new Set(ingredients.flatMap((ingredient) => ingredient.supplemental.filter(({ fromPercent }) => reaches(ingredient.percent, fromPercent)).map(({ code }) => code)))].sort();
 }

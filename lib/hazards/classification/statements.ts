@@ -1,5 +1,5 @@
 import statementData from '../data/statements.json';
-import type { AssignedClass } from './mixture';
+import type { AssignedClass, Regime } from './mixture';
 
 interface ClassStatement {
   readonly h: string;
@@ -15,13 +15,21 @@ const WEIGHTS = statementData.precautionWeights as Readonly<Record<string, Reado
 
 export const MOST_PRECAUTIONS = 6;
 
-/** `Repr. 1B (FD)` is stated as `Repr. 1B`; the effects of STOT SE 3 are kept apart. */
+/** `Repr. 1B (FD)` shares its row with `Repr. 1B`; the effects of STOT SE 3 are kept apart. */
 function stated(name: string): string {
   return name.startsWith('STOT SE 3') ? name : name.replace(/\s*\(.*\)$/, '');
 }
 
 export function statementFor(name: string): ClassStatement | null {
   return CLASSES[stated(name)] ?? null;
+}
+
+/** The statement's code with the effect behind it, as in H360FD or H350i (CLP Annex VI 1.1.2.1.2). */
+function codeFor(name: string): string | null {
+  const code = statementFor(name)?.h;
+  if (!code) return null;
+  const effect = /^(?:Carc|Repr)\..*\((\w+)\)$/.exec(name)?.[1] ?? '';
+  return H_TEXTS[`${code}${effect}`] ? `${code}${effect}` : code;
 }
 
 export function statementText(code: string): string {
@@ -33,14 +41,18 @@ export function precautionText(code: string): string {
   return P_TEXTS[code] ?? code.split('+').map((part) => P_TEXTS[part] ?? '').join(' ').trim();
 }
 
-/** Pictograms by precedence (CLP Art. 26): skull over exclamation mark, corrosion over it for skin and eye, and so on. */
-export function pictogramsFor(classes: readonly AssignedClass[]): string[] {
+/**
+ * Pictograms by precedence: skull over exclamation mark, corrosion over it for skin and eye, and so on
+ * (CLP Art. 26). HazCom (C.2.1) lets the skull stand for the exclamation mark in acute toxicity alone.
+ */
+export function pictogramsFor(classes: readonly AssignedClass[], regime: Regime = 'CLP'): string[] {
   const signs = new Set(classes.flatMap(({ class: name }) => statementFor(name)?.pictogram?.split('+') ?? []));
   const exclaims = classes.filter(({ class: name }) => statementFor(name)?.pictogram === 'GHS07').map(({ class: name }) => name);
   const isTouch = (name: string) => name.startsWith('Skin Irrit.') || name.startsWith('Eye Irrit.');
   const hasRespiratory = classes.some(({ class: name }) => name.startsWith('Resp. Sens.'));
-  const left = exclaims.filter((name) => !(signs.has('GHS05') && isTouch(name)) && !(hasRespiratory && (isTouch(name) || name.startsWith('Skin Sens.'))));
-  if (signs.has('GHS06') || left.length === 0) signs.delete('GHS07');
+  const isUnderSkull = (name: string) => signs.has('GHS06') && (regime !== 'HazCom' || name.startsWith('Acute Tox.'));
+  const left = exclaims.filter((name) => !isUnderSkull(name) && !(signs.has('GHS05') && isTouch(name)) && !(hasRespiratory && (isTouch(name) || name.startsWith('Skin Sens.'))));
+  if (left.length === 0) signs.delete('GHS07');
   if (signs.has('GHS02') || signs.has('GHS06')) signs.delete('GHS04');
   return [...signs].sort();
 }
@@ -54,7 +66,7 @@ export function signalWordFor(classes: readonly AssignedClass[]): 'Danger' | 'Wa
 export function hazardStatements(classes: readonly AssignedClass[]): { readonly code: string; readonly text: string; readonly because: string }[] {
   const byCode = new Map<string, string>();
   for (const { class: name, because } of classes) {
-    const code = statementFor(name)?.h;
+    const code = codeFor(name);
     if (code && !byCode.has(code)) byCode.set(code, because);
   }
   const drop = (when: string, ...codes: string[]) => {
