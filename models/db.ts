@@ -4,7 +4,7 @@ import path from 'node:path';
 import { Sequelize, Transaction } from 'sequelize';
 import { environment } from '@/lib/config/env';
 import { ALL_MODELS } from './all-models';
-import { waitForLocks } from './sqlite';
+import { openOnFirstUse, waitForLocks } from './sqlite';
 
 /**
  * The connection, and the only way to write. Sequelize gives every transaction its own SQLite
@@ -12,51 +12,67 @@ import { waitForLocks } from './sqlite';
  * needs to finish. So writers queue here, in the process, and start IMMEDIATE: nobody loses an update.
  */
 
-const contexts = new AsyncLocalStorage<Map<string, unknown>>();
-
-/** Lets a query find the transaction of the work it belongs to without being handed it. */
-const transactionContext = {
-  get: (key: string) => contexts.getStore()?.get(key),
-  set: (key: string, value: unknown) => contexts.getStore()?.set(key, value),
-  run: (work: (context: Map<string, unknown>) => unknown) => {
-    const context = new Map(contexts.getStore() ?? []);
-    contexts.run(context, () => work(context));
-    return context;
-  },
-  bind: (work: (...args: unknown[]) => unknown, context = contexts.getStore() ?? new Map<string, unknown>()) =>
-    (...args: unknown[]) => contexts.run(context, () => work(...args)),
-};
-
 interface House {
-  database: Sequelize;
+  readonly database: Sequelize;
+  /** Which transaction the running work belongs to. */
+  readonly contexts: AsyncLocalStorage<Map<string, unknown>>;
   lastWrite: Promise<unknown>;
 }
-/** Kept on the global object: development reloads modules, and each bundle would open its own. */
+/**
+ * Kept on the global object: the server loads this module once for every bundle, and development reloads it. All
+ * of them share one connection, one queue and one notion of the running transaction.
+ */
 const shared = globalThis as typeof globalThis & { benchwrightHouse?: House };
+
+/** Lets a query find the transaction of the work it belongs to without being handed it. */
+function transactionContext(contexts: House['contexts']) {
+  return {
+    get: (key: string) => contexts.getStore()?.get(key),
+    set: (key: string, value: unknown) => contexts.getStore()?.set(key, value),
+    run: (work: (context: Map<string, unknown>) => unknown) => {
+      const context = new Map(contexts.getStore() ?? []);
+      contexts.run(context, () => work(context));
+      return context;
+    },
+    bind: (work: (...args: unknown[]) => unknown, context = contexts.getStore() ?? new Map<string, unknown>()) =>
+      (...args: unknown[]) => contexts.run(context, () => work(...args)),
+  };
+}
 
 export function dataDirectory(): string {
   return path.resolve(/* turbopackIgnore: true */ environment().DATA_DIR);
 }
 
+/** Touches neither disk nor environment: builds load this module too, and tests choose their folder afterwards. */
 function open(): House {
-  const directory = dataDirectory();
-  mkdirSync(directory, { recursive: true });
-  Sequelize.useCLS(transactionContext);
-  const database = new Sequelize({
-    dialect: 'sqlite',
-    storage: path.join(directory, 'benchwright.sqlite'),
-    logging: false,
-    retry: { max: 1 },
-  });
+  const contexts = new AsyncLocalStorage<Map<string, unknown>>();
+  Sequelize.useCLS(transactionContext(contexts));
+  const database = new Sequelize({ dialect: 'sqlite', logging: false, retry: { max: 1 } });
+  openOnFirstUse(database, fileInDataDirectory);
   waitForLocks(database, 5000);
-  for (const model of ALL_MODELS) model.define(database);
-  return { database, lastWrite: Promise.resolve() };
+  return { database, contexts, lastWrite: Promise.resolve() };
 }
 
-function house(): House {
-  shared.benchwrightHouse ??= open();
-  return shared.benchwrightHouse;
+function fileInDataDirectory(): string {
+  const directory = dataDirectory();
+  mkdirSync(directory, { recursive: true });
+  return path.join(directory, 'benchwright.sqlite');
 }
+
+let boundTo: House | undefined;
+
+/** The shared house, with the model classes of this very bundle bound to it. */
+function house(): House {
+  const current = (shared.benchwrightHouse ??= open());
+  if (boundTo !== current) {
+    for (const model of ALL_MODELS) model.define(current.database);
+    boundTo = current;
+  }
+  return current;
+}
+
+/** Whoever reads through a model must find it bound, also where nothing was written yet. */
+house();
 
 /** The database of this process, opened on first use. */
 export function database(): Sequelize {
@@ -74,7 +90,7 @@ export async function closeDatabase(): Promise<void> {
 
 /** The transaction that the running work belongs to, if any. */
 export function currentTransaction(): Transaction | undefined {
-  return contexts.getStore()?.get('transaction') as Transaction | undefined;
+  return shared.benchwrightHouse?.contexts.getStore()?.get('transaction') as Transaction | undefined;
 }
 
 /**
@@ -94,6 +110,6 @@ export async function write<T>(work: () => Promise<T>): Promise<T> {
 /** Runs work once the current transaction is kept; at once where there is none. */
 export function afterCommit(work: () => void): void {
   const transaction = currentTransaction();
-  if (transaction) transaction.afterCommit(() => contexts.exit(work));
+  if (transaction) transaction.afterCommit(() => house().contexts.exit(work));
   else work();
 }

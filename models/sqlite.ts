@@ -46,3 +46,14 @@ export function waitForLocks(database: Sequelize, milliseconds: number): void {
     return connection;
   };
 }
+
+/** Says where the file is when the first connection is made, not before. */
+export function openOnFirstUse(database: Sequelize, file: () => string): void {
+  const manager = database.connectionManager;
+  const getConnection = manager.getConnection.bind(manager);
+  const { options } = database as unknown as { options: { storage?: string } };
+  manager.getConnection = async (request) => {
+    options.storage ??= file();
+    return getConnection(request);
+  };
+}
