@@ -16,6 +16,8 @@ const ABBREVIATIONS: Readonly<Record<string, string>> = {
   Bz: 'C7H5O2',
   en: 'C2H8N2',
 };
+/** A full stop before a multiplier and a formula; the stop inside the multiplier of `CaSO4.0.5H2O` is none. */
+const HYDRATE_DOT = /\.(\d*(?:\.\d+)?)(?=[A-Z([])/g;
 const ABBREVIATION = new RegExp(Object.keys(ABBREVIATIONS).join('|'), 'g');
 
 /**
@@ -41,14 +43,18 @@ export function withoutPhase(id: string): string {
  */
 export function parseFormula(formula: string): Composition {
   const body = withoutPhase(formula.trim()).replace(/[+-]\d*$/, '');
-  const spelled = body.replaceAll(ABBREVIATION, (word) => `(${ABBREVIATIONS[word] ?? word})`).replaceAll(/\s+/g, '');
+  const spelled = body
+    .replaceAll(ABBREVIATION, (word) => `(${ABBREVIATIONS[word] ?? word})`)
+    .replaceAll(/\s+/g, '')
+    .replaceAll(HYDRATE_DOT, '·$1');
   if (spelled === '') throw new RangeError('The formula is empty');
   const atoms: Record<string, number> = {};
-  for (const part of spelled.split(/[·•∙⋅*]|\.(?=\d*(?:\.\d+)?[A-Z([])/)) {
+  for (const part of spelled.split(/[·•∙⋅*]/)) {
     const [, multiplier, rest] = /^(\d*(?:\.\d+)?)(.+)$/.exec(part) ?? [];
     if (rest === undefined) throw new RangeError(`${formula} can't be read as a formula`);
     const times = multiplier ? Number(multiplier) : 1;
-    for (const [element, count] of Object.entries(parseGroup(rest, formula))) atoms[element] = (atoms[element] ?? 0) + count * times;
+    for (const [element, count] of Object.entries(parseGroup(rest, formula)))
+      atoms[element] = (atoms[element] ?? 0) + count * times;
   }
   return atoms;
 }
@@ -73,13 +79,16 @@ function parseGroup(text: string, formula: string): Record<string, number> {
       const group = stack.pop();
       const outer = stack.at(-1);
       if (!group || !outer) throw new RangeError(`${formula} closes a bracket it did not open`);
+      if (Object.keys(group).length === 0) throw new RangeError(`${formula} has an empty bracket`);
       const times = readCount();
-      for (const [element, count] of Object.entries(group)) outer[element] = (outer[element] ?? 0) + count * times;
+      for (const [element, count] of Object.entries(group))
+        outer[element] = (outer[element] ?? 0) + count * times;
       continue;
     }
     const [symbol] = /^[A-Z][a-z]?/.exec(text.slice(at)) ?? [];
     const element = symbol !== undefined && symbol in ATOMIC_WEIGHTS ? symbol : symbol?.[0];
-    if (element === undefined || !(element in ATOMIC_WEIGHTS)) throw new RangeError(`${formula}: ${text.slice(at, at + 2)} is no element known here`);
+    if (element === undefined || !(element in ATOMIC_WEIGHTS))
+      throw new RangeError(`${formula}: ${text.slice(at, at + 2)} is no element known here`);
     at += element.length;
     const atoms = stack.at(-1) ?? {};
     atoms[element] = (atoms[element] ?? 0) + readCount();
