@@ -1,6 +1,7 @@
 import { database, write } from '@/models/db';
 import { UserModel } from '@/models/user';
 import { seedDemonstrations } from './demo/demonstrations';
+import { seedHouse } from './demo/house';
 import { seedPeople } from './demo/people';
 import { seedRequests } from './demo/requests';
 import { seedRooms } from './demo/rooms';
@@ -17,6 +18,7 @@ export async function seedDemo(): Promise<boolean> {
   await database().authenticate();
   if ((await UserModel.count()) > 0) return false;
   await write(async () => {
+    await seedHouse();
     const people = await seedPeople();
     const rooms = await seedRooms();
     const instructor = people.get('instructor');

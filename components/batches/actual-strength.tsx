@@ -9,6 +9,7 @@ export function ActualStrength({ actual }: { readonly actual: BatchActual }) {
       <p className="mb-2">
         <Amount value={actual.volumeMl} unit="mL" significant={4} /> made
       </p>
+      <div className="overflow-x-auto">
       <table className="w-full border-collapse">
         <thead>
           <tr className="border-b-2 border-line text-left text-sm">
@@ -23,7 +24,7 @@ export function ActualStrength({ actual }: { readonly actual: BatchActual }) {
           {actual.strengths.map((strength) => (
             <tr key={strength.substanceId} className="border-b">
               <th scope="row" className="py-2 pr-4 text-left font-semibold">{strength.name}</th>
-              <td className="py-2 pr-4 font-mono">
+              <td className="py-2 pr-4 font-mono whitespace-nowrap">
                 {formatNumber(strength.molarity, 4)}
                 {strength.expandedUncertainty !== null && ` ± ${formatNumber(strength.expandedUncertainty, 2)}`} mol/L
               </td>
@@ -34,6 +35,7 @@ export function ActualStrength({ actual }: { readonly actual: BatchActual }) {
           ))}
         </tbody>
       </table>
+      </div>
       <p className="mt-1 text-sm text-soft">± is the expanded uncertainty, k = 2: about 95 % of cases.</p>
     </div>
   );

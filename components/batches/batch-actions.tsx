@@ -9,6 +9,7 @@ import type { Batch } from '@/lib/schemas/batches';
 import { Alert } from '../ui/alert';
 import { Button, LinkButton } from '../ui/button';
 import { ReasonDialog } from '../ui/reason-dialog';
+import { StateMark } from '../ui/state-mark';
 
 interface BatchActionsProps {
   readonly batch: Batch;
@@ -42,7 +43,8 @@ export function BatchActions({ batch, mayWrite, mayHold, onStart }: BatchActions
   return (
     <div className="no-print mb-4 grid gap-3">
       {problem && <Alert tone="stop" title={problem} />}
-      <div className="flex flex-wrap gap-2">
+      <div className="flex flex-wrap items-center gap-2">
+        <StateMark state={batch.state} />
         {mayWrite && batch.state === 'planned' && (
           <Button look="primary" isBusy={isBusy} busyText="Starting …" onClick={() => void start()}>
             Start making

@@ -16,13 +16,15 @@ export function BatchFacts({ batch, qr }: { readonly batch: Batch; readonly qr: 
   return (
     <header className="rule-double mb-6 flex items-start justify-between gap-6 pb-4">
       <div className="min-w-0">
-        <p className="font-mono text-2xl font-bold">{batch.code}</p>
+        <p className="text-2xl font-bold">
+          <span className="font-mono">{batch.code}</span> <span className="hidden print:inline">{batch.solutionName}</span>
+        </p>
         <p className="mb-3 text-xl font-semibold">
           <SoluteLine solutes={batch.solutes} />
         </p>
         <DefinitionList
           items={[
-            ['Make', <><Amount value={sheet.makeVolumeMl} unit="mL" significant={4} /> in {sheet.vessel.fills > 1 ? `${sheet.vessel.fills} fillings of the ` : 'the '}{sheet.vessel.name}, to {percent} % ({sheet.tolerance})</>],
+            ['Make', <><Amount value={sheet.makeVolumeMl} unit="mL" /> in {sheet.vessel.fills > 1 ? `${sheet.vessel.fills} fillings of the ` : 'the '}{sheet.vessel.name}, to {percent} % ({sheet.tolerance})</>],
             ['Make on', <Moment key="on" at={batch.makeOn} style="day" />],
             ['Ready by', <Moment key="ready" at={batch.readyBy} />],
             [
@@ -30,7 +32,7 @@ export function BatchFacts({ batch, qr }: { readonly batch: Batch; readonly qr: 
               <ul key="for">
                 {batch.requests.map(({ id, code, session, startsAt, volumeMl }) => (
                   <li key={id}>
-                    <Link href={`/requests/${id}` as Route} className="font-mono">{code}</Link> {session}, <Moment at={startsAt} />: <Amount value={volumeMl} unit="mL" significant={4} />
+                    <Link href={`/requests/${id}` as Route} className="font-mono">{code}</Link> {session}, <Moment at={startsAt} />: <Amount value={volumeMl} unit="mL" />
                   </li>
                 ))}
               </ul>,

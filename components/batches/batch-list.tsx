@@ -44,7 +44,7 @@ export function BatchList() {
             </Link>
           ),
         },
-        { id: 'volume', header: 'Volume', sortKey: 'volumeMl', isNumeric: true, cell: ({ volumeMl }) => <Amount value={volumeMl} unit="mL" significant={4} /> },
+        { id: 'volume', header: 'Volume', sortKey: 'volumeMl', isNumeric: true, cell: ({ volumeMl }) => <Amount value={volumeMl} unit="mL" /> },
         { id: 'makeOn', header: 'Make on', sortKey: 'makeOn', cell: ({ makeOn }) => <Moment at={makeOn} style="short-day" /> },
         { id: 'readyBy', header: 'Ready by', sortKey: 'readyBy', cell: ({ readyBy }) => <Moment at={readyBy} /> },
         { id: 'for', header: 'For', cell: ({ requestCodes }) => <span className="font-mono">{requestCodes.join(', ')}</span> },

@@ -15,6 +15,7 @@ import { CheckForm } from './check-form';
 import { BatchFacts } from './batch-facts';
 import { BatchActions } from './batch-actions';
 import { StepList } from './step-list';
+import { Story } from './story';
 import { TakeLines } from './take-lines';
 
 interface BatchSheetProps {
@@ -25,7 +26,6 @@ interface BatchSheetProps {
   readonly qr: ReactNode;
   /** Hazards of the solution as diluted. */
   readonly hazards: ReactNode;
-  readonly story: ReactNode;
 }
 
 const NOW: Readonly<Record<Batch['state'], string>> = {
@@ -38,7 +38,7 @@ const NOW: Readonly<Record<Batch['state'], string>> = {
 };
 
 /** The batch as its sheet: on the screen as on paper. */
-export function BatchSheet({ initial, mayWrite, mayHold, qr, hazards, story }: BatchSheetProps) {
+export function BatchSheet({ initial, mayWrite, mayHold, qr, hazards }: BatchSheetProps) {
   const batch = useBatch(initial);
   const change = useBatchChange(batch.id);
   const start = () => change(() => callApi(batchEndpoints.start, { params: { id: batch.id }, body: { version: batch.version } }));
@@ -56,7 +56,7 @@ export function BatchSheet({ initial, mayWrite, mayHold, qr, hazards, story }: B
         </div>
       )}
       <BatchActions batch={batch} mayWrite={mayWrite} mayHold={mayHold} onStart={start} />
-      <article className="sheet px-4 py-5 md:px-8 print:border-0 print:p-0" aria-label={`Sheet of batch ${batch.code}`}>
+      <article className="sheet px-4 py-5 md:px-8 print:border-0 print:p-0 print:[&_section]:mb-3" aria-label={`Sheet of batch ${batch.code}`}>
         <BatchFacts batch={batch} qr={qr} />
         {(warnings.length > 0 || questions.length > 0) && (
           <div className="mb-6">
@@ -114,7 +114,7 @@ export function BatchSheet({ initial, mayWrite, mayHold, qr, hazards, story }: B
         )}
         <p className="hidden text-sm print:block">Predictions replace no risk assessment, data sheet or local rule; a competent person decides.</p>
       </article>
-      {story}
+      <Story entries={batch.story} />
     </>
   );
 }

@@ -83,7 +83,7 @@ function PlanForm({ makeOn, needs }: Omit<PlanDialogProps, 'solutionName'>) {
           <Checkbox
             key={need.requestId}
             id={`for-${need.requestId}`}
-            label={`${need.requestCode}: ${formatVolume(need.openMl, 4)}`}
+            label={`${need.requestCode}: ${formatVolume(need.openMl)}`}
             hint={need.session}
             checked={chosen.has(need.requestId)}
             onChange={() => toggle(need.requestId)}
@@ -96,7 +96,7 @@ function PlanForm({ makeOn, needs }: Omit<PlanDialogProps, 'solutionName'>) {
         id="plan-volume"
         label="Volume"
         unit="mL"
-        hint={`Left blank: what these requests need, ${formatVolume(openMl, 4)}.`}
+        hint={`Left blank: what these requests need, ${formatVolume(openMl)}.`}
         value={volumeMl}
         onChange={(event) => setVolumeMl(event.target.value)}
         error={errorOf('volumeMl')}

@@ -73,7 +73,7 @@ function ProposalLine({ proposal, mayWrite }: { readonly proposal: Proposal; rea
     <li className="flex flex-wrap items-center gap-x-5 gap-y-2 border-b py-3">
       <div className="min-w-0 flex-1">
         <p className="font-semibold">
-          {solutionName}: <Amount value={volumeMl} unit="mL" significant={4} />
+          {solutionName}: <Amount value={volumeMl} unit="mL" />
         </p>
         <p className="text-sm text-soft">
           For {needs.map(({ requestCode, session }) => `${requestCode} (${session})`).join(', ')}. Any day from <Moment at={notBefore} style="short-day" /> to <Moment at={notAfter} style="short-day" />.

@@ -23,10 +23,10 @@ export function StepList({ batch, mayWrite }: { readonly batch: Batch; readonly 
     .map((kind) => ({ kind, steps: batch.steps.filter((step) => step.kind === kind) }))
     .filter(({ steps }) => steps.length > 0);
   return (
-    <div className="space-y-5">
+    <div className="space-y-5 print:space-y-2">
       {groups.map(({ kind, steps }) => (
         <section key={kind} aria-label={KINDS[kind]}>
-          <h3 className={classNames('mb-1 text-base', kind === 'condition' && 'text-amber')}>{KINDS[kind]}</h3>
+          <h3 className={classNames('mb-1 break-after-avoid text-base', kind === 'condition' && 'text-amber')}>{KINDS[kind]}</h3>
           <ol>
             {steps.map((step, index) => (
               <Step key={step.id} batch={batch} step={step} number={index + 1} isEditable={isEditable} />
@@ -56,8 +56,8 @@ function Step({ batch, step, number, isEditable }: { readonly batch: Batch; read
   };
 
   return (
-    <li className="flex items-start gap-3 border-b py-1 break-inside-avoid">
-      <span aria-hidden className="w-6 pt-2.5 text-right font-mono text-sm text-soft">
+    <li className="flex items-start gap-3 border-b py-1 break-inside-avoid print:py-0">
+      <span aria-hidden className="w-6 pt-2.5 text-right font-mono text-sm text-soft print:pt-1.5">
         {number}
       </span>
       <input
@@ -66,9 +66,9 @@ function Step({ batch, step, number, isEditable }: { readonly batch: Batch; read
         checked={isDone}
         disabled={!isEditable || isBusy}
         onChange={(event) => void tick(event.target.checked)}
-        className="mt-2 size-7 shrink-0 accent-verdigris"
+        className="mt-2 size-7 shrink-0 accent-verdigris print:mt-1.5 print:size-4"
       />
-      <label htmlFor={`step-${step.id}`} className={classNames('min-h-11 flex-1 py-2', isDone && 'text-soft')}>
+      <label htmlFor={`step-${step.id}`} className={classNames('min-h-11 flex-1 py-2 print:min-h-0 print:py-1', isDone && 'text-soft')}>
         {step.text}
       </label>
       {step.doneBy && <span className="hidden py-2 text-sm whitespace-nowrap text-soft sm:block">{step.doneBy}</span>}

@@ -18,9 +18,9 @@ import { NumberInput, TextInput } from '../ui/inputs';
 /** What to take, from which lot, how much, and the field for what was really taken. */
 export function TakeLines({ batch, mayWrite }: { readonly batch: Batch; readonly mayWrite: boolean }) {
   return (
-    <ol className="border-t-2 border-line">
+    <ol>
       {batch.takes.map((take) => (
-        <li key={take.id} className="grid gap-x-6 gap-y-2 border-b border-line py-3 break-inside-avoid md:grid-cols-[1.5rem_1.4fr_1fr_1.3fr] print:grid-cols-[1.5rem_1.4fr_1fr_1.3fr]">
+        <li key={take.id} className="grid gap-x-6 gap-y-2 border-b border-line py-3 first:pt-0 break-inside-avoid md:grid-cols-[1.5rem_1.4fr_1fr_1.3fr] print:grid-cols-[1.5rem_1.4fr_1fr_1.3fr]">
           <span className="font-mono text-soft max-md:sr-only print:not-sr-only">{take.position}</span>
           <TakeIdentity take={take} />
           <div>

@@ -19,8 +19,8 @@ export function BottleTable({ batch, mayWrite }: { readonly batch: Batch; readon
   const requests = batch.requests.filter(({ id }) => batch.bottles.some((bottle) => bottle.requestId === id && isHere(bottle)));
   return (
     <div className="grid gap-4">
-      <table className="w-full border-collapse" aria-label="Bottles">
-        <thead>
+      <table className="w-full border-collapse max-md:block" aria-label="Bottles">
+        <thead className="max-md:sr-only">
           <tr className="border-b-2 border-line text-left text-sm">
             <th scope="col" className="py-1 pr-4">Bottle</th>
             <th scope="col" className="py-1 pr-4">Holds</th>
@@ -29,12 +29,12 @@ export function BottleTable({ batch, mayWrite }: { readonly batch: Batch; readon
             {mayWrite && <th scope="col" className="no-print py-1">What next</th>}
           </tr>
         </thead>
-        <tbody>
+        <tbody className="max-md:block">
           {batch.bottles.map((bottle) => (
-            <tr key={bottle.id} className="border-b align-middle">
+            <tr key={bottle.id} className="border-b align-middle max-md:flex max-md:flex-wrap max-md:items-center max-md:gap-x-2 max-md:py-1">
               <th scope="row" className="py-2 pr-4 text-left font-mono">{bottle.code}</th>
               <td className="py-2 pr-4">
-                <Amount value={bottle.volumeMl} unit="mL" significant={4} />
+                <Amount value={bottle.volumeMl} unit="mL" />
               </td>
               <td className="py-2 pr-4">{bottle.requestCode ?? 'the shelf'}</td>
               <td className="py-2 pr-4">

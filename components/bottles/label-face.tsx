@@ -1,4 +1,4 @@
-import { formatMolarity, formatNumber } from '@/lib/client/format';
+import { formatMolarity, formatNumber, formatVolume } from '@/lib/client/format';
 import { precautionText, statementText } from '@/lib/hazards/classification/statements';
 import type { BottleLabel } from '@/lib/schemas/bottles';
 import { QrSquare } from '../batches/qr-square';
@@ -9,6 +9,10 @@ import { labelSizes } from './label-sizes';
 const QR_MM = 21;
 
 const DAY = new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'short', year: 'numeric' });
+
+function sentence(text: string): string {
+  return text.endsWith('.') ? text : `${text}.`;
+}
 
 /** A label in real millimetres, black on white whatever the theme. */
 export function LabelFace({ label }: { readonly label: BottleLabel }) {
@@ -38,7 +42,7 @@ export function LabelFace({ label }: { readonly label: BottleLabel }) {
         ))}
       </p>
       <p className="font-bold">
-        <span className="font-mono">{label.bottleCode}</span> · {formatNumber(label.volumeMl, 4)} mL · made {label.madeAt ? DAY.format(new Date(label.madeAt)) : '–'} · use by{' '}
+        <span className="font-mono">{label.bottleCode}</span> · {formatVolume(label.volumeMl)} · made {label.madeAt ? DAY.format(new Date(label.madeAt)) : '–'} · use by{' '}
         {label.useBy ? DAY.format(new Date(label.useBy)) : '–'}
       </p>
       {pictograms.length > 0 && (
@@ -54,7 +58,7 @@ export function LabelFace({ label }: { readonly label: BottleLabel }) {
         </p>
       )}
       <p className="font-semibold">
-        {[...hazards.map(({ text }) => text), ...supplemental.map(statementText)].join(' ')}
+        {[...hazards.map(({ text }) => text), ...supplemental.map(statementText)].map(sentence).join(' ')}
         {hazards.length === 0 && incomplete.length === 0 && 'By calculation no hazard class is reached; no proof that it is harmless.'}
         {incomplete.length > 0 && ` Hazards not known for: ${incomplete.join(', ')}.`}
       </p>

@@ -41,7 +41,7 @@ export function BottleList() {
             </Link>
           ),
         },
-        { id: 'volume', header: 'Holds', sortKey: 'volumeMl', isNumeric: true, cell: ({ volumeMl }) => <Amount value={volumeMl} unit="mL" significant={4} /> },
+        { id: 'volume', header: 'Holds', sortKey: 'volumeMl', isNumeric: true, cell: ({ volumeMl }) => <Amount value={volumeMl} unit="mL" /> },
         { id: 'for', header: 'For', cell: ({ requestCode }) => requestCode ?? 'the shelf' },
         { id: 'useBy', header: 'Use by', cell: ({ useBy }) => (useBy ? <Moment at={useBy} style="short-day" /> : '–') },
         { id: 'state', header: 'State', sortKey: 'state', cell: ({ state, isHeld }) => (isHeld ? <StateMark state="held" words="on hold" /> : <StateMark state={state} />) },

@@ -13,7 +13,7 @@ export function Cabinets({ shelves }: { readonly shelves: readonly Shelf[] }) {
       {rooms.map((room) => (
         <section key={room} aria-label={room}>
           <h2 className="mb-3 text-lg">{room}</h2>
-          <div className="grid gap-5 xl:grid-cols-2">
+          <div className="gap-5 xl:columns-2">
             {shelves
               .filter(({ roomName }) => roomName === room)
               .map((shelf) => (
@@ -28,7 +28,7 @@ export function Cabinets({ shelves }: { readonly shelves: readonly Shelf[] }) {
 
 function Cabinet({ shelf }: { readonly shelf: Shelf }) {
   return (
-    <section aria-label={shelf.name} className="sheet border-2 border-line">
+    <section aria-label={shelf.name} className="sheet mb-5 border-2 border-line break-inside-avoid">
       <h3 className="flex flex-wrap items-baseline justify-between gap-x-3 border-b-2 border-line px-3 py-1.5 text-base">
         {shelf.name}
         <span className="text-sm font-normal text-soft">

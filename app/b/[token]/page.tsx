@@ -39,7 +39,7 @@ function Known({ bottle }: { readonly bottle: Extract<PublicBottle, { kind: 'bot
           <SoluteLine solutes={label.solutes} />
         </p>
         <p className="mt-1 mb-5">
-          Bottle <span className="font-mono font-bold">{label.bottleCode}</span>, <Amount value={label.volumeMl} unit="mL" significant={4} />
+          Bottle <span className="font-mono font-bold">{label.bottleCode}</span>, <Amount value={label.volumeMl} unit="mL" />
           {label.madeAt && <>, made <Moment at={label.madeAt} style="short-day" /></>}
           {label.useBy && <>, use by <Moment at={label.useBy} style="short-day" /></>}
         </p>

@@ -1,10 +1,8 @@
 import type { Metadata } from 'next';
 import { BatchSheet } from '@/components/batches/batch-sheet';
 import { QrSquare } from '@/components/batches/qr-square';
-import { Story } from '@/components/batches/story';
 import { HazardBlock } from '@/components/bottles/hazard-block';
 import { PageHeader } from '@/components/ui/page-header';
-import { StateMark } from '@/components/ui/state-mark';
 import { mayByRole } from '@/lib/domain/policy';
 import { load, pageViewer } from '@/lib/http/page';
 import { getBatch } from '@/lib/services/batches';
@@ -20,14 +18,15 @@ export default async function BatchPage({ params }: PageProps<'/batches/[id]'>) 
   return (
     <>
       <style>{'@media print { @page { margin: 12mm } }'}</style>
-      <PageHeader title={`${batch.code}: ${batch.solutionName}`} actions={<StateMark state={batch.state} />} />
+      <div className="print:hidden">
+        <PageHeader title={`${batch.code}: ${batch.solutionName}`} />
+      </div>
       <BatchSheet
         initial={batch}
         mayWrite={mayByRole(viewer, 'batch:write')}
         mayHold={mayByRole(viewer, 'stock:hold')}
         qr={<QrSquare text={batch.address} label={`Opens the sheet of ${batch.code}`} sizeMm={QR_MM} />}
         hazards={<HazardBlock classification={batch.classification} />}
-        story={<Story entries={batch.story} />}
       />
     </>
   );

@@ -7,7 +7,6 @@ import { LotActions } from '@/components/shelves/lot-actions';
 import { LotLife } from '@/components/shelves/lot-life';
 import { MovementList } from '@/components/shelves/movement-list';
 import { Alert } from '@/components/ui/alert';
-import { Amount } from '@/components/ui/amount';
 import { DefinitionList } from '@/components/ui/definition-list';
 import { Moment } from '@/components/ui/moment';
 import { PageHeader } from '@/components/ui/page-header';
@@ -19,6 +18,11 @@ import { getLot } from '@/lib/services/lots';
 
 export const metadata: Metadata = { title: 'Lot' };
 
+/** A ledger amount to its last digit. */
+function Exact({ amount, unit }: { readonly amount: number; readonly unit: string }) {
+  return <span className="font-mono whitespace-nowrap">{`${amount}\u202f${unit}`}</span>;
+}
+
 export default async function LotPage({ params }: PageProps<'/shelves/lots/[id]'>) {
   const viewer = await pageViewer('stock:read');
   const { id } = await params;
@@ -29,7 +33,7 @@ export default async function LotPage({ params }: PageProps<'/shelves/lots/[id]'
         title={`${lot.code}: ${lot.substanceName}`}
         lead={
           <>
-            {lot.formula && <Formula id={lot.formula} />} <Amount value={lot.balance} unit={lot.unit} significant={5} /> left of <Amount value={lot.receivedAmount} unit={lot.unit} significant={5} />, {lot.placeName}
+            {lot.formula && <Formula id={lot.formula} />} <Exact amount={lot.balance} unit={lot.unit} /> left of <Exact amount={lot.receivedAmount} unit={lot.unit} />, {lot.placeName}
           </>
         }
         actions={<LotActions lot={lot} mayWrite={mayByRole(viewer, 'stock:write')} mayHold={mayByRole(viewer, 'stock:hold')} />}
@@ -71,7 +75,7 @@ export default async function LotPage({ params }: PageProps<'/shelves/lots/[id]'
                   <Link href={`/batches/${use.batchId}`} className="font-semibold">
                     <span className="font-mono">{use.batchCode}</span> {use.solutionName}
                   </Link>{' '}
-                  <StateMark state={use.state} /> <Amount value={use.amount} unit={lot.unit} significant={5} />
+                  <StateMark state={use.state} /> <Exact amount={use.amount} unit={lot.unit} />
                   {use.bottleCodes.length > 0 && <span className="block font-mono text-sm text-soft">{use.bottleCodes.join(', ')}</span>}
                 </li>
               ))}
