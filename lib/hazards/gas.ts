@@ -19,7 +19,7 @@ export function ppmIn(volumeM3: number, mol: number): number {
 function availableMol(reactant: string, solutes: readonly ScreenedSolute[]): number | null {
   if (reactant === 'H+') {
     const acids = solutes.filter(({ groups }) => !groups.has('ammonia_or_ammonium'));
-    return acids.reduce((sum, { substance, amountMol }) => sum + Math.max(0, substance.releases?.['H+'] ?? 0) * amountMol, 0);
+    return positiveOrUnknown(acids.reduce((sum, { substance, amountMol }) => sum + Math.max(0, substance.releases?.['H+'] ?? 0) * amountMol, 0));
   }
   if (reactant === 'OH-') {
     return solutes.reduce((sum, { substance, amountMol }) => sum + Math.max(0, -(substance.releases?.['H+'] ?? 0)) * amountMol, 0);
@@ -29,6 +29,11 @@ function availableMol(reactant: string, solutes: readonly ScreenedSolute[]): num
   const groups = GROUPS.filter(({ limiting }) => limiting.includes(reactant)).map(({ id }) => id);
   const grouped = solutes.filter((solute) => groups.some((id) => solute.groups.has(id))).reduce((sum, { amountMol }) => sum + amountMol, 0);
   return grouped > 0 ? grouped : null;
+}
+
+/** Where nobody is an acid by name, its amount is not known: hydrolysing metals have no fixed count. */
+function positiveOrUnknown(mol: number): number | null {
+  return mol > 0 ? mol : null;
 }
 
 /** The master component a reactant is counted by. */

@@ -1,11 +1,11 @@
+import { gravityOf, SEVERITIES } from '../domain/gravity';
 import type { EquilibriumState } from '../chemistry/types';
+import { actsAsAcid } from './acting-acids';
 import type { ScreenedBottle, ScreenedSolute } from './contents';
 import { groupsOf } from './contents';
 import { estimateGas, worstCase } from './gas';
-import { HAZARD_RULES, groupName } from './tables';
+import { findGas, groupName, HAZARD_RULES } from './tables';
 import type { HazardRule } from './tables';
-import { findGas } from './tables';
-import { gravityOf, SEVERITIES } from '../domain/gravity';
 import type { GasEstimate, Room, Severity } from './types';
 
 /** What meets what, and how. */
@@ -27,43 +27,44 @@ export interface Firing {
 }
 
 /** Rules about solids, powders and dry residues do not meet solutions as poured. */
-const SOLUTION_FORMS = new Set(['ammonia-solution', 'ammonium-salt', 'hydrogencarbonate', 'dilute-permanganate']);
-const DILUTE_PERMANGANATE_UP_TO = 0.02;
+const SOLUTION_FORMS = new Set(['ammonia-solution', 'ammonium-salt', 'hydrogencarbonate']);
 /** Above this pH an ammonium salt gives free ammonia that can bind metals. */
 const FREE_AMMONIA_FROM_PH = 8;
-const NEEDS_FREE_AMMONIA = new Set(['AG01', 'AG02', 'AG03', 'CL08', 'PC05', 'IO01', 'IO02']);
 
 /** Every rule whose groups all meet and whose conditions hold, gravest first. */
 export function firingRules(meeting: Meeting): Firing[] {
-  const byBottle = meeting.bottles.map((bottle) => ({ bottle, groups: groupsOf(bottle) }));
-  const all = new Set(byBottle.flatMap(({ groups }) => [...groups]));
-  const met = HAZARD_RULES.filter(({ groups }) => groups.every((group) => all.has(group)));
-  const fired = met.filter((rule) => holds(rule, meeting));
-  return [...fired, ...unmatchedVariants(met, fired)]
+  const all = groupsMet(meeting);
+  return HAZARD_RULES.filter((rule) => meets(rule, all, meeting) && holds(rule, meeting))
     .map((rule) => fire(rule, meeting))
     .sort((a, b) => gravityOf(a.severity) - gravityOf(b.severity) || a.rule.id.localeCompare(b.rule.id));
 }
 
-/** Where a pair has variants and none is matched, the graver one counts. */
-function unmatchedVariants(met: readonly HazardRule[], fired: readonly HazardRule[]): HazardRule[] {
-  const pairs = new Map<string, HazardRule[]>();
-  for (const rule of met.filter(({ variant }) => variant !== undefined)) {
-    const key = rule.groups.join('+');
-    pairs.set(key, [...(pairs.get(key) ?? []), rule]);
-  }
-  return [...pairs.values()]
-    .filter((variants) => variants.length > 1 && !variants.some((rule) => fired.includes(rule)))
-    .filter(([first]) => first && !NEEDS_FREE_AMMONIA.has(first.id))
-    .flatMap((variants) => [...variants].sort((a, b) => gravityOf(a.severity) - gravityOf(b.severity)).slice(0, 1));
+/** Groups of all that meets, with those that only the meeting makes. */
+function groupsMet({ bottles, state }: Meeting): Set<string> {
+  const all = new Set(bottles.flatMap((bottle) => [...groupsOf(bottle)]));
+  const pH = state?.pH ?? null;
+  const isAmmoniacal = all.has('ammonia_or_ammonium') && (pH === null || pH > FREE_AMMONIA_FROM_PH);
+  if (all.has('silver_salt') && isAmmoniacal) all.add('ammoniacal_silver');
+  return all;
 }
 
+/** Whether the groups of a rule are there; an acid may be one by what it does instead of by name. */
+function meets(rule: HazardRule, all: ReadonlySet<string>, { bottles, volumeMl, state }: Meeting): boolean {
+  const missing = rule.groups.filter((group) => !all.has(group));
+  if (missing.length === 0) return true;
+  const [source] = rule.groups;
+  if (missing.length > 1 || missing[0] !== 'acid_mineral_nonox' || rule.conditions.pHBelow === undefined || !source) return false;
+  return actsAsAcid(source, bottles.flatMap(({ solutes }) => solutes), volumeMl, state);
+}
+
+/** A condition that is not known counts as met, so that the graver of two variants is told. */
 function holds(rule: HazardRule, meeting: Meeting): boolean {
   const { conditions } = rule;
   const pH = meeting.state?.pH ?? null;
   if (conditions.pHBelow !== undefined && pH !== null && pH >= conditions.pHBelow) return false;
   if (conditions.pHAbove !== undefined && pH !== null && pH <= conditions.pHAbove) return false;
   if (conditions.hotterThanC !== undefined && meeting.temperatureC <= conditions.hotterThanC) return false;
-  if (NEEDS_FREE_AMMONIA.has(rule.id) && pH !== null && pH < FREE_AMMONIA_FROM_PH) return false;
+  if (conditions.coolerThanC !== undefined && meeting.temperatureC > conditions.coolerThanC) return false;
   const strongest = strengthOf(rule, meeting);
   if (conditions.strongerThanMolarity !== undefined && strongest <= conditions.strongerThanMolarity) return false;
   if (conditions.weakerThanMolarity !== undefined && strongest > conditions.weakerThanMolarity) return false;
@@ -76,8 +77,7 @@ function holds(rule: HazardRule, meeting: Meeting): boolean {
 
 /** Strength as poured of the strongest member of the group that the rule's strengths speak of. */
 function strengthOf(rule: HazardRule, { bottles }: Meeting): number {
-  const acid = rule.groups.find((group) => group.startsWith('acid_'));
-  const group = rule.id.startsWith('FC') && acid ? acid : (rule.groups[0] ?? '');
+  const group = rule.conditions.ofGroup ?? rule.groups[0] ?? '';
   const members = bottles.flatMap(({ solutes }) => solutes.filter((solute) => solute.groups.has(group)));
   return Math.max(0, ...members.map(({ molarity }) => molarity));
 }
@@ -96,18 +96,17 @@ function formHolds(form: string, { bottles }: Meeting, pH: number | null): boole
     return has(({ substance }) => substance.id === 'ammonia-solution') || (isFree && has(({ groups }) => groups.has('ammonia_or_ammonium')));
   }
   if (form === 'ammonium-salt') return has(({ substance, groups }) => groups.has('ammonia_or_ammonium') && substance.id !== 'ammonia-solution');
-  if (form === 'hydrogencarbonate') return has(({ substance }) => substance.id === 'sodium-hydrogencarbonate');
-  return has(({ substance, molarity }) => substance.id === 'potassium-permanganate' && molarity <= DILUTE_PERMANGANATE_UP_TO);
+  return has(({ substance }) => substance.id === 'sodium-hydrogencarbonate');
 }
 
 function fire(rule: HazardRule, meeting: Meeting): Firing {
   const solutes = meeting.bottles.flatMap((bottle) => bottle.solutes);
   const gas = gravestGas(rule, solutes, meeting);
-  const escalated = gas && rule.severity !== 'stop' ? escalate(rule.severity, gas) : rule.severity;
-  const concerns = meeting.bottles
-    .filter(({ solutes: own }) => own.some((solute) => rule.groups.some((group) => group !== 'water' && solute.groups.has(group))))
-    .map(({ label }) => label);
-  return { rule, severity: escalated, gas, concerns };
+  const escalated = gas && rule.severity !== 'stop' ? escalate(rule, gas) : rule.severity;
+  const named = meeting.bottles.filter(({ solutes: own }) => own.some((solute) => rule.groups.some((group) => group !== 'water' && solute.groups.has(group))));
+  const acidByName = meeting.bottles.some(({ solutes: own }) => own.some((solute) => solute.groups.has('acid_mineral_nonox')));
+  const isActing = rule.groups.includes('acid_mineral_nonox') && !acidByName;
+  return { rule, severity: escalated, gas, concerns: (isActing ? meeting.bottles : named).map(({ label }) => label) };
 }
 
 /** Of the gases a rule can give, the one furthest above its limit. */
@@ -123,11 +122,11 @@ function gravestGas(rule: HazardRule, solutes: readonly ScreenedSolute[], meetin
 }
 
 /** Raises a severity where the worst case passes limits, in the room or before the face. Never lowers one. */
-function escalate(severity: Severity, estimate: GasEstimate): Severity {
+function escalate({ severity, isSlow }: HazardRule, estimate: GasEstimate): Severity {
   const gas = findGas(estimate.species);
   const limit = (kind: string) => gas?.limits.find((named) => named.kind === kind)?.ppm ?? Infinity;
   let raised = severity;
-  if (estimate.ppmInRoom > limit('short-term') || estimate.ppmInRoom > limit('aegl-2') / 2) raised = graver(raised, 'review');
+  if (estimate.ppmInRoom > limit('short-term') || estimate.ppmInRoom > limit('aegl-2') / 2) raised = graver(raised, isSlow ? 'controlled' : 'review');
   if (estimate.ppmInBreathingZone > limit('idlh') || estimate.ppmInBreathingZone > limit('aegl-3')) raised = graver(raised, 'controlled');
   return raised;
 }

@@ -59,10 +59,10 @@ export function screenMix(portions: readonly BottleContent[], mix: Mix, room: Ro
   mix.steps.forEach((step, index) => {
     const met = bottles.slice(0, index + 1);
     if (met.length < 2 && bottles.length > 1) return;
-    const firings = firingRules({ bottles: met, volumeMl: step.volumeMl, state: step.equilibrium, temperatureC: ROOM_TEMPERATURE_C, isKept: false, room });
+    const firings = firingRules({ bottles: met, volumeMl: step.volumeMl, state: step.equilibrium, temperatureC: step.equilibrium.temperatureC, isKept: false, room });
     findings.push(...firings.map((firing) => findingOf(firing, firing.rule.kinds.includes('quality-only') ? 'quality' : 'mix', withGas(firing))));
   });
-  const heat = heatFinding(bottles, mix, ROOM_TEMPERATURE_C);
+  const heat = heatFinding(bottles, mix, mix.equilibrium.temperatureC);
   if (heat) findings.push(heat);
   findings.push(...redoxFindings(portions, mix));
   return sortFindings(mergeSteps(findings));

@@ -9,10 +9,12 @@ import type { GasLimit, Severity } from './types';
 export interface RuleConditions {
   readonly pHBelow?: number;
   readonly pHAbove?: number;
-  /** Strength as poured, mol/L, of the strongest member of the rule's first group. */
+  /** Strength as poured, mol/L, of the strongest member of `ofGroup`, or of the rule's first group. */
   readonly strongerThanMolarity?: number;
   readonly weakerThanMolarity?: number;
+  readonly ofGroup?: string;
   readonly hotterThanC?: number;
+  readonly coolerThanC?: number;
   readonly form?: string;
   readonly order?: 'water-into-acid';
   readonly standing?: 'fresh' | 'over-an-hour' | 'over-half-a-year';
@@ -39,6 +41,8 @@ export interface HazardRule {
   /** True where the source is known from memory only. */
   readonly isDraft: boolean;
   readonly variant?: string;
+  /** The gas comes over minutes to hours, so that room air is changed meanwhile: the worst case raises it to `controlled` at most. */
+  readonly isSlow?: boolean;
   readonly gas?: readonly GasStoichiometry[];
 }
 
