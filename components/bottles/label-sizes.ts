@@ -14,8 +14,8 @@ const BY_CAPACITY = [
 const LEAST_SIDE_MM = 10;
 /** More signs than this do not fit side by side in full size. */
 const FULL_SIZE_SIGNS = 3;
-/** Height of a small letter as part of the type size in our typeface. */
-const X_HEIGHT_RATIO = 0.5;
+/** Height of a small letter as part of the type size in our typeface, as a browser measures it (0.4959), rounded down. */
+const X_HEIGHT_RATIO = 0.495;
 
 export interface LabelSizes {
   /** Of the box around the sign, from point to point. */
