@@ -10,6 +10,7 @@ import { demonstrationEndpoints } from './demonstrations';
 import { houseEndpoints } from './house';
 import { labSessionEndpoints } from './lab-sessions';
 import { mixEndpoints } from './mixes';
+import { orderEndpoints } from './orders';
 import { outboxEndpoints } from './outbox';
 import { recordEndpoints } from './records';
 import { requestEndpoints } from './requests';
@@ -27,6 +28,7 @@ export const ALL_ENDPOINTS: readonly Endpoint[] = [
   houseEndpoints,
   labSessionEndpoints,
   mixEndpoints,
+  orderEndpoints,
   outboxEndpoints,
   recordEndpoints,
   requestEndpoints,

@@ -10,6 +10,7 @@ import type { Page } from '@/lib/schemas/list';
 import { afterCommit, currentTransaction, write } from '@/models/db';
 import { OutboxMessageModel } from '@/models/outbox-message';
 import { contains, orderOf, pageOfRows } from './lists';
+import { PermanentFailure } from './outside/failure';
 import { sendLetter } from './outside/mail';
 import type { Letter } from './outside/mail';
 import { record } from './record';
@@ -112,7 +113,7 @@ async function attempt(message: OutboxMessageModel): Promise<boolean> {
       message.update({
         attempts,
         lastError: lastError.slice(0, 500),
-        state: attempts >= MAX_ATTEMPTS ? 'dead' : 'waiting',
+        state: attempts >= MAX_ATTEMPTS || error instanceof PermanentFailure ? 'dead' : 'waiting',
         nextAttemptAt: new Date(Date.now() + waitSeconds * 1000),
       }),
     );

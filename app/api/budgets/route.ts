@@ -1,0 +1,5 @@
+import { route } from '@/lib/http/route';
+import { orderEndpoints } from '@/lib/schemas/orders';
+import { listBudgets } from '@/lib/services/orders';
+
+export const GET = route(orderEndpoints.budgets, async () => ({ items: await listBudgets() }));

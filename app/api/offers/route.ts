@@ -1,0 +1,5 @@
+import { listRoute } from '@/lib/http/list-route';
+import { orderEndpoints } from '@/lib/schemas/orders';
+import { listOffers } from '@/lib/services/orders';
+
+export const GET = listRoute(orderEndpoints.offers, ({ viewer, query }) => listOffers(viewer, query));
