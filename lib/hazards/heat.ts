@@ -4,8 +4,12 @@ import type { Finding, Severity } from './types';
 
 /** Enthalpy of neutralisation of strong acid and strong base, kJ/mol of water: textbook value. */
 const NEUTRALISATION_KJ_PER_MOL = 55.8;
-/** Heat capacity of the mix, taken as that of water, J/(g K). */
-const HEAT_CAPACITY = 4.18;
+/** Heat capacity of water, J/(g K). */
+const HEAT_CAPACITY_OF_WATER = 4.18;
+/** Heat capacity of sulfuric acid by % by mass, J/(g K), rounded handbook values from memory, good to about a tenth. */
+const HEAT_CAPACITY_OF_SULFURIC: readonly (readonly [percent: number, joules: number])[] = [
+  [0, HEAT_CAPACITY_OF_WATER], [10, 3.8], [20, 3.4], [30, 3], [40, 2.7], [50, 2.4], [60, 2.1], [70, 1.9], [80, 1.75], [90, 1.55], [98, 1.42],
+];
 
 /**
  * Integral heat of diluting sulfuric acid to r mol of water per mol, kJ/mol released; from memory of the
@@ -18,12 +22,12 @@ const SULFURIC_DILUTION: readonly (readonly [r: number, kJ: number])[] = [
 /** g/mL of sulfuric acid solutions by mol/L, rounded handbook values from memory; only the water content rests on it. */
 const sulfuricDensity = (molarity: number) => 1 + 0.06 * Math.min(molarity, 14) + 0.001 * Math.max(0, molarity - 14);
 
-function interpolated(r: number): number {
-  const above = SULFURIC_DILUTION.findIndex(([at]) => at >= r);
-  if (above < 0) return SULFURIC_DILUTION.at(-1)?.[1] ?? 0;
-  const [x1 = 0, y1 = 0] = SULFURIC_DILUTION[above] ?? [];
-  const [x0 = 0, y0 = 0] = SULFURIC_DILUTION[above - 1] ?? [x1, y1];
-  return x1 === x0 ? y1 : y0 + ((y1 - y0) * (r - x0)) / (x1 - x0);
+function interpolated(table: readonly (readonly [number, number])[], at: number): number {
+  const above = table.findIndex(([x]) => x >= at);
+  if (above < 0) return table.at(-1)?.[1] ?? 0;
+  const [x1 = 0, y1 = 0] = table[above] ?? [];
+  const [x0 = 0, y0 = 0] = table[above - 1] ?? [x1, y1];
+  return x1 === x0 ? y1 : y0 + ((y1 - y0) * (at - x0)) / (x1 - x0);
 }
 
 /** kJ set free by neutralising strong acid with strong base among the portions. */
@@ -49,15 +53,29 @@ export function dilutionKJ(bottles: readonly ScreenedBottle[], finalVolumeMl: nu
       const gramsAcid = amountMol * substance.molarMassGPerMol;
       const waterBefore = Math.max(0, volumeMl * sulfuricDensity(molarity) - gramsAcid) / 18.015;
       const waterAfter = waterBefore + (finalVolumeMl - volumeMl) / 18.015;
-      heat += amountMol * (interpolated(waterAfter / amountMol) - interpolated(waterBefore / amountMol));
+      heat += amountMol * (interpolated(SULFURIC_DILUTION, waterAfter / amountMol) - interpolated(SULFURIC_DILUTION, waterBefore / amountMol));
     }
   }
   return heat;
 }
 
-/** Adiabatic rise in K, all heat staying in the liquid: an upper bound. */
+/** J/K of the whole mix: water, or sulfuric acid where it is strong. */
+function heatCapacityJPerK(bottles: readonly ScreenedBottle[], finalVolumeMl: number): number {
+  let grams = finalVolumeMl;
+  let gramsAcid = 0;
+  for (const { solutes, volumeMl } of bottles) {
+    for (const { substance, molarity, amountMol } of solutes) {
+      if (substance.id !== 'sulfuric-acid') continue;
+      gramsAcid += amountMol * substance.molarMassGPerMol;
+      grams += volumeMl * (sulfuricDensity(molarity) - 1);
+    }
+  }
+  return grams * interpolated(HEAT_CAPACITY_OF_SULFURIC, (100 * gramsAcid) / grams);
+}
+
+/** Adiabatic rise in K, all heat staying in the liquid; heats of diluting other acids and bases are left out. */
 export function adiabaticRiseK(bottles: readonly ScreenedBottle[], finalVolumeMl: number): number {
-  return ((neutralisationKJ(bottles) + dilutionKJ(bottles, finalVolumeMl)) * 1000) / (HEAT_CAPACITY * finalVolumeMl);
+  return ((neutralisationKJ(bottles) + dilutionKJ(bottles, finalVolumeMl)) * 1000) / heatCapacityJPerK(bottles, finalVolumeMl);
 }
 
 /** A finding where the mix grows hot; thresholds are ours, to be confirmed locally. */

@@ -8,6 +8,7 @@ import { heatFinding } from './heat';
 import { firingRules, meetingTitle } from './rules';
 import type { Firing } from './rules';
 import type { BottleContent, Decision, Finding, Room, Severity } from './types';
+import { vapourFindings } from './vapour';
 
 const ROOM_TEMPERATURE_C = 25;
 
@@ -64,7 +65,7 @@ export function screenMix(portions: readonly BottleContent[], mix: Mix, room: Ro
   });
   const heat = heatFinding(bottles, mix, mix.equilibrium.temperatureC);
   if (heat) findings.push(heat);
-  findings.push(...redoxFindings(portions, mix));
+  findings.push(...vapourFindings(mix, room), ...redoxFindings(portions, mix));
   return sortFindings(mergeSteps(findings));
 }
 
