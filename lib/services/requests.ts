@@ -39,6 +39,9 @@ const WAITS_FOR: Readonly<Record<RequestState, string>> = {
 /** States in which its lines can still change. */
 const CHANGEABLE: readonly RequestState[] = ['draft', 'returned', 'asked', 'in-review', 'agreed'];
 
+/** Later states are judged again only because something changed, never because somebody presses the button twice. */
+const SUBMITTABLE: readonly RequestState[] = ['draft', 'returned'];
+
 async function presentRows(requests: readonly RequestModel[]): Promise<RequestRow[]> {
   const [sessions, people, lines] = await Promise.all([
     SessionModel.findAll({ where: { id: requests.map(({ sessionId }) => sessionId) } }),
@@ -136,6 +139,7 @@ export async function createRequest(viewer: Viewer, input: RequestCreate): Promi
       requesterId: viewer.id,
       state: 'draft',
       note: input.note,
+      planHash: null,
     });
     await saveLines(request.id, input.lines);
     await record(viewer, { subjectType: 'request', subjectId: request.id, subjectLabel: request.code, action: 'draft', toState: 'draft' });
@@ -166,6 +170,7 @@ export async function submitRequest(viewer: Viewer, id: string, { version, reaso
   return write(async () => {
     const request = await loadOwn(viewer, id);
     if (request.version !== version) refuseStale(request, version, await detail(viewer, request));
+    if (!SUBMITTABLE.includes(request.state)) throw new DomainError('wrong-state', `The request is ${request.state.replaceAll('-', ' ')}; it was submitted already.`);
     if (request.state === 'returned') await lapseReviews(viewer, request, 'it was answered and submitted again');
     request.submittedAt = new Date();
     await changeState(viewer, 'request', request, 'asked', { label: request.code, reason: reason || null });
