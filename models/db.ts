@@ -34,8 +34,10 @@ function transactionContext(contexts: House['contexts']) {
       contexts.run(context, () => work(context));
       return context;
     },
-    bind: (work: (...args: unknown[]) => unknown, context = contexts.getStore() ?? new Map<string, unknown>()) =>
-      (...args: unknown[]) => contexts.run(context, () => work(...args)),
+    bind:
+      (work: (...args: unknown[]) => unknown, context = contexts.getStore() ?? new Map<string, unknown>()) =>
+      (...args: unknown[]) =>
+        contexts.run(context, () => work(...args)),
   };
 }
 
@@ -100,8 +102,8 @@ export function currentTransaction(): Transaction | undefined {
 export async function write<T>(work: () => Promise<T>): Promise<T> {
   if (currentTransaction()) return work();
   const open = house();
-  const turn = open.lastWrite.then(
-    () => open.database.transaction({ type: Transaction.TYPES.IMMEDIATE }, work),
+  const turn = open.lastWrite.then(() =>
+    open.database.transaction({ type: Transaction.TYPES.IMMEDIATE }, work),
   );
   open.lastWrite = turn.catch(() => undefined);
   return turn;

@@ -21,7 +21,10 @@ export async function integrityProblems(database: Sequelize): Promise<string[]> 
   const [rows] = await database.query('PRAGMA integrity_check');
   const [orphans] = await database.query('PRAGMA foreign_key_check');
   const messages = (rows as { integrity_check: string }[]).map((row) => row.integrity_check);
-  return [...messages.filter((message) => message !== 'ok'), ...orphans.map((row) => `orphan: ${JSON.stringify(row)}`)];
+  return [
+    ...messages.filter((message) => message !== 'ok'),
+    ...orphans.map((row) => `orphan: ${JSON.stringify(row)}`),
+  ];
 }
 
 /** Writes a consistent copy of the live database to a new file. */

@@ -9,7 +9,11 @@ let purchasing: Agent;
 let placeId: string;
 
 beforeAll(async () => {
-  [prep, instructor, purchasing] = await Promise.all([signedIn('prep'), signedIn('instructor'), signedIn('purchasing')]);
+  [prep, instructor, purchasing] = await Promise.all([
+    signedIn('prep'),
+    signedIn('instructor'),
+    signedIn('purchasing'),
+  ]);
   placeId = (await prep.get('/api/places')).body.items[0].id;
 });
 
@@ -68,7 +72,9 @@ describe('lots', () => {
   it('are found, sorted, filtered, paged and exported on the server', async () => {
     const { body: found } = await prep.get('/api/lots').query({ search: '7647-14-5', show: 'all' });
     expect(found.total).toBeGreaterThan(0);
-    expect(new Set(found.items.map(({ substanceId }: Lot) => substanceId))).toEqual(new Set(['sodium-chloride']));
+    expect(new Set(found.items.map(({ substanceId }: Lot) => substanceId))).toEqual(
+      new Set(['sodium-chloride']),
+    );
     const { body: page } = await prep.get('/api/lots').query({ pageSize: 5, sort: '-balance' });
     const balances = page.items.map(({ balance }: Lot) => balance);
     expect(balances).toEqual([...balances].sort((a: number, b: number) => b - a));
@@ -81,20 +87,39 @@ describe('lots', () => {
 
   it('on hold say why, and can be freed again', async () => {
     const lot = await someLot();
-    expect((await purchasing.post(`/api/lots/${lot.id}/hold`).send({ reason: 'Why not', version: lot.version })).status).toBe(403);
-    const held = await prep.post(`/api/lots/${lot.id}/hold`).send({ reason: 'Doubtful', version: lot.version });
+    expect(
+      (await purchasing.post(`/api/lots/${lot.id}/hold`).send({ reason: 'Why not', version: lot.version }))
+        .status,
+    ).toBe(403);
+    const held = await prep
+      .post(`/api/lots/${lot.id}/hold`)
+      .send({ reason: 'Doubtful', version: lot.version });
     expect(held.body).toMatchObject({ isHeld: true, heldReason: 'Doubtful' });
-    expect((await prep.post(`/api/lots/${lot.id}/hold`).send({ reason: 'Again', version: lot.version })).status).toBe(409);
+    expect(
+      (await prep.post(`/api/lots/${lot.id}/hold`).send({ reason: 'Again', version: lot.version })).status,
+    ).toBe(409);
     const { body: list } = await prep.get('/api/lots').query({ show: 'held', search: lot.code });
     expect(list.total).toBe(1);
-    const lifted = await prep.post(`/api/lots/${lot.id}/lift`).send({ reason: 'Tested', version: held.body.version });
+    const lifted = await prep
+      .post(`/api/lots/${lot.id}/lift`)
+      .send({ reason: 'Tested', version: held.body.version });
     expect(lifted.body.isHeld).toBe(false);
   });
 
   it('are moved from an up-to-date page only', async () => {
     const lot = await someLot();
-    const patch = { placeId, assayPercent: 98, openedOn: day(0), expiresOn: null, reason: 'Opened', version: lot.version };
-    expect((await prep.patch(`/api/lots/${lot.id}`).send(patch)).body).toMatchObject({ assayPercent: 98, expiresOn: null });
+    const patch = {
+      placeId,
+      assayPercent: 98,
+      openedOn: day(0),
+      expiresOn: null,
+      reason: 'Opened',
+      version: lot.version,
+    };
+    expect((await prep.patch(`/api/lots/${lot.id}`).send(patch)).body).toMatchObject({
+      assayPercent: 98,
+      expiresOn: null,
+    });
     expect((await prep.patch(`/api/lots/${lot.id}`).send(patch)).status).toBe(409);
   });
 });
@@ -104,10 +129,14 @@ describe('the ledger by hand', () => {
     const lot = await someLot();
     const count = { kind: 'counted', lotId: lot.id, amount: 92.5, reason: 'Counted' };
     const key = `count-${lot.id}`;
-    const answers = await Promise.all([1, 2].map(() => prep.post('/api/movements').set('idempotency-key', key).send(count)));
+    const answers = await Promise.all(
+      [1, 2].map(() => prep.post('/api/movements').set('idempotency-key', key).send(count)),
+    );
     expect(answers.map(({ status }) => status)).toEqual([201, 201]);
     expect(answers[0]?.body.id).toBe(answers[1]?.body.id);
-    const tooMuch = await prep.post('/api/movements').send({ kind: 'discarded', lotId: lot.id, amount: 93, reason: 'Spilt' });
+    const tooMuch = await prep
+      .post('/api/movements')
+      .send({ kind: 'discarded', lotId: lot.id, amount: 93, reason: 'Spilt' });
     expect(tooMuch.status).toBe(409);
     expect((await prep.get(`/api/lots/${lot.id}`)).body.balance).toBe(92.5);
     expect((await prep.get('/api/movements').query({ lotId: lot.id })).body.total).toBe(2);
@@ -118,10 +147,19 @@ describe('the ledger by hand', () => {
     const line = { kind: 'discarded', lotId: lot.id, amount: 1, reason: 'Spilt' };
     expect((await stranger().post('/api/movements').send(line)).status).toBe(401);
     expect((await purchasing.post('/api/movements').send(line)).status).toBe(403);
-    for (const wrong of [{ kind: 'stolen' }, { amount: -1 }, { amount: null }, { reason: 'x' }, { lotId: ABSENT_ID }, { colour: 'red' }]) {
+    for (const wrong of [
+      { kind: 'stolen' },
+      { amount: -1 },
+      { amount: null },
+      { reason: 'x' },
+      { lotId: ABSENT_ID },
+      { colour: 'red' },
+    ]) {
       expect((await prep.post('/api/movements').send({ ...line, ...wrong })).status).toBe(422);
     }
-    const parallel = await Promise.all(Array.from({ length: 12 }, () => prep.post('/api/movements').send({ ...line, amount: 10 })));
+    const parallel = await Promise.all(
+      Array.from({ length: 12 }, () => prep.post('/api/movements').send({ ...line, amount: 10 })),
+    );
     expect(parallel.filter(({ status }) => status === 201)).toHaveLength(10);
     expect(parallel.filter(({ status }) => status === 409)).toHaveLength(2);
     expect((await prep.get(`/api/lots/${lot.id}`)).body.balance).toBe(0);

@@ -39,7 +39,12 @@ let people = 0;
 
 export async function buildPerson(roles: Role[]): Promise<Viewer> {
   people += 1;
-  const user = await UserModel.create({ email: `person-${people}@larkmoor.example`, name: `Person ${people}`, passwordHash: 'none', roles });
+  const user = await UserModel.create({
+    email: `person-${people}@larkmoor.example`,
+    name: `Person ${people}`,
+    passwordHash: 'none',
+    roles,
+  });
   return { id: user.id, name: user.name, email: user.email, roles, approvalLimitMinor: 0 };
 }
 
@@ -49,15 +54,56 @@ export async function openPrepRoom(): Promise<PrepRoom> {
   process.env.LOG_LEVEL = 'silent';
   await migrateUp(database());
   const room = await RoomModel.create({ name: 'Prep room', volumeM3: 100, airChangesPerHour: 6 });
-  const place = await PlaceModel.create({ roomId: room.id, name: 'Salts', kind: 'shelf', storageGroup: 'general' });
+  const place = await PlaceModel.create({
+    roomId: room.id,
+    name: 'Salts',
+    kind: 'shelf',
+    storageGroup: 'general',
+  });
   await EquipmentModel.bulkCreate([
-    { roomId: room.id, kind: 'balance', name: 'Balance 0.1 mg', capacityG: 220, readabilityG: 0.0001, repeatabilityG: 0.0001 },
-    { roomId: room.id, kind: 'balance', name: 'Balance 10 mg', capacityG: 3200, readabilityG: 0.01, repeatabilityG: 0.01 },
-    ...[100, 250, 500, 1000].map((capacityMl) => ({ roomId: room.id, kind: 'flask' as const, name: `${capacityMl} mL flask`, capacityMl, glassClass: 'A' })),
-    ...[10, 25, 50].map((capacityMl) => ({ roomId: room.id, kind: 'pipette' as const, name: `${capacityMl} mL pipette`, capacityMl, glassClass: 'A' })),
-    ...[25, 100].map((capacityMl) => ({ roomId: room.id, kind: 'cylinder' as const, name: `${capacityMl} mL cylinder`, capacityMl, glassClass: 'B' })),
+    {
+      roomId: room.id,
+      kind: 'balance',
+      name: 'Balance 0.1 mg',
+      capacityG: 220,
+      readabilityG: 0.0001,
+      repeatabilityG: 0.0001,
+    },
+    {
+      roomId: room.id,
+      kind: 'balance',
+      name: 'Balance 10 mg',
+      capacityG: 3200,
+      readabilityG: 0.01,
+      repeatabilityG: 0.01,
+    },
+    ...[100, 250, 500, 1000].map((capacityMl) => ({
+      roomId: room.id,
+      kind: 'flask' as const,
+      name: `${capacityMl} mL flask`,
+      capacityMl,
+      glassClass: 'A',
+    })),
+    ...[10, 25, 50].map((capacityMl) => ({
+      roomId: room.id,
+      kind: 'pipette' as const,
+      name: `${capacityMl} mL pipette`,
+      capacityMl,
+      glassClass: 'A',
+    })),
+    ...[25, 100].map((capacityMl) => ({
+      roomId: room.id,
+      kind: 'cylinder' as const,
+      name: `${capacityMl} mL cylinder`,
+      capacityMl,
+      glassClass: 'B',
+    })),
   ]);
-  const [prep, instructor, safety] = await Promise.all([buildPerson(['prep']), buildPerson(['instructor']), buildPerson(['safety'])]);
+  const [prep, instructor, safety] = await Promise.all([
+    buildPerson(['prep']),
+    buildPerson(['instructor']),
+    buildPerson(['safety']),
+  ]);
   return {
     prep,
     instructor,
@@ -77,7 +123,17 @@ async function buildSubstance(id: string): Promise<SubstanceModel> {
   const substance = findSubstance(id);
   if (!substance) throw new Error(`${id} is not in the catalogue`);
   const { name, cas, formula, molarMassGPerMol, form } = substance;
-  return SubstanceModel.create({ id, name, cas, formula, molarMassGPerMol, form, unit: form === 'solid' ? 'g' : 'mL', storageGroup: 'general', searchText: `${name} ${cas}` });
+  return SubstanceModel.create({
+    id,
+    name,
+    cas,
+    formula,
+    molarMassGPerMol,
+    form,
+    unit: form === 'solid' ? 'g' : 'mL',
+    storageGroup: 'general',
+    searchText: `${name} ${cas}`,
+  });
 }
 
 export async function buildLot(
@@ -102,14 +158,24 @@ export async function buildLot(
   );
 }
 
-export async function buildSolution(solute: { substanceId: string; molarity: number; tolerance?: ToleranceClass; shelfLifeDays?: number }): Promise<SolutionModel> {
+export async function buildSolution(solute: {
+  substanceId: string;
+  molarity: number;
+  tolerance?: ToleranceClass;
+  shelfLifeDays?: number;
+}): Promise<SolutionModel> {
   await buildSubstance(solute.substanceId);
   const solution = await SolutionModel.create({
     name: `${solute.substanceId} ${solute.molarity} mol/L`,
     shelfLifeDays: solute.shelfLifeDays ?? 60,
     toleranceClass: solute.tolerance ?? 'ordinary',
   });
-  await SolutionSoluteModel.create({ solutionId: solution.id, position: 0, substanceId: solute.substanceId, molarity: solute.molarity });
+  await SolutionSoluteModel.create({
+    solutionId: solution.id,
+    position: 0,
+    substanceId: solute.substanceId,
+    molarity: solute.molarity,
+  });
   return solution;
 }
 
@@ -144,7 +210,14 @@ export async function buildAgreedRequest(
     }),
   );
   const plan: RequestPlan = {
-    session: { course: 'CH101', title: 'Complexes', startsAt: startsAt.toISOString(), roomName: 'Prep room', room: { volumeM3: 100, airChangesPerHour: 6, fumeCupboard: true }, benches: 10 },
+    session: {
+      course: 'CH101',
+      title: 'Complexes',
+      startsAt: startsAt.toISOString(),
+      roomName: 'Prep room',
+      room: { volumeM3: 100, airChangesPerHour: 6, fumeCupboard: true },
+      benches: 10,
+    },
     solutions,
     demonstrations: [],
     substances: [],
@@ -153,10 +226,29 @@ export async function buildAgreedRequest(
   };
   const code = await write(() => nextCode('request'));
   const hash = `plan of ${code}`;
-  const request = await RequestModel.create({ code, sessionId: session.id, requesterId: house.instructor.id, state: 'agreed', planHash: hash });
-  const row = await PlanModel.create({ requestId: request.id, hash, decision: 'clear', content: { ...plan } });
+  const request = await RequestModel.create({
+    code,
+    sessionId: session.id,
+    requesterId: house.instructor.id,
+    state: 'agreed',
+    planHash: hash,
+  });
+  const row = await PlanModel.create({
+    requestId: request.id,
+    hash,
+    decision: 'clear',
+    content: { ...plan },
+  });
   if (about.conditions) {
-    await ReviewModel.create({ requestId: request.id, planId: row.id, planHash: hash, state: 'agreed-with-conditions', gravity: 1, conditions: about.conditions, reviewerId: house.safety.id });
+    await ReviewModel.create({
+      requestId: request.id,
+      planId: row.id,
+      planHash: hash,
+      state: 'agreed-with-conditions',
+      gravity: 1,
+      conditions: about.conditions,
+      reviewerId: house.safety.id,
+    });
   }
   return request;
 }

@@ -25,7 +25,9 @@ export function BatchActions({ batch, mayWrite, mayHold, onStart }: BatchActions
   const [isBusy, setBusy] = useState(false);
   const isOver = batch.state === 'discarded' || batch.state === 'spent';
   const call = (name: 'hold' | 'lift' | 'discard') => (reason: string) =>
-    change(() => callApi(batchEndpoints[name], { params: { id: batch.id }, body: { reason, version: batch.version } }));
+    change(() =>
+      callApi(batchEndpoints[name], { params: { id: batch.id }, body: { reason, version: batch.version } }),
+    );
 
   const start = async () => {
     setBusy(true);
@@ -51,15 +53,34 @@ export function BatchActions({ batch, mayWrite, mayHold, onStart }: BatchActions
           </Button>
         )}
         <Button onClick={() => window.print()}>Print this sheet</Button>
-        {mayWrite && batch.bottles.length > 0 && <LinkButton href={`/batches/${batch.id}/labels` as Route}>Labels</LinkButton>}
+        {mayWrite && batch.bottles.length > 0 && (
+          <LinkButton href={`/batches/${batch.id}/labels` as Route}>Labels</LinkButton>
+        )}
         {mayHold && !isOver && batch.heldReason === null && (
-          <ReasonDialog label="Put on hold" title={`Put ${batch.code} on hold`} description="Nothing of it may be entered, bottled or handed over until the hold is lifted." look="danger" onConfirm={call('hold')} />
+          <ReasonDialog
+            label="Put on hold"
+            title={`Put ${batch.code} on hold`}
+            description="Nothing of it may be entered, bottled or handed over until the hold is lifted."
+            look="danger"
+            onConfirm={call('hold')}
+          />
         )}
         {mayHold && batch.heldReason !== null && (
-          <ReasonDialog label="Lift the hold" title={`Lift the hold on ${batch.code}`} description="It may be used again. A hold on a lot is lifted on the lot's own page." onConfirm={call('lift')} />
+          <ReasonDialog
+            label="Lift the hold"
+            title={`Lift the hold on ${batch.code}`}
+            description="It may be used again. A hold on a lot is lifted on the lot's own page."
+            onConfirm={call('lift')}
+          />
         )}
         {mayWrite && !isOver && (
-          <ReasonDialog label="Discard this batch" title={`Discard ${batch.code}`} description="Its bottles are discarded with it. What was taken from the shelves stays taken." look="danger" onConfirm={call('discard')} />
+          <ReasonDialog
+            label="Discard this batch"
+            title={`Discard ${batch.code}`}
+            description="Its bottles are discarded with it. What was taken from the shelves stays taken."
+            look="danger"
+            onConfirm={call('discard')}
+          />
         )}
       </div>
     </div>

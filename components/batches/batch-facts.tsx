@@ -17,14 +17,22 @@ export function BatchFacts({ batch, qr }: { readonly batch: Batch; readonly qr: 
     <header className="rule-double mb-6 flex items-start justify-between gap-6 pb-4">
       <div className="min-w-0">
         <p className="text-2xl font-bold">
-          <span className="font-mono">{batch.code}</span> <span className="hidden print:inline">{batch.solutionName}</span>
+          <span className="font-mono">{batch.code}</span>{' '}
+          <span className="hidden print:inline">{batch.solutionName}</span>
         </p>
         <p className="mb-3 text-xl font-semibold">
           <SoluteLine solutes={batch.solutes} />
         </p>
         <DefinitionList
           items={[
-            ['Make', <><Amount value={sheet.makeVolumeMl} unit="mL" /> in {sheet.vessel.fills > 1 ? `${sheet.vessel.fills} fillings of the ` : 'the '}{sheet.vessel.name}, to {percent} % ({sheet.tolerance})</>],
+            [
+              'Make',
+              <>
+                <Amount value={sheet.makeVolumeMl} unit="mL" /> in{' '}
+                {sheet.vessel.fills > 1 ? `${sheet.vessel.fills} fillings of the ` : 'the '}
+                {sheet.vessel.name}, to {percent} % ({sheet.tolerance})
+              </>,
+            ],
             ['Make on', <Moment key="on" at={batch.makeOn} style="day" />],
             ['Ready by', <Moment key="ready" at={batch.readyBy} />],
             [
@@ -32,13 +40,27 @@ export function BatchFacts({ batch, qr }: { readonly batch: Batch; readonly qr: 
               <ul key="for">
                 {batch.requests.map(({ id, code, session, startsAt, volumeMl }) => (
                   <li key={id}>
-                    <Link href={`/requests/${id}` as Route} className="font-mono">{code}</Link> {session}, <Moment at={startsAt} />: <Amount value={volumeMl} unit="mL" />
+                    <Link href={`/requests/${id}` as Route} className="font-mono">
+                      {code}
+                    </Link>{' '}
+                    {session}, <Moment at={startsAt} />: <Amount value={volumeMl} unit="mL" />
                   </li>
                 ))}
               </ul>,
             ],
-            ...(batch.madeAt ? ([['Made', <><Moment at={batch.madeAt} /> by {batch.makerName}, checked by {batch.checkerName}</>]] as const) : []),
-            ...(batch.useBy ? ([['Use by', <Moment key="use" at={batch.useBy} style="short-day" />]] as const) : []),
+            ...(batch.madeAt
+              ? ([
+                  [
+                    'Made',
+                    <>
+                      <Moment at={batch.madeAt} /> by {batch.makerName}, checked by {batch.checkerName}
+                    </>,
+                  ],
+                ] as const)
+              : []),
+            ...(batch.useBy
+              ? ([['Use by', <Moment key="use" at={batch.useBy} style="short-day" />]] as const)
+              : []),
           ]}
         />
       </div>

@@ -24,7 +24,13 @@ export function BatchList() {
       defaults={NEWEST_FIRST}
       empty={<EmptyState title="No batch yet">A batch comes here when it is planned.</EmptyState>}
       filters={(state, change) => (
-        <Select id="batch-state" label="State" value={state.state ?? ''} onChange={(event) => change({ state: event.target.value })} className="w-44">
+        <Select
+          id="batch-state"
+          label="State"
+          value={state.state ?? ''}
+          onChange={(event) => change({ state: event.target.value })}
+          className="w-44"
+        >
           <option value="">any</option>
           {BATCH_STATES.map((name) => (
             <option key={name} value={name}>
@@ -44,11 +50,37 @@ export function BatchList() {
             </Link>
           ),
         },
-        { id: 'volume', header: 'Volume', sortKey: 'volumeMl', isNumeric: true, cell: ({ volumeMl }) => <Amount value={volumeMl} unit="mL" /> },
-        { id: 'makeOn', header: 'Make on', sortKey: 'makeOn', cell: ({ makeOn }) => <Moment at={makeOn} style="short-day" /> },
-        { id: 'readyBy', header: 'Ready by', sortKey: 'readyBy', cell: ({ readyBy }) => <Moment at={readyBy} /> },
-        { id: 'for', header: 'For', cell: ({ requestCodes }) => <span className="font-mono">{requestCodes.join(', ')}</span> },
-        { id: 'state', header: 'State', sortKey: 'state', cell: ({ state, isHeld }) => (isHeld ? <StateMark state="held" words="on hold" /> : <StateMark state={state} />) },
+        {
+          id: 'volume',
+          header: 'Volume',
+          sortKey: 'volumeMl',
+          isNumeric: true,
+          cell: ({ volumeMl }) => <Amount value={volumeMl} unit="mL" />,
+        },
+        {
+          id: 'makeOn',
+          header: 'Make on',
+          sortKey: 'makeOn',
+          cell: ({ makeOn }) => <Moment at={makeOn} style="short-day" />,
+        },
+        {
+          id: 'readyBy',
+          header: 'Ready by',
+          sortKey: 'readyBy',
+          cell: ({ readyBy }) => <Moment at={readyBy} />,
+        },
+        {
+          id: 'for',
+          header: 'For',
+          cell: ({ requestCodes }) => <span className="font-mono">{requestCodes.join(', ')}</span>,
+        },
+        {
+          id: 'state',
+          header: 'State',
+          sortKey: 'state',
+          cell: ({ state, isHeld }) =>
+            isHeld ? <StateMark state="held" words="on hold" /> : <StateMark state={state} />,
+        },
       ]}
     />
   );

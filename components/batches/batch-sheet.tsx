@@ -1,5 +1,6 @@
 'use client';
 
+import type { Route } from 'next';
 import type { ReactNode } from 'react';
 import { callApi } from '@/lib/client/api';
 import { useBatch, useBatchChange } from '@/lib/client/use-batch';
@@ -22,6 +23,7 @@ interface BatchSheetProps {
   readonly initial: Batch;
   readonly mayWrite: boolean;
   readonly mayHold: boolean;
+  readonly maySeeStock: boolean;
   /** The square that opens this sheet. */
   readonly qr: ReactNode;
   /** Hazards of the solution as diluted. */
@@ -38,16 +40,25 @@ const NOW: Readonly<Record<Batch['state'], string>> = {
 };
 
 /** The batch as its sheet: on the screen as on paper. */
-export function BatchSheet({ initial, mayWrite, mayHold, qr, hazards }: BatchSheetProps) {
+export function BatchSheet({ initial, mayWrite, mayHold, maySeeStock, qr, hazards }: BatchSheetProps) {
   const batch = useBatch(initial);
   const change = useBatchChange(batch.id);
-  const start = () => change(() => callApi(batchEndpoints.start, { params: { id: batch.id }, body: { version: batch.version } }));
+  const start = () =>
+    change(() =>
+      callApi(batchEndpoints.start, { params: { id: batch.id }, body: { version: batch.version } }),
+    );
   const isMade = batch.state === 'bottled' || batch.state === 'spent';
   const { warnings, questions, expected } = batch.sheet;
+  const asked = batch.requests[0] ? (`/requests/${batch.requests[0].id}` as Route) : null;
 
   return (
     <>
-      <StepStrip done={isMade ? 3 : 2} now={batch.isHeld ? 'on hold' : NOW[batch.state]} isStopped={batch.isHeld || batch.state === 'discarded'} />
+      <StepStrip
+        done={isMade ? 3 : 2}
+        now={batch.isHeld ? 'on hold' : NOW[batch.state]}
+        isStopped={batch.isHeld || batch.state === 'discarded'}
+        hrefs={[asked, asked, null, null]}
+      />
       {batch.heldReason && (
         <div className="mb-4">
           <Alert tone="stop" title="On hold: do not use">
@@ -56,7 +67,10 @@ export function BatchSheet({ initial, mayWrite, mayHold, qr, hazards }: BatchShe
         </div>
       )}
       <BatchActions batch={batch} mayWrite={mayWrite} mayHold={mayHold} onStart={start} />
-      <article className="sheet px-4 py-5 md:px-8 print:border-0 print:p-0 print:[&_section]:mb-3" aria-label={`Sheet of batch ${batch.code}`}>
+      <article
+        className="sheet px-4 py-5 md:px-8 print:border-0 print:p-0 print:[&_section]:mb-3"
+        aria-label={`Sheet of batch ${batch.code}`}
+      >
         <BatchFacts batch={batch} qr={qr} />
         {(warnings.length > 0 || questions.length > 0) && (
           <div className="mb-6">
@@ -71,14 +85,19 @@ export function BatchSheet({ initial, mayWrite, mayHold, qr, hazards }: BatchShe
         )}
         <Section title="What it is once made">{hazards}</Section>
         <Section title="Take">
-          <TakeLines batch={batch} mayWrite={mayWrite} />
-          {batch.sheet.passedOver.length > 0 && <p className="mt-2 text-sm text-soft">Passed over: {batch.sheet.passedOver.join(' ')}</p>}
+          <TakeLines batch={batch} mayWrite={mayWrite} maySeeStock={maySeeStock} />
+          {batch.sheet.passedOver.length > 0 && (
+            <p className="mt-2 text-sm text-soft">Passed over: {batch.sheet.passedOver.join(' ')}</p>
+          )}
         </Section>
         <Section title="Glass">
           <ul className="columns-1 gap-8 md:columns-2">
             {batch.sheet.glassware.map(({ name, use, toleranceMl, toleranceSource }) => (
               <li key={name} className="mb-1 break-inside-avoid">
-                <strong>{name}</strong>: {use} <span className="text-sm text-soft">(± {Number(toleranceMl.toPrecision(3))} mL, {toleranceSource})</span>
+                <strong>{name}</strong>: {use}{' '}
+                <span className="text-sm text-soft">
+                  (± {Number(toleranceMl.toPrecision(3))} mL, {toleranceSource})
+                </span>
               </li>
             ))}
           </ul>
@@ -88,7 +107,8 @@ export function BatchSheet({ initial, mayWrite, mayHold, qr, hazards }: BatchShe
         </Section>
         <Section title="Expected">
           <p>
-            {expected.pH === null ? 'No pH is foreseen' : `pH about ${expected.pH.toFixed(1)}`}; {expected.colour === null ? 'no colour is foreseen' : expected.colour}.
+            {expected.pH === null ? 'No pH is foreseen' : `pH about ${expected.pH.toFixed(1)}`};{' '}
+            {expected.colour === null ? 'no colour is foreseen' : expected.colour}.
             {batch.sheet.storageNote && ` Keep: ${batch.sheet.storageNote}`}
           </p>
         </Section>
@@ -112,7 +132,9 @@ export function BatchSheet({ initial, mayWrite, mayHold, qr, hazards }: BatchShe
             <BottleTable batch={batch} mayWrite={mayWrite} />
           </Section>
         )}
-        <p className="hidden text-sm print:block">Predictions replace no risk assessment, data sheet or local rule; a competent person decides.</p>
+        <p className="hidden text-sm print:block">
+          Predictions replace no risk assessment, data sheet or local rule; a competent person decides.
+        </p>
       </article>
       <Story entries={batch.story} />
     </>

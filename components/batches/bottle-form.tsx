@@ -18,10 +18,16 @@ interface Row {
 
 /** One bottle for each request, and one for what is left over. */
 function firstRows(batch: Batch): Row[] {
-  const rows = batch.requests.map(({ id, volumeMl }) => ({ key: id, volumeMl: String(volumeMl), requestId: id }));
+  const rows = batch.requests.map(({ id, volumeMl }) => ({
+    key: id,
+    volumeMl: String(volumeMl),
+    requestId: id,
+  }));
   const madeMl = batch.actual?.volumeMl ?? batch.sheet.makeVolumeMl;
   const left = madeMl - batch.requests.reduce((sum, { volumeMl }) => sum + volumeMl, 0);
-  return left >= 1 ? [...rows, { key: 'left', volumeMl: String(Number(left.toFixed(1))), requestId: '' }] : rows;
+  return left >= 1
+    ? [...rows, { key: 'left', volumeMl: String(Number(left.toFixed(1))), requestId: '' }]
+    : rows;
 }
 
 /** Divides a checked batch. */
@@ -32,7 +38,8 @@ export function BottleForm({ batch }: { readonly batch: Batch }) {
   const [problem, setProblem] = useState<ApiProblem | null>(null);
   const [isBusy, setBusy] = useState(false);
   const errorOf = (pointer: string) => problem?.errors.find((error) => error.pointer === pointer)?.detail;
-  const update = (index: number, next: Partial<Row>) => setRows(rows.map((row, at) => (at === index ? { ...row, ...next } : row)));
+  const update = (index: number, next: Partial<Row>) =>
+    setRows(rows.map((row, at) => (at === index ? { ...row, ...next } : row)));
   const general = problem && (problem.errors.length === 0 ? problem.message : errorOf('#/bottles'));
 
   const fill = async (event: FormEvent) => {
@@ -40,8 +47,17 @@ export function BottleForm({ batch }: { readonly batch: Batch }) {
     setBusy(true);
     setProblem(null);
     try {
-      const bottles = rows.map(({ volumeMl, requestId }) => ({ volumeMl, requestId: requestId === '' ? null : requestId }));
-      await change(() => callApi(batchEndpoints.bottle, { params: { id: batch.id }, body: { bottles, version: batch.version }, idempotencyKey: key }));
+      const bottles = rows.map(({ volumeMl, requestId }) => ({
+        volumeMl,
+        requestId: requestId === '' ? null : requestId,
+      }));
+      await change(() =>
+        callApi(batchEndpoints.bottle, {
+          params: { id: batch.id },
+          body: { bottles, version: batch.version },
+          idempotencyKey: key,
+        }),
+      );
     } catch (error) {
       if (!(error instanceof ApiProblem)) throw error;
       setProblem(error);
@@ -90,7 +106,16 @@ export function BottleForm({ batch }: { readonly batch: Batch }) {
         ))}
       </ol>
       <div className="flex flex-wrap gap-3">
-        <Button onClick={() => setRows([...rows, { key: newIdempotencyKey(), volumeMl: '', requestId: batch.requests[0]?.id ?? '' }])}>Add a bottle</Button>
+        <Button
+          onClick={() =>
+            setRows([
+              ...rows,
+              { key: newIdempotencyKey(), volumeMl: '', requestId: batch.requests[0]?.id ?? '' },
+            ])
+          }
+        >
+          Add a bottle
+        </Button>
         <Button type="submit" look="primary" isBusy={isBusy} busyText="Saving …">
           Fill these bottles
         </Button>

@@ -25,7 +25,13 @@ export function CheckForm({ batch }: { readonly batch: Batch }) {
     setBusy(true);
     setProblem(null);
     try {
-      await change(() => callApi(batchEndpoints.check, { params: { id: batch.id }, body: { volumeMl, note, version: batch.version }, idempotencyKey: key }));
+      await change(() =>
+        callApi(batchEndpoints.check, {
+          params: { id: batch.id },
+          body: { volumeMl, note, version: batch.version },
+          idempotencyKey: key,
+        }),
+      );
     } catch (error) {
       if (!(error instanceof ApiProblem)) throw error;
       setProblem(error);
@@ -48,11 +54,32 @@ export function CheckForm({ batch }: { readonly batch: Batch }) {
       )}
       {problem && problem.errors.length === 0 && <Alert tone="stop" title={problem.message} />}
       <div className="flex flex-wrap items-start gap-4">
-        <NumberInput id="volume-made" label="Volume made" unit="mL" value={volumeMl} onChange={(event) => setVolumeMl(event.target.value)} error={errorOf('volumeMl')} className="w-44" />
-        <TextInput id="check-note" label="Remark (may stay empty)" value={note} onChange={(event) => setNote(event.target.value)} error={errorOf('note')} className="min-w-64 flex-1" />
+        <NumberInput
+          id="volume-made"
+          label="Volume made"
+          unit="mL"
+          value={volumeMl}
+          onChange={(event) => setVolumeMl(event.target.value)}
+          error={errorOf('volumeMl')}
+          className="w-44"
+        />
+        <TextInput
+          id="check-note"
+          label="Remark (may stay empty)"
+          value={note}
+          onChange={(event) => setNote(event.target.value)}
+          error={errorOf('note')}
+          className="min-w-64 flex-1"
+        />
       </div>
       <div>
-        <Button type="submit" look="primary" disabled={batch.missing.length > 0} isBusy={isBusy} busyText="Checking …">
+        <Button
+          type="submit"
+          look="primary"
+          disabled={batch.missing.length > 0}
+          isBusy={isBusy}
+          busyText="Checking …"
+        >
           Mark as checked
         </Button>
       </div>

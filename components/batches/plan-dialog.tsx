@@ -29,7 +29,12 @@ export function PlanDialog({ solutionName, makeOn, needs }: PlanDialogProps) {
       <Button look="primary" onClick={() => setOpen(true)} aria-label={`Plan batch of ${solutionName}`}>
         Plan batch
       </Button>
-      <Dialog title={`Plan ${solutionName}`} description="The sheet is worked out from what stands on the shelves now." isOpen={isOpen} onOpenChange={setOpen}>
+      <Dialog
+        title={`Plan ${solutionName}`}
+        description="The sheet is worked out from what stands on the shelves now."
+        isOpen={isOpen}
+        onOpenChange={setOpen}
+      >
         <PlanForm makeOn={makeOn} needs={needs} />
       </Dialog>
     </>
@@ -39,13 +44,16 @@ export function PlanDialog({ solutionName, makeOn, needs }: PlanDialogProps) {
 function PlanForm({ makeOn, needs }: Omit<PlanDialogProps, 'solutionName'>) {
   const router = useRouter();
   const client = useQueryClient();
-  const [chosen, setChosen] = useState<ReadonlySet<string>>(() => new Set(needs.map(({ requestId }) => requestId)));
+  const [chosen, setChosen] = useState<ReadonlySet<string>>(
+    () => new Set(needs.map(({ requestId }) => requestId)),
+  );
   const [day, setDay] = useState(makeOn);
   const [volumeMl, setVolumeMl] = useState('');
   const [key, setKey] = useState(newIdempotencyKey);
   const [problem, setProblem] = useState<ApiProblem | null>(null);
   const [isBusy, setBusy] = useState(false);
-  const errorOf = (field: string) => problem?.errors.find(({ pointer }) => pointer.startsWith(`#/${field}`))?.detail;
+  const errorOf = (field: string) =>
+    problem?.errors.find(({ pointer }) => pointer.startsWith(`#/${field}`))?.detail;
   const wanted = needs.filter(({ requestId }) => chosen.has(requestId));
   const openMl = wanted.reduce((sum, need) => sum + need.openMl, 0);
 
@@ -76,7 +84,11 @@ function PlanForm({ makeOn, needs }: Omit<PlanDialogProps, 'solutionName'>) {
 
   return (
     <form onSubmit={(event) => void plan(event)} noValidate className="grid gap-4">
-      {problem && problem.errors.length === 0 && <Alert tone="stop" title={problem.title}>{problem.message}</Alert>}
+      {problem && problem.errors.length === 0 && (
+        <Alert tone="stop" title={problem.title}>
+          {problem.message}
+        </Alert>
+      )}
       <fieldset>
         <legend className="mb-1 font-semibold">For</legend>
         {needs.map((need) => (
@@ -89,9 +101,21 @@ function PlanForm({ makeOn, needs }: Omit<PlanDialogProps, 'solutionName'>) {
             onChange={() => toggle(need.requestId)}
           />
         ))}
-        {errorOf('requestIds') && <p role="alert" className="text-sm font-semibold text-signal">▲ {errorOf('requestIds')}</p>}
+        {errorOf('requestIds') && (
+          <p role="alert" className="text-sm font-semibold text-signal">
+            ▲ {errorOf('requestIds')}
+          </p>
+        )}
       </fieldset>
-      <TextInput id="make-on" label="Make on" type="date" value={day} onChange={(event) => setDay(event.target.value)} error={errorOf('makeOn')} className="w-52" />
+      <TextInput
+        id="make-on"
+        label="Make on"
+        type="date"
+        value={day}
+        onChange={(event) => setDay(event.target.value)}
+        error={errorOf('makeOn')}
+        className="w-52"
+      />
       <NumberInput
         id="plan-volume"
         label="Volume"

@@ -26,14 +26,19 @@ interface ProposalsProps {
 /** What is still to be planned, day by day, with the day it is best made on. */
 export function Proposals({ proposals, late, saved, today, mayWrite }: ProposalsProps) {
   if (proposals.length === 0 && late.length === 0) {
-    return <EmptyState title="Everything agreed is planned">What agreed requests need comes here until a batch is planned for it.</EmptyState>;
+    return (
+      <EmptyState title="Everything agreed is planned">
+        What agreed requests need comes here until a batch is planned for it.
+      </EmptyState>
+    );
   }
   const days = [...new Set(proposals.map(({ makeOn }) => makeOn))];
   return (
     <div className="grid gap-6">
       {saved > 0 && (
         <p>
-          {proposals.length} {proposals.length === 1 ? 'batch serves' : 'batches serve'} what {proposals.length + saved} would make one by one: {saved} saved.
+          {proposals.length} {proposals.length === 1 ? 'batch serves' : 'batches serve'} what{' '}
+          {proposals.length + saved} would make one by one: {saved} saved.
         </p>
       )}
       <MakeWindows proposals={proposals} today={today} />
@@ -46,14 +51,20 @@ export function Proposals({ proposals, late, saved, today, mayWrite }: Proposals
             {proposals
               .filter(({ makeOn }) => makeOn === day)
               .map((proposal) => (
-                <ProposalLine key={`${proposal.solutionId}${proposal.makeOn}`} proposal={proposal} mayWrite={mayWrite} />
+                <ProposalLine
+                  key={`${proposal.solutionId}${proposal.makeOn}`}
+                  proposal={proposal}
+                  mayWrite={mayWrite}
+                />
               ))}
           </ul>
         </section>
       ))}
       {late.length > 0 && (
         <section aria-labelledby="too-late">
-          <h3 id="too-late" className="border-b-2 border-signal pb-1 text-base text-signal">▲ Too late to make</h3>
+          <h3 id="too-late" className="border-b-2 border-signal pb-1 text-base text-signal">
+            ▲ Too late to make
+          </h3>
           <ul>
             {late.map(({ id, solutionName, requestCode, session, startsAt }) => (
               <li key={id} className="border-b py-2">
@@ -76,7 +87,8 @@ function ProposalLine({ proposal, mayWrite }: { readonly proposal: Proposal; rea
           {solutionName}: <Amount value={volumeMl} unit="mL" />
         </p>
         <p className="text-sm text-soft">
-          For {needs.map(({ requestCode, session }) => `${requestCode} (${session})`).join(', ')}. Any day from <Moment at={notBefore} style="short-day" /> to <Moment at={notAfter} style="short-day" />.
+          For {needs.map(({ requestCode, session }) => `${requestCode} (${session})`).join(', ')}. Any day
+          from <Moment at={notBefore} style="short-day" /> to <Moment at={notAfter} style="short-day" />.
         </p>
       </div>
       {mayWrite && <PlanDialog solutionName={solutionName} makeOn={makeOn} needs={needs} />}

@@ -5,7 +5,17 @@ import { classNames } from '../ui/class-names';
 const QUIET_ZONE = 4;
 
 /** A QR code (error level M) drawn in black on white with its quiet zone; `sizeMm` is the whole square. */
-export function QrSquare({ text, label, sizeMm, className }: { readonly text: string; readonly label: string; readonly sizeMm: number; readonly className?: string }) {
+export function QrSquare({
+  text,
+  label,
+  sizeMm,
+  className,
+}: {
+  readonly text: string;
+  readonly label: string;
+  readonly sizeMm: number;
+  readonly className?: string;
+}) {
   const { modules } = create(text, { errorCorrectionLevel: 'M' });
   const side = modules.size + 2 * QUIET_ZONE;
   const dark = Array.from(modules.data).flatMap((bit, index) => {

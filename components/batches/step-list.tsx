@@ -26,7 +26,11 @@ export function StepList({ batch, mayWrite }: { readonly batch: Batch; readonly 
     <div className="space-y-5 print:space-y-2">
       {groups.map(({ kind, steps }) => (
         <section key={kind} aria-label={KINDS[kind]}>
-          <h3 className={classNames('mb-1 break-after-avoid text-base', kind === 'condition' && 'text-amber')}>{KINDS[kind]}</h3>
+          <h3
+            className={classNames('mb-1 break-after-avoid text-base', kind === 'condition' && 'text-amber')}
+          >
+            {KINDS[kind]}
+          </h3>
           <ol>
             {steps.map((step, index) => (
               <Step key={step.id} batch={batch} step={step} number={index + 1} isEditable={isEditable} />
@@ -38,7 +42,17 @@ export function StepList({ batch, mayWrite }: { readonly batch: Batch; readonly 
   );
 }
 
-function Step({ batch, step, number, isEditable }: { readonly batch: Batch; readonly step: BatchStep; readonly number: number; readonly isEditable: boolean }) {
+function Step({
+  batch,
+  step,
+  number,
+  isEditable,
+}: {
+  readonly batch: Batch;
+  readonly step: BatchStep;
+  readonly number: number;
+  readonly isEditable: boolean;
+}) {
   const change = useBatchChange(batch.id);
   const [isBusy, setBusy] = useState(false);
   const isDone = step.doneAt !== null;
@@ -46,7 +60,9 @@ function Step({ batch, step, number, isEditable }: { readonly batch: Batch; read
   const tick = async (next: boolean) => {
     setBusy(true);
     try {
-      await change(() => callApi(batchEndpoints.tick, { params: { id: batch.id, stepId: step.id }, body: { isDone: next } }));
+      await change(() =>
+        callApi(batchEndpoints.tick, { params: { id: batch.id, stepId: step.id }, body: { isDone: next } }),
+      );
     } catch (error) {
       if (!(error instanceof ApiProblem)) throw error;
       toast.error(error.message);
@@ -56,7 +72,7 @@ function Step({ batch, step, number, isEditable }: { readonly batch: Batch; read
   };
 
   return (
-    <li className="flex items-start gap-3 border-b py-1 break-inside-avoid print:py-0">
+    <li className="flex break-inside-avoid items-start gap-3 border-b py-1 print:py-0">
       <span aria-hidden className="w-6 pt-2.5 text-right font-mono text-sm text-soft print:pt-1.5">
         {number}
       </span>
@@ -68,10 +84,15 @@ function Step({ batch, step, number, isEditable }: { readonly batch: Batch; read
         onChange={(event) => void tick(event.target.checked)}
         className="mt-2 size-7 shrink-0 accent-verdigris print:mt-1.5 print:size-4"
       />
-      <label htmlFor={`step-${step.id}`} className={classNames('min-h-11 flex-1 py-2 print:min-h-0 print:py-1', isDone && 'text-soft')}>
+      <label
+        htmlFor={`step-${step.id}`}
+        className={classNames('min-h-11 flex-1 py-2 print:min-h-0 print:py-1', isDone && 'text-soft')}
+      >
         {step.text}
       </label>
-      {step.doneBy && <span className="hidden py-2 text-sm whitespace-nowrap text-soft sm:block">{step.doneBy}</span>}
+      {step.doneBy && (
+        <span className="hidden py-2 text-sm whitespace-nowrap text-soft sm:block">{step.doneBy}</span>
+      )}
     </li>
   );
 }

@@ -16,13 +16,24 @@ import { classNames } from '../ui/class-names';
 import { NumberInput, TextInput } from '../ui/inputs';
 
 /** What to take, from which lot, how much, and the field for what was really taken. */
-export function TakeLines({ batch, mayWrite }: { readonly batch: Batch; readonly mayWrite: boolean }) {
+export function TakeLines({
+  batch,
+  mayWrite,
+  maySeeStock,
+}: {
+  readonly batch: Batch;
+  readonly mayWrite: boolean;
+  readonly maySeeStock: boolean;
+}) {
   return (
     <ol>
       {batch.takes.map((take) => (
-        <li key={take.id} className="grid gap-x-6 gap-y-2 border-b border-line py-3 first:pt-0 break-inside-avoid md:grid-cols-[1.5rem_1.4fr_1fr_1.3fr] print:grid-cols-[1.5rem_1.4fr_1fr_1.3fr]">
+        <li
+          key={take.id}
+          className="grid break-inside-avoid gap-x-6 gap-y-2 border-b border-line py-3 first:pt-0 md:grid-cols-[1.5rem_1.4fr_1fr_1.3fr] print:grid-cols-[1.5rem_1.4fr_1fr_1.3fr]"
+        >
           <span className="font-mono text-soft max-md:sr-only print:not-sr-only">{take.position}</span>
-          <TakeIdentity take={take} />
+          <TakeIdentity take={take} maySeeStock={maySeeStock} />
           <div>
             <p className="font-mono text-xl font-bold">{take.targetText}</p>
             <p className="font-mono text-sm text-soft">allowed {take.rangeText}</p>
@@ -35,7 +46,7 @@ export function TakeLines({ batch, mayWrite }: { readonly batch: Batch; readonly
   );
 }
 
-function TakeIdentity({ take }: { readonly take: BatchTake }) {
+function TakeIdentity({ take, maySeeStock }: { readonly take: BatchTake; readonly maySeeStock: boolean }) {
   return (
     <div className="min-w-0">
       <p className="font-semibold">
@@ -43,9 +54,13 @@ function TakeIdentity({ take }: { readonly take: BatchTake }) {
       </p>
       <p>
         Lot{' '}
-        <Link href={`/shelves/lots/${take.lotId}` as Route} className="font-mono">
-          {take.lotCode}
-        </Link>
+        {maySeeStock ? (
+          <Link href={`/shelves/lots/${take.lotId}` as Route} className="font-mono">
+            {take.lotCode}
+          </Link>
+        ) : (
+          <span className="font-mono">{take.lotCode}</span>
+        )}
         , {take.place}
       </p>
       <p className="text-sm text-soft">{take.note}</p>
@@ -60,7 +75,15 @@ const VERDICTS = {
   remake: { mark: '▲', words: 'far outside what is allowed', look: 'text-signal' },
 } as const;
 
-function TakeEntry({ batch, take, mayWrite }: { readonly batch: Batch; readonly take: BatchTake; readonly mayWrite: boolean }) {
+function TakeEntry({
+  batch,
+  take,
+  mayWrite,
+}: {
+  readonly batch: Batch;
+  readonly take: BatchTake;
+  readonly mayWrite: boolean;
+}) {
   const change = useBatchChange(batch.id);
   const [amount, setAmount] = useState(take.actual === null ? '' : String(take.actual));
   const [explanation, setExplanation] = useState(take.explanation ?? '');
@@ -77,7 +100,13 @@ function TakeEntry({ batch, take, mayWrite }: { readonly batch: Batch; readonly 
     setProblem(null);
     try {
       const body = { amount, explanation, version: take.version };
-      await change(() => callApi(batchEndpoints.take, { params: { id: batch.id, takeId: take.id }, body, idempotencyKey: key }));
+      await change(() =>
+        callApi(batchEndpoints.take, {
+          params: { id: batch.id, takeId: take.id },
+          body,
+          idempotencyKey: key,
+        }),
+      );
     } catch (error) {
       if (!(error instanceof ApiProblem)) throw error;
       setProblem(error);
@@ -89,8 +118,11 @@ function TakeEntry({ batch, take, mayWrite }: { readonly batch: Batch; readonly 
 
   const entered = take.verdict && (
     <p className={classNames('text-sm font-semibold', VERDICTS[take.verdict].look)}>
-      {VERDICTS[take.verdict].mark} <span className="font-mono">{`${take.actual} ${take.unit}`}</span> taken, {VERDICTS[take.verdict].words}
-      {take.enteredBy && <span className="block font-normal text-soft">{`entered by ${take.enteredBy}`}</span>}
+      {VERDICTS[take.verdict].mark} <span className="font-mono">{`${take.actual} ${take.unit}`}</span> taken,{' '}
+      {VERDICTS[take.verdict].words}
+      {take.enteredBy && (
+        <span className="block font-normal text-soft">{`entered by ${take.enteredBy}`}</span>
+      )}
       {take.explanation && <span className="block font-normal text-soft">“{take.explanation}”</span>}
     </p>
   );
@@ -98,8 +130,14 @@ function TakeEntry({ batch, take, mayWrite }: { readonly batch: Batch; readonly 
   if (!isEditable) {
     return (
       <div>
-        {entered || <p className="text-soft print:hidden">{batch.state === 'planned' ? 'Entered when it is made' : 'Nothing entered'}</p>}
-        {take.actual === null && <p className="mt-1 hidden border-b border-line pt-5 text-sm print:block">Taken, {take.unit}</p>}
+        {entered || (
+          <p className="text-soft print:hidden">
+            {batch.state === 'planned' ? 'Entered when it is made' : 'Nothing entered'}
+          </p>
+        )}
+        {take.actual === null && (
+          <p className="mt-1 hidden border-b border-line pt-5 text-sm print:block">Taken, {take.unit}</p>
+        )}
       </div>
     );
   }
@@ -115,7 +153,13 @@ function TakeEntry({ batch, take, mayWrite }: { readonly batch: Batch; readonly 
           error={errorOf('amount')}
           className="w-44"
         />
-        <Button type="submit" isBusy={isBusy} busyText="Saving …" className="no-print" aria-label={`Save line ${take.position}`}>
+        <Button
+          type="submit"
+          isBusy={isBusy}
+          busyText="Saving …"
+          className="no-print"
+          aria-label={`Save line ${take.position}`}
+        >
           Save
         </Button>
       </div>

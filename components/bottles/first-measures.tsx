@@ -11,14 +11,20 @@ const ALWAYS: readonly (readonly [saidBy: RegExp | null, text: string])[] = [
 ];
 
 /** What to do first, from the response statements of this solution, then what always holds. */
-export function FirstMeasures({ precautions }: { readonly precautions: BottleLabel['classification']['precautions'] }) {
+export function FirstMeasures({
+  precautions,
+}: {
+  readonly precautions: BottleLabel['classification']['precautions'];
+}) {
   const codes = precautions.filter((code) => code.startsWith('P3'));
   const responses = codes.map(precautionText);
   const further = ALWAYS.filter(([saidBy]) => saidBy === null || !codes.some((code) => saidBy.test(code)));
   return (
     <ol className="list-decimal space-y-1.5 pl-6 text-lg">
       {responses.map((text) => (
-        <li key={text} className="font-semibold">{text}</li>
+        <li key={text} className="font-semibold">
+          {text}
+        </li>
       ))}
       {further.map(([, text]) => (
         <li key={text}>{text}</li>

@@ -16,11 +16,16 @@ export function HazardBlock({ classification }: { readonly classification: Bottl
       )}
       <div className="min-w-0 flex-1">
         {signalWord && <p className="text-lg font-bold tracking-wide uppercase">{signalWord}</p>}
-        {hazards.length === 0 && incomplete.length === 0 && <p>By calculation no hazard class is reached at this strength. That is no proof that it is harmless.</p>}
+        {hazards.length === 0 && incomplete.length === 0 && (
+          <p>
+            By calculation no hazard class is reached at this strength. That is no proof that it is harmless.
+          </p>
+        )}
         <ul>
           {hazards.map(({ code, text, because }) => (
             <li key={code}>
-              <span className="font-mono text-sm">{code}</span> {text} <span className="text-sm text-soft">({because})</span>
+              <span className="font-mono text-sm">{code}</span> {text}{' '}
+              <span className="text-sm text-soft">({because})</span>
             </li>
           ))}
           {supplemental.map((code) => (
@@ -29,8 +34,14 @@ export function HazardBlock({ classification }: { readonly classification: Bottl
             </li>
           ))}
         </ul>
-        {precautions.length > 0 && <p className="mt-1 text-sm">{precautions.map(precautionText).join(' ')}</p>}
-        {incomplete.length > 0 && <p className="mt-1 font-semibold">Without hazard data: {incomplete.join(', ')}. Treat it as hazardous and read the data sheet.</p>}
+        {precautions.length > 0 && (
+          <p className="mt-1 text-sm">{precautions.map(precautionText).join(' ')}</p>
+        )}
+        {incomplete.length > 0 && (
+          <p className="mt-1 font-semibold">
+            Without hazard data: {incomplete.join(', ')}. Treat it as hazardous and read the data sheet.
+          </p>
+        )}
       </div>
     </div>
   );

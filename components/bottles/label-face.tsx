@@ -19,8 +19,16 @@ export function LabelFace({ label }: { readonly label: BottleLabel }) {
   const { signalWord, pictograms, hazards, precautions, supplemental, incomplete } = label.classification;
   const { pictogramMm, typeMm } = labelSizes(label.volumeMl, pictograms.length);
   return (
-    <div className="h-full overflow-hidden bg-white text-black" style={{ fontSize: `${typeMm}mm`, lineHeight: 1.2 }}>
-      <QrSquare text={label.address} label={`Opens what is known of ${label.bottleCode}`} sizeMm={QR_MM} className="float-right -mt-[1.5mm] -mr-[1.5mm]" />
+    <div
+      className="h-full overflow-hidden bg-white text-black"
+      style={{ fontSize: `${typeMm}mm`, lineHeight: 1.2 }}
+    >
+      <QrSquare
+        text={label.address}
+        label={`Opens what is known of ${label.bottleCode}`}
+        sizeMm={QR_MM}
+        className="float-right -mt-[1.5mm] -mr-[1.5mm]"
+      />
       <p className="font-bold" style={{ fontSize: '1.5em', lineHeight: 1.1 }}>
         {label.solutionName}
       </p>
@@ -37,12 +45,14 @@ export function LabelFace({ label }: { readonly label: BottleLabel }) {
           <span key={substanceId} className="mr-[1em]">
             {label.strengths.length > 1 ? `${name} ` : ''}
             {formatNumber(molarity, 4)}
-            {expandedUncertainty !== null && ` ± ${formatNumber(expandedUncertainty, 2)}`} mol/L as made (k = 2)
+            {expandedUncertainty !== null && ` ± ${formatNumber(expandedUncertainty, 2)}`} mol/L as made (k =
+            2)
           </span>
         ))}
       </p>
       <p className="font-bold">
-        <span className="font-mono">{label.bottleCode}</span> · {formatVolume(label.volumeMl)} · made {label.madeAt ? DAY.format(new Date(label.madeAt)) : '–'} · use by{' '}
+        <span className="font-mono">{label.bottleCode}</span> · {formatVolume(label.volumeMl)} · made{' '}
+        {label.madeAt ? DAY.format(new Date(label.madeAt)) : '–'} · use by{' '}
         {label.useBy ? DAY.format(new Date(label.useBy)) : '–'}
       </p>
       {pictograms.length > 0 && (
@@ -59,7 +69,9 @@ export function LabelFace({ label }: { readonly label: BottleLabel }) {
       )}
       <p className="font-semibold">
         {[...hazards.map(({ text }) => text), ...supplemental.map(statementText)].map(sentence).join(' ')}
-        {hazards.length === 0 && incomplete.length === 0 && 'By calculation no hazard class is reached; no proof that it is harmless.'}
+        {hazards.length === 0 &&
+          incomplete.length === 0 &&
+          'By calculation no hazard class is reached; no proof that it is harmless.'}
         {incomplete.length > 0 && ` Hazards not known for: ${incomplete.join(', ')}.`}
       </p>
       {precautions.length > 0 && <p>{precautions.map(precautionText).join(' ')}</p>}

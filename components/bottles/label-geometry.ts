@@ -11,10 +11,46 @@ export interface LabelGeometry {
 }
 
 export const PAPERS: Readonly<Record<string, LabelGeometry>> = {
-  'A4, 2 × 4': { paperWidthMm: 210, paperHeightMm: 297, rows: 4, columns: 2, topMm: 13, sideMm: 4.7, rowGapMm: 0, columnGapMm: 2.5 },
-  'A4, 2 × 2': { paperWidthMm: 210, paperHeightMm: 297, rows: 2, columns: 2, topMm: 4.5, sideMm: 5, rowGapMm: 0, columnGapMm: 1.6 },
-  'Letter, 2 × 3': { paperWidthMm: 215.9, paperHeightMm: 279.4, rows: 3, columns: 2, topMm: 12.7, sideMm: 4, rowGapMm: 0, columnGapMm: 4.8 },
-  'Roll, 102 × 76': { paperWidthMm: 102, paperHeightMm: 76, rows: 1, columns: 1, topMm: 2, sideMm: 2, rowGapMm: 0, columnGapMm: 0 },
+  'A4, 2 × 4': {
+    paperWidthMm: 210,
+    paperHeightMm: 297,
+    rows: 4,
+    columns: 2,
+    topMm: 13,
+    sideMm: 4.7,
+    rowGapMm: 0,
+    columnGapMm: 2.5,
+  },
+  'A4, 2 × 2': {
+    paperWidthMm: 210,
+    paperHeightMm: 297,
+    rows: 2,
+    columns: 2,
+    topMm: 4.5,
+    sideMm: 5,
+    rowGapMm: 0,
+    columnGapMm: 1.6,
+  },
+  'Letter, 2 × 3': {
+    paperWidthMm: 215.9,
+    paperHeightMm: 279.4,
+    rows: 3,
+    columns: 2,
+    topMm: 12.7,
+    sideMm: 4,
+    rowGapMm: 0,
+    columnGapMm: 4.8,
+  },
+  'Roll, 102 × 76': {
+    paperWidthMm: 102,
+    paperHeightMm: 76,
+    rows: 1,
+    columns: 1,
+    topMm: 2,
+    sideMm: 2,
+    rowGapMm: 0,
+    columnGapMm: 0,
+  },
 };
 
 export interface LabelPlace {

@@ -11,7 +11,12 @@ import { labelPlaces, PAPERS } from './label-geometry';
 import type { LabelGeometry } from './label-geometry';
 
 interface LabelSheetProps {
-  readonly labels: readonly { readonly bottleId: string; readonly code: string; readonly prints: number; readonly face: ReactNode }[];
+  readonly labels: readonly {
+    readonly bottleId: string;
+    readonly code: string;
+    readonly prints: number;
+    readonly face: ReactNode;
+  }[];
 }
 
 const FIELDS: readonly (readonly [key: keyof LabelGeometry, label: string, unit?: string])[] = [
@@ -60,9 +65,23 @@ export function LabelSheet({ labels }: LabelSheetProps) {
             ))}
           </Select>
           {FIELDS.map(([key, label, unit]) => (
-            <NumberInput key={key} id={`sheet-${key}`} label={label} unit={unit} value={typed[key] ?? String(geometry[key])} onChange={(event) => setTyped({ ...typed, [key]: event.target.value })} className="w-36" />
+            <NumberInput
+              key={key}
+              id={`sheet-${key}`}
+              label={label}
+              unit={unit}
+              value={typed[key] ?? String(geometry[key])}
+              onChange={(event) => setTyped({ ...typed, [key]: event.target.value })}
+              className="w-36"
+            />
           ))}
-          <NumberInput id="skip" label="Labels already used" value={skip} onChange={(event) => setSkip(event.target.value)} className="w-44" />
+          <NumberInput
+            id="skip"
+            label="Labels already used"
+            value={skip}
+            onChange={(event) => setSkip(event.target.value)}
+            className="w-44"
+          />
         </div>
         {places.length === 0 && <Alert tone="stop" title="These margins leave no room for a label" />}
         {overfull.length > 0 && (
@@ -87,7 +106,13 @@ export function LabelSheet({ labels }: LabelSheetProps) {
                   key={label.bottleId}
                   data-label={label.code}
                   className="absolute border border-dashed border-[#bbb] print:border-transparent"
-                  style={{ left: `${place.leftMm}mm`, top: `${place.topMm}mm`, width: `${place.widthMm}mm`, height: `${place.heightMm}mm`, padding: `${PADDING_MM}mm` }}
+                  style={{
+                    left: `${place.leftMm}mm`,
+                    top: `${place.topMm}mm`,
+                    width: `${place.widthMm}mm`,
+                    height: `${place.heightMm}mm`,
+                    padding: `${PADDING_MM}mm`,
+                  }}
                 >
                   {label.face}
                 </div>
@@ -106,7 +131,12 @@ function geometryOf(paper: string, typed: Partial<Record<keyof LabelGeometry, st
   const entries = Object.entries(typed).flatMap(([key, text]) => {
     const value = Number(text.replace(',', '.'));
     const isCount = key === 'rows' || key === 'columns';
-    const isGood = text.trim() !== '' && Number.isFinite(value) && value >= (isCount ? 1 : 0) && value <= 300 && (!isCount || value <= 30);
+    const isGood =
+      text.trim() !== '' &&
+      Number.isFinite(value) &&
+      value >= (isCount ? 1 : 0) &&
+      value <= 300 &&
+      (!isCount || value <= 30);
     return isGood ? [[key, isCount ? Math.floor(value) : value] as const] : [];
   });
   return { ...base, ...Object.fromEntries(entries) };
@@ -117,10 +147,12 @@ function useOverfull(layout: string) {
   const sheetRef = useRef<HTMLDivElement>(null);
   const [overfull, setOverfull] = useState<readonly string[]>([]);
   useLayoutEffect(() => {
-    const found = [...(sheetRef.current?.querySelectorAll<HTMLElement>('[data-label]') ?? [])].filter((label) => {
-      const face = label.firstElementChild;
-      return face !== null && face.scrollHeight > face.clientHeight + 1;
-    });
+    const found = [...(sheetRef.current?.querySelectorAll<HTMLElement>('[data-label]') ?? [])].filter(
+      (label) => {
+        const face = label.firstElementChild;
+        return face !== null && face.scrollHeight > face.clientHeight + 1;
+      },
+    );
     setOverfull(found.map((label) => label.dataset.label ?? ''));
   }, [layout]);
   return { sheetRef, overfull };
@@ -137,7 +169,10 @@ function PrintButton({ labels }: LabelSheetProps) {
     setBusy(true);
     setProblem(null);
     try {
-      await callApi(bottleEndpoints.print, { body: { bottleIds: labels.map(({ bottleId }) => bottleId), reason }, idempotencyKey: key });
+      await callApi(bottleEndpoints.print, {
+        body: { bottleIds: labels.map(({ bottleId }) => bottleId), reason },
+        idempotencyKey: key,
+      });
       setKey(newIdempotencyKey());
       setPrinted(true);
       setReason('');

@@ -19,9 +19,17 @@ export function BottleList() {
       endpoint={bottleEndpoints.list}
       label="Bottles"
       searchLabel="Bottle code"
-      empty={<EmptyState title="No bottle yet">Bottles come here when a checked batch is divided.</EmptyState>}
+      empty={
+        <EmptyState title="No bottle yet">Bottles come here when a checked batch is divided.</EmptyState>
+      }
       filters={(state, change) => (
-        <Select id="bottle-state" label="State" value={state.state ?? ''} onChange={(event) => change({ state: event.target.value })} className="w-44">
+        <Select
+          id="bottle-state"
+          label="State"
+          value={state.state ?? ''}
+          onChange={(event) => change({ state: event.target.value })}
+          className="w-44"
+        >
           <option value="">any</option>
           {BOTTLE_STATES.map((name) => (
             <option key={name} value={name}>
@@ -41,10 +49,26 @@ export function BottleList() {
             </Link>
           ),
         },
-        { id: 'volume', header: 'Holds', sortKey: 'volumeMl', isNumeric: true, cell: ({ volumeMl }) => <Amount value={volumeMl} unit="mL" /> },
+        {
+          id: 'volume',
+          header: 'Holds',
+          sortKey: 'volumeMl',
+          isNumeric: true,
+          cell: ({ volumeMl }) => <Amount value={volumeMl} unit="mL" />,
+        },
         { id: 'for', header: 'For', cell: ({ requestCode }) => requestCode ?? 'the shelf' },
-        { id: 'useBy', header: 'Use by', cell: ({ useBy }) => (useBy ? <Moment at={useBy} style="short-day" /> : '–') },
-        { id: 'state', header: 'State', sortKey: 'state', cell: ({ state, isHeld }) => (isHeld ? <StateMark state="held" words="on hold" /> : <StateMark state={state} />) },
+        {
+          id: 'useBy',
+          header: 'Use by',
+          cell: ({ useBy }) => (useBy ? <Moment at={useBy} style="short-day" /> : '–'),
+        },
+        {
+          id: 'state',
+          header: 'State',
+          sortKey: 'state',
+          cell: ({ state, isHeld }) =>
+            isHeld ? <StateMark state="held" words="on hold" /> : <StateMark state={state} />,
+        },
       ]}
     />
   );

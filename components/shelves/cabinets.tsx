@@ -28,11 +28,12 @@ export function Cabinets({ shelves }: { readonly shelves: readonly Shelf[] }) {
 
 function Cabinet({ shelf }: { readonly shelf: Shelf }) {
   return (
-    <section aria-label={shelf.name} className="sheet mb-5 border-2 border-line break-inside-avoid">
+    <section aria-label={shelf.name} className="sheet mb-5 break-inside-avoid border-2 border-line">
       <h3 className="flex flex-wrap items-baseline justify-between gap-x-3 border-b-2 border-line px-3 py-1.5 text-base">
         {shelf.name}
         <span className="text-sm font-normal text-soft">
-          {shelf.storageGroup.replaceAll('_', ' ')} · {shelf.lots.length} {shelf.lots.length === 1 ? 'lot' : 'lots'}
+          {shelf.storageGroup.replaceAll('_', ' ')} · {shelf.lots.length}{' '}
+          {shelf.lots.length === 1 ? 'lot' : 'lots'}
         </span>
       </h3>
       {shelf.lots.length === 0 ? (
@@ -58,7 +59,10 @@ function noteOf(lot: StandingLot): string | null {
 function Standing({ lot }: { readonly lot: StandingLot }) {
   const note = noteOf(lot);
   return (
-    <Link href={`/shelves/lots/${lot.id}` as Route} className="flex h-full flex-col items-center justify-end rounded px-1 py-1 text-center text-ink no-underline hover:bg-sunken">
+    <Link
+      href={`/shelves/lots/${lot.id}` as Route}
+      className="flex h-full flex-col items-center justify-end rounded px-1 py-1 text-center text-ink no-underline hover:bg-sunken"
+    >
       <BottleDrawing fill={lot.fill} isStopped={lot.isHeld || lot.isExpired} className="h-14" />
       <span className="mt-1 max-w-full overflow-hidden text-xs leading-tight font-semibold text-ellipsis">
         {lot.formula ? <Formula id={lot.formula} name={lot.substanceName} /> : lot.substanceName}

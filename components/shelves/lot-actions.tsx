@@ -24,7 +24,15 @@ const KINDS: readonly (readonly [kind: Kind, words: string, hint: string])[] = [
 ];
 
 /** What can be done with a lot by hand. */
-export function LotActions({ lot, mayWrite, mayHold }: { readonly lot: Lot; readonly mayWrite: boolean; readonly mayHold: boolean }) {
+export function LotActions({
+  lot,
+  mayWrite,
+  mayHold,
+}: {
+  readonly lot: Lot;
+  readonly mayWrite: boolean;
+  readonly mayHold: boolean;
+}) {
   const router = useRouter();
   const [isOpen, setOpen] = useState(false);
   const hold = (name: 'hold' | 'lift') => async (reason: string) => {
@@ -35,12 +43,28 @@ export function LotActions({ lot, mayWrite, mayHold }: { readonly lot: Lot; read
     <>
       {mayWrite && <Button onClick={() => setOpen(true)}>Correct the stock</Button>}
       {mayHold && lot.heldReason === null && (
-        <ReasonDialog label="Put on hold" look="danger" title={`Put lot ${lot.code} on hold`} description="Nothing may be taken from it, and nothing made from it may be bottled or handed over, until the hold is lifted." onConfirm={hold('hold')} />
+        <ReasonDialog
+          label="Put on hold"
+          look="danger"
+          title={`Put lot ${lot.code} on hold`}
+          description="Nothing may be taken from it, and nothing made from it may be bottled or handed over, until the hold is lifted."
+          onConfirm={hold('hold')}
+        />
       )}
       {mayHold && lot.heldReason !== null && (
-        <ReasonDialog label="Lift the hold" title={`Lift the hold on lot ${lot.code}`} description="It and all that was made from it may be used again." onConfirm={hold('lift')} />
+        <ReasonDialog
+          label="Lift the hold"
+          title={`Lift the hold on lot ${lot.code}`}
+          description="It and all that was made from it may be used again."
+          onConfirm={hold('lift')}
+        />
       )}
-      <Dialog title={`Correct the stock of ${lot.code}`} description="The ledger is never edited; a new line says what changed and why." isOpen={isOpen} onOpenChange={setOpen}>
+      <Dialog
+        title={`Correct the stock of ${lot.code}`}
+        description="The ledger is never edited; a new line says what changed and why."
+        isOpen={isOpen}
+        onOpenChange={setOpen}
+      >
         <MovementForm lot={lot} onDone={() => setOpen(false)} />
       </Dialog>
     </>
@@ -64,7 +88,10 @@ function MovementForm({ lot, onDone }: { readonly lot: Lot; readonly onDone: () 
     setBusy(true);
     setProblem(null);
     try {
-      const line = await callApi(movementEndpoints.create, { body: { kind, lotId: lot.id, amount, reason }, idempotencyKey: key });
+      const line = await callApi(movementEndpoints.create, {
+        body: { kind, lotId: lot.id, amount, reason },
+        idempotencyKey: key,
+      });
       toast(`${lot.code} now holds ${line.balanceAfter} ${line.unit}`);
       void client.invalidateQueries({ queryKey: lotKeys.ledger() });
       onDone();
@@ -81,15 +108,34 @@ function MovementForm({ lot, onDone }: { readonly lot: Lot; readonly onDone: () 
   return (
     <form onSubmit={(event) => void save(event)} noValidate className="grid gap-4">
       {problem && problem.errors.length === 0 && <Alert tone="stop" title={problem.message} />}
-      <Select id="movement-what" label="What happened" value={kind} onChange={(event) => setKind(event.target.value as Kind)}>
+      <Select
+        id="movement-what"
+        label="What happened"
+        value={kind}
+        onChange={(event) => setKind(event.target.value as Kind)}
+      >
         {KINDS.map(([name, words]) => (
           <option key={name} value={name}>
             {words}
           </option>
         ))}
       </Select>
-      <NumberInput id="movement-amount" label="Amount" unit={lot.unit} hint={`${hint} The ledger says ${lot.balance} ${lot.unit}.`} value={amount} onChange={(event) => setAmount(event.target.value)} error={errorOf('amount')} />
-      <TextArea id="movement-reason" label="Reason" value={reason} onChange={(event) => setReason(event.target.value)} error={errorOf('reason')} />
+      <NumberInput
+        id="movement-amount"
+        label="Amount"
+        unit={lot.unit}
+        hint={`${hint} The ledger says ${lot.balance} ${lot.unit}.`}
+        value={amount}
+        onChange={(event) => setAmount(event.target.value)}
+        error={errorOf('amount')}
+      />
+      <TextArea
+        id="movement-reason"
+        label="Reason"
+        value={reason}
+        onChange={(event) => setReason(event.target.value)}
+        error={errorOf('reason')}
+      />
       <Button type="submit" look="primary" isBusy={isBusy} busyText="Writing …">
         Write the line
       </Button>

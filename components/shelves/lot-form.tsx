@@ -5,7 +5,7 @@ import { useQueryClient } from '@tanstack/react-query';
 import { useRouter } from 'next/navigation';
 import type { Route } from 'next';
 import { useState } from 'react';
-import { useForm } from 'react-hook-form';
+import { useForm, useWatch } from 'react-hook-form';
 import { ApiProblem, callApi, newIdempotencyKey } from '@/lib/client/api';
 import { showProblem } from '@/lib/client/forms';
 import { lotKeys } from '@/lib/client/lots';
@@ -16,12 +16,26 @@ import { Button } from '../ui/button';
 import { NumberInput, Select, TextArea, TextInput } from '../ui/inputs';
 
 interface LotFormProps {
-  readonly substances: readonly { readonly id: string; readonly name: string; readonly unit: string; readonly storageGroup: string }[];
+  readonly substances: readonly {
+    readonly id: string;
+    readonly name: string;
+    readonly unit: string;
+    readonly storageGroup: string;
+  }[];
   readonly places: readonly Place[];
   readonly today: string;
 }
 
-const FIELDS = ['substanceId', 'lotNumber', 'assayPercent', 'amount', 'receivedOn', 'expiresOn', 'placeId', 'reason'];
+const FIELDS = [
+  'substanceId',
+  'lotNumber',
+  'assayPercent',
+  'amount',
+  'receivedOn',
+  'expiresOn',
+  'placeId',
+  'reason',
+];
 const blankToNull = (value: unknown) => (value === '' ? null : value);
 
 /** Puts a lot on the shelf by hand. */
@@ -30,14 +44,27 @@ export function LotForm({ substances, places, today }: LotFormProps) {
   const client = useQueryClient();
   const [key, setKey] = useState(newIdempotencyKey);
   const [general, setGeneral] = useState<string | null>(null);
-  const { register, handleSubmit, setError, watch, formState } = useForm({
+  const { register, handleSubmit, setError, control, formState } = useForm({
     resolver: zodResolver(lotCreateSchema),
-    defaultValues: { substanceId: '', lotNumber: '', assayPercent: '', amount: '', receivedOn: today, expiresOn: null, placeId: '', reason: 'Received' },
+    defaultValues: {
+      substanceId: '',
+      lotNumber: '',
+      assayPercent: '',
+      amount: '',
+      receivedOn: today,
+      expiresOn: null,
+      placeId: '',
+      reason: 'Received',
+    },
   });
   const { errors, isSubmitting } = formState;
-  const substance = substances.find(({ id }) => id === watch('substanceId'));
-  const fitting = [...places].sort((a, b) => Number(b.storageGroup === substance?.storageGroup) - Number(a.storageGroup === substance?.storageGroup));
-  const chosen = places.find(({ id }) => id === watch('placeId'));
+  const [substanceId, placeId] = useWatch({ control, name: ['substanceId', 'placeId'] });
+  const substance = substances.find(({ id }) => id === substanceId);
+  const fitting = [...places].sort(
+    (a, b) =>
+      Number(b.storageGroup === substance?.storageGroup) - Number(a.storageGroup === substance?.storageGroup),
+  );
+  const chosen = places.find(({ id }) => id === placeId);
   const isMisplaced = substance && chosen && chosen.storageGroup !== substance.storageGroup;
 
   const save = handleSubmit(async (body) => {
@@ -55,7 +82,12 @@ export function LotForm({ substances, places, today }: LotFormProps) {
   return (
     <form onSubmit={(event) => void save(event)} noValidate className="grid max-w-2xl gap-4">
       {general && <Alert tone="stop" title={general} />}
-      <Select id="substanceId" label="Substance" {...register('substanceId')} error={errors.substanceId && 'Choose the substance.'}>
+      <Select
+        id="substanceId"
+        label="Substance"
+        {...register('substanceId')}
+        error={errors.substanceId && 'Choose the substance.'}
+      >
         <option value="">choose …</option>
         {substances.map(({ id, name }) => (
           <option key={id} value={id}>
@@ -64,12 +96,49 @@ export function LotForm({ substances, places, today }: LotFormProps) {
         ))}
       </Select>
       <div className="grid gap-4 sm:grid-cols-2">
-        <NumberInput id="amount" label="Amount" unit={substance?.unit} {...register('amount')} error={errors.amount?.message} />
-        <TextInput id="lotNumber" label="Lot number" hint="As printed on the pack." {...register('lotNumber')} error={errors.lotNumber?.message} />
-        <NumberInput id="assayPercent" label="Assay" unit="%" hint="From the certificate; blank where none came." {...register('assayPercent')} error={errors.assayPercent?.message} />
-        <TextInput id="receivedOn" label="Received on" type="date" {...register('receivedOn')} error={errors.receivedOn?.message} />
-        <TextInput id="expiresOn" label="Expires on" type="date" hint="Blank where it does not." {...register('expiresOn', { setValueAs: blankToNull })} error={errors.expiresOn?.message} />
-        <Select id="placeId" label="Place" {...register('placeId')} error={errors.placeId && 'Choose where it stands.'}>
+        <NumberInput
+          id="amount"
+          label="Amount"
+          unit={substance?.unit}
+          {...register('amount')}
+          error={errors.amount?.message}
+        />
+        <TextInput
+          id="lotNumber"
+          label="Lot number"
+          hint="As printed on the pack."
+          {...register('lotNumber')}
+          error={errors.lotNumber?.message}
+        />
+        <NumberInput
+          id="assayPercent"
+          label="Assay"
+          unit="%"
+          hint="From the certificate; blank where none came."
+          {...register('assayPercent')}
+          error={errors.assayPercent?.message}
+        />
+        <TextInput
+          id="receivedOn"
+          label="Received on"
+          type="date"
+          {...register('receivedOn')}
+          error={errors.receivedOn?.message}
+        />
+        <TextInput
+          id="expiresOn"
+          label="Expires on"
+          type="date"
+          hint="Blank where it does not."
+          {...register('expiresOn', { setValueAs: blankToNull })}
+          error={errors.expiresOn?.message}
+        />
+        <Select
+          id="placeId"
+          label="Place"
+          {...register('placeId')}
+          error={errors.placeId && 'Choose where it stands.'}
+        >
           <option value="">choose …</option>
           {fitting.map(({ id, name, roomName, storageGroup }) => (
             <option key={id} value={id}>
@@ -80,7 +149,8 @@ export function LotForm({ substances, places, today }: LotFormProps) {
       </div>
       {isMisplaced && (
         <Alert tone="attention" title={`${chosen.name} is for ${chosen.storageGroup.replaceAll('_', ' ')}`}>
-          {substance.name} belongs with {substance.storageGroup.replaceAll('_', ' ')}. Read the data sheet before it stands there.
+          {substance.name} belongs with {substance.storageGroup.replaceAll('_', ' ')}. Read the data sheet
+          before it stands there.
         </Alert>
       )}
       <TextArea id="reason" label="Reason" {...register('reason')} error={errors.reason?.message} />

@@ -13,7 +13,9 @@ interface Mark {
 }
 
 function marksOf(lot: Lot, today: string): Mark[] {
-  const held = lot.story.filter(({ action }) => action === 'put on hold').map(({ at }) => ({ day: at.slice(0, 10), words: 'held', isStop: true }));
+  const held = lot.story
+    .filter(({ action }) => action === 'put on hold')
+    .map(({ at }) => ({ day: at.slice(0, 10), words: 'held', isStop: true }));
   return [
     { day: lot.receivedOn, words: 'received', isStop: false },
     ...(lot.openedOn ? [{ day: lot.openedOn, words: 'opened', isStop: false }] : []),
@@ -35,14 +37,23 @@ export function LotLife({ lot, today }: { readonly lot: Lot; readonly today: str
     <figure>
       <svg viewBox={`0 0 ${WIDTH} 96`} aria-hidden className="hidden w-full sm:block">
         <path d={`M${EDGE} ${LINE_Y}H${WIDTH - EDGE}`} stroke="var(--rule)" strokeWidth="6" />
-        <path d={`M${EDGE} ${LINE_Y}H${xOf(isoDayOf(Math.min(last, Math.max(first, dayNumber(today)))))}`} stroke="var(--verdigris)" strokeWidth="6" />
+        <path
+          d={`M${EDGE} ${LINE_Y}H${xOf(isoDayOf(Math.min(last, Math.max(first, dayNumber(today)))))}`}
+          stroke="var(--verdigris)"
+          strokeWidth="6"
+        />
         {marks.map(({ day, words, isStop }, index) => {
           const x = xOf(day);
           const isAbove = index % 2 === 0;
           return (
             <g key={`${day}${words}${index}`} fill={isStop ? 'var(--signal)' : 'var(--ink)'}>
               <circle cx={x} cy={LINE_Y} r="7" stroke="var(--paper)" strokeWidth="2" />
-              <text x={x} y={isAbove ? LINE_Y - 16 : LINE_Y + 28} fontSize="17" textAnchor={x < 60 ? 'start' : x > WIDTH - 60 ? 'end' : 'middle'}>
+              <text
+                x={x}
+                y={isAbove ? LINE_Y - 16 : LINE_Y + 28}
+                fontSize="17"
+                textAnchor={x < 60 ? 'start' : x > WIDTH - 60 ? 'end' : 'middle'}
+              >
                 {words}
               </text>
             </g>

@@ -22,9 +22,19 @@ export function MovementList({ lotId }: { readonly lotId?: string }) {
       label="Ledger"
       searchLabel={lotId ? undefined : 'Lot, substance or reason'}
       defaults={defaults}
-      empty={<EmptyState title="No line yet">A line is written whenever something comes in or is taken.</EmptyState>}
+      empty={
+        <EmptyState title="No line yet">
+          A line is written whenever something comes in or is taken.
+        </EmptyState>
+      }
       filters={(state, change) => (
-        <Select id="movement-kind" label="What" value={state.kind ?? ''} onChange={(event) => change({ kind: event.target.value })} className="w-44">
+        <Select
+          id="movement-kind"
+          label="What"
+          value={state.kind ?? ''}
+          onChange={(event) => change({ kind: event.target.value })}
+          className="w-44"
+        >
           <option value="">anything</option>
           {MOVEMENT_KINDS.map((kind) => (
             <option key={kind} value={kind}>
@@ -49,13 +59,31 @@ export function MovementList({ lotId }: { readonly lotId?: string }) {
               },
             ]),
         { id: 'kind', header: 'What', cell: ({ kind }) => stateWords(kind) },
-        { id: 'amount', header: 'Amount', sortKey: 'amount', isNumeric: true, cell: ({ amount, unit }) => <span className="whitespace-nowrap">{signed(amount, unit)}</span> },
-        { id: 'after', header: 'Left after', isNumeric: true, cell: ({ balanceAfter, unit }) => <span className="whitespace-nowrap">{`${balanceAfter}\u202f${unit}`}</span> },
+        {
+          id: 'amount',
+          header: 'Amount',
+          sortKey: 'amount',
+          isNumeric: true,
+          cell: ({ amount, unit }) => <span className="whitespace-nowrap">{signed(amount, unit)}</span>,
+        },
+        {
+          id: 'after',
+          header: 'Left after',
+          isNumeric: true,
+          cell: ({ balanceAfter, unit }) => (
+            <span className="whitespace-nowrap">{`${balanceAfter}\u202f${unit}`}</span>
+          ),
+        },
         { id: 'who', header: 'Who', cell: ({ actorName }) => actorName },
         {
           id: 'why',
           header: 'Why',
-          cell: ({ reason, batchId, batchCode }) => (batchId && batchCode ? <Link href={`/batches/${batchId}` as Route}>{reason ?? batchCode}</Link> : (reason ?? '')),
+          cell: ({ reason, batchId, batchCode }) =>
+            batchId && batchCode ? (
+              <Link href={`/batches/${batchId}` as Route}>{reason ?? batchCode}</Link>
+            ) : (
+              (reason ?? '')
+            ),
         },
       ]}
     />

@@ -19,7 +19,10 @@ export function ShelfNav({ current }: { readonly current: (typeof PARTS)[number]
             <Link
               href={href as Route}
               aria-current={name === current ? 'page' : undefined}
-              className={classNames('block min-h-11 px-4 py-2.5 no-underline', name === current ? 'bg-ink font-bold text-paper' : 'text-ink hover:bg-sunken')}
+              className={classNames(
+                'block min-h-11 px-4 py-2.5 no-underline',
+                name === current ? 'bg-ink font-bold text-paper' : 'text-ink hover:bg-sunken',
+              )}
             >
               {name}
             </Link>

@@ -50,8 +50,19 @@ export function ReasonDialog({ label, title, description, look = 'quiet', onConf
       <Dialog title={title} description={description} isOpen={isOpen} onOpenChange={setOpen}>
         <form onSubmit={(event) => void confirm(event)} noValidate className="grid gap-4">
           {problem && problem.errors.length === 0 && <Alert tone="stop" title={problem.message} />}
-          <TextArea id="reason" label="Reason" value={reason} onChange={(event) => setReason(event.target.value)} error={problem?.errors[0]?.detail} />
-          <Button type="submit" look={look === 'danger' ? 'danger' : 'primary'} isBusy={isBusy} busyText="Saving …">
+          <TextArea
+            id="reason"
+            label="Reason"
+            value={reason}
+            onChange={(event) => setReason(event.target.value)}
+            error={problem?.errors[0]?.detail}
+          />
+          <Button
+            type="submit"
+            look={look === 'danger' ? 'danger' : 'primary'}
+            isBusy={isBusy}
+            busyText="Saving …"
+          >
             {label}
           </Button>
         </form>

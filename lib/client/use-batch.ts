@@ -25,7 +25,8 @@ export function useBatchChange(id: string) {
         void client.invalidateQueries({ queryKey: batchKeys.lists() });
         return batch;
       } catch (error) {
-        if (error instanceof ApiProblem && error.status === 409) void client.invalidateQueries({ queryKey: batchKeys.detail(id) });
+        if (error instanceof ApiProblem && error.status === 409)
+          void client.invalidateQueries({ queryKey: batchKeys.detail(id) });
         throw error;
       }
     },

@@ -74,7 +74,12 @@ export const plannedSheetSchema = z.object({
   makeVolumeMl: z.number(),
   tolerance: z.enum(TOLERANCE_CLASSES),
   toleranceFraction: z.number(),
-  vessel: z.object({ name: z.string(), fills: z.number().int(), fillMl: z.number(), meetsTolerance: z.boolean() }),
+  vessel: z.object({
+    name: z.string(),
+    fills: z.number().int(),
+    fillMl: z.number(),
+    meetsTolerance: z.boolean(),
+  }),
   glassware: z.array(glasswareLineSchema),
   warnings: z.array(z.string()),
   questions: z.array(z.string()),

@@ -1,9 +1,24 @@
 import { z } from 'zod';
 import { BATCH_STATES } from '@/lib/domain/states';
-import { actualSchema, classificationSchema, plannedSheetSchema, soluteSchema, stepSchema, takeSchema } from './batch-sheets';
+import {
+  actualSchema,
+  classificationSchema,
+  plannedSheetSchema,
+  soluteSchema,
+  stepSchema,
+  takeSchema,
+} from './batch-sheets';
 import { bottleLabelSchema, bottleSchema } from './bottles';
 import { endpoint } from './endpoint';
-import { dayField, idField, idParams, numberField, optionalNumberField, versionField, volumeMlField } from './fields';
+import {
+  dayField,
+  idField,
+  idParams,
+  numberField,
+  optionalNumberField,
+  versionField,
+  volumeMlField,
+} from './fields';
 import { listQuery, pageOf } from './list';
 import { recordEntrySchema } from './records';
 
@@ -76,7 +91,9 @@ export type BatchCreate = z.output<typeof batchCreateSchema>;
 
 export const takeEntrySchema = z.strictObject({
   /** In the unit of the line: g or mL. */
-  amount: numberField(z.number('Type the amount.').positive('Must be more than 0.').max(100_000, 'At most 100 000.')),
+  amount: numberField(
+    z.number('Type the amount.').positive('Must be more than 0.').max(100_000, 'At most 100 000.'),
+  ),
   explanation: z.string().trim().max(1000),
   version: versionField,
 });

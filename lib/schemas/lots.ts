@@ -2,7 +2,15 @@ import { z } from 'zod';
 import { LEDGER_UNITS } from '@/lib/domain/quantities';
 import { BATCH_STATES, MOVEMENT_KINDS } from '@/lib/domain/states';
 import { endpoint } from './endpoint';
-import { dayField, idField, idParams, numberField, optionalNumberField, slugField, versionField } from './fields';
+import {
+  dayField,
+  idField,
+  idParams,
+  numberField,
+  optionalNumberField,
+  slugField,
+  versionField,
+} from './fields';
 import { listQuery, pageOf } from './list';
 import { recordEntrySchema } from './records';
 
@@ -71,15 +79,22 @@ export const lotSchema = lotRowSchema.extend({
 });
 export type Lot = z.infer<typeof lotSchema>;
 
-export const lotListQuerySchema = listQuery(['code', 'substance', 'expiresOn', 'receivedOn', 'balance'], 'expiresOn', {
-  substanceId: slugField.optional(),
-  placeId: idField.optional(),
-  show: z.enum(['in-stock', 'expiring', 'expired', 'low', 'held', 'empty', 'all']).default('in-stock'),
-});
+export const lotListQuerySchema = listQuery(
+  ['code', 'substance', 'expiresOn', 'receivedOn', 'balance'],
+  'expiresOn',
+  {
+    substanceId: slugField.optional(),
+    placeId: idField.optional(),
+    show: z.enum(['in-stock', 'expiring', 'expired', 'low', 'held', 'empty', 'all']).default('in-stock'),
+  },
+);
 export type LotListQuery = z.output<typeof lotListQuerySchema>;
 
 const reasonField = z.string().trim().min(3, 'Say why, in a few words.').max(500);
-const amountField = z.number('Type the amount.').positive('Must be more than 0.').max(1_000_000, 'At most 1 000 000.');
+const amountField = z
+  .number('Type the amount.')
+  .positive('Must be more than 0.')
+  .max(1_000_000, 'At most 1 000 000.');
 const assayField = z.number().gt(0, 'Must be more than 0 %.').max(100, 'At most 100 %.');
 
 export const lotCreateSchema = z.strictObject({
@@ -120,11 +135,23 @@ export const movementCreateSchema = z.discriminatedUnion('kind', [
   z.strictObject({
     kind: z.literal('counted'),
     lotId: idField,
-    amount: numberField(z.number('Type what stands there.').min(0, 'Not below 0.').max(1_000_000, 'At most 1 000 000.')),
+    amount: numberField(
+      z.number('Type what stands there.').min(0, 'Not below 0.').max(1_000_000, 'At most 1 000 000.'),
+    ),
     reason: reasonField,
   }),
-  z.strictObject({ kind: z.literal('discarded'), lotId: idField, amount: numberField(amountField), reason: reasonField }),
-  z.strictObject({ kind: z.literal('put-back'), lotId: idField, amount: numberField(amountField), reason: reasonField }),
+  z.strictObject({
+    kind: z.literal('discarded'),
+    lotId: idField,
+    amount: numberField(amountField),
+    reason: reasonField,
+  }),
+  z.strictObject({
+    kind: z.literal('put-back'),
+    lotId: idField,
+    amount: numberField(amountField),
+    reason: reasonField,
+  }),
 ]);
 export type MovementCreate = z.output<typeof movementCreateSchema>;
 

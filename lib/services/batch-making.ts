@@ -28,13 +28,17 @@ const isoDay = (date: Date): string => formatISO(date, { representation: 'date' 
 /** The batch as it is now, for somebody who may change it. */
 async function changing(viewer: Viewer, id: string, version?: number): Promise<BatchModel> {
   const { batch } = await loadBatch(viewer, id);
-  if (version !== undefined && batch.version !== version) refuseStale(batch, version, await getBatch(viewer, id));
+  if (version !== undefined && batch.version !== version)
+    refuseStale(batch, version, await getBatch(viewer, id));
   return batch;
 }
 
 function refuseUnlessMaking(batch: BatchModel): void {
   if (batch.state === 'making') return;
-  throw new DomainError('wrong-state', `Batch ${batch.code} is ${stateWords(batch.state)}; entries are made while it is being made.`);
+  throw new DomainError(
+    'wrong-state',
+    `Batch ${batch.code} is ${stateWords(batch.state)}; entries are made while it is being made.`,
+  );
 }
 
 /** Begins to make a batch. */
@@ -53,7 +57,10 @@ async function usableLot(take: BatchTakeModel): Promise<LotModel> {
   const stop = (await lotStops([lot])).get(lot.id);
   if (stop) throw new DomainError('wrong-state', stop);
   if (lot.expiresOn !== null && lot.expiresOn < isoDay(new Date())) {
-    throw new DomainError('wrong-state', `Lot ${lot.code} expired on ${lot.expiresOn}. Discard this batch and plan it again from another lot.`);
+    throw new DomainError(
+      'wrong-state',
+      `Lot ${lot.code} expired on ${lot.expiresOn}. Discard this batch and plan it again from another lot.`,
+    );
   }
   return lot;
 }
@@ -64,7 +71,12 @@ async function usableLot(take: BatchTakeModel): Promise<LotModel> {
  * @throws DomainError `invalid` where an amount outside the range is not explained, `not-enough`, `wrong-state`,
  *   `conflict`
  */
-export async function enterTake(viewer: Viewer, batchId: string, takeId: string, entry: TakeEntry): Promise<Batch> {
+export async function enterTake(
+  viewer: Viewer,
+  batchId: string,
+  takeId: string,
+  entry: TakeEntry,
+): Promise<Batch> {
   await write(async () => {
     const batch = await changing(viewer, batchId);
     const take = await BatchTakeModel.findOne({ where: { id: takeId, batchId } });
@@ -82,11 +94,22 @@ export async function enterTake(viewer: Viewer, batchId: string, takeId: string,
     if (amountMicro === 0) throw invalid([{ pointer: '#/amount', detail: 'Too little to be counted.' }]);
     if (judgeTake(line, plan.toleranceFraction, amountMicro) !== 'within' && explanation === null) {
       const percent = Math.abs(100 * (amountMicro / take.targetMicro - 1)).toPrecision(2);
-      throw invalid([{ pointer: '#/explanation', detail: `That is ${percent} % off the target, more than allowed. Say why, or take it again.` }]);
+      throw invalid([
+        {
+          pointer: '#/explanation',
+          detail: `That is ${percent} % off the target, more than allowed. Say why, or take it again.`,
+        },
+      ]);
     }
     await postTake(viewer, batch, take, lot, amountMicro);
     const before = take.actualMicro;
-    await take.update({ actualMicro: amountMicro, explanation, enteredById: viewer.id, enteredAt: new Date(), version: take.version + 1 });
+    await take.update({
+      actualMicro: amountMicro,
+      explanation,
+      enteredById: viewer.id,
+      enteredAt: new Date(),
+      version: take.version + 1,
+    });
     await record(viewer, {
       subjectType: 'batch',
       subjectId: batch.id,
@@ -99,18 +122,35 @@ export async function enterTake(viewer: Viewer, batchId: string, takeId: string,
   return getBatch(viewer, batchId);
 }
 
-async function postTake(viewer: Viewer, batch: BatchModel, take: BatchTakeModel, lot: LotModel, amountMicro: number): Promise<void> {
+async function postTake(
+  viewer: Viewer,
+  batch: BatchModel,
+  take: BatchTakeModel,
+  lot: LotModel,
+  amountMicro: number,
+): Promise<void> {
   const about = { lotId: lot.id, batchId: batch.id };
   if (take.actualMicro === amountMicro) return;
   if (take.actualMicro !== null) {
-    await move(viewer, { ...about, kind: 'corrected', amountMicro: take.actualMicro, reason: `Entry of line ${take.position} of ${batch.code} taken back` });
+    await move(viewer, {
+      ...about,
+      kind: 'corrected',
+      amountMicro: take.actualMicro,
+      reason: `Entry of line ${take.position} of ${batch.code} taken back`,
+    });
   }
   await move(viewer, { ...about, kind: 'taken', amountMicro: -amountMicro, reason: `Batch ${batch.code}` });
-  if (lot.openedOn === null) await LotModel.update({ openedOn: isoDay(new Date()) }, { where: { id: lot.id } });
+  if (lot.openedOn === null)
+    await LotModel.update({ openedOn: isoDay(new Date()) }, { where: { id: lot.id } });
 }
 
 /** Ticks a step of the sheet, or takes the tick back. Doing it twice changes nothing more. */
-export async function tickStep(viewer: Viewer, batchId: string, stepId: string, isDone: boolean): Promise<Batch> {
+export async function tickStep(
+  viewer: Viewer,
+  batchId: string,
+  stepId: string,
+  isDone: boolean,
+): Promise<Batch> {
   await write(async () => {
     const batch = await changing(viewer, batchId);
     const step = await BatchStepModel.findOne({ where: { id: stepId, batchId } });
@@ -134,7 +174,10 @@ function keptActual(outcome: ActualOutcome, volumeMl: number): BatchActual {
   return {
     volumeMl,
     verdict: outcome.verdict,
-    strengths: outcome.strengths.map(({ budget, ...strength }) => ({ ...strength, largestPart: budget?.contributions[0]?.influence ?? null })),
+    strengths: outcome.strengths.map(({ budget, ...strength }) => ({
+      ...strength,
+      largestPart: budget?.contributions[0]?.influence ?? null,
+    })),
   };
 }
 
@@ -156,7 +199,9 @@ export async function checkBatch(viewer: Viewer, id: string, check: BatchCheck):
     const { plan, shelfLifeDays } = keptSheet(batch);
     const volumeMl = check.volumeMl ?? plan.makeVolumeMl;
     const outcome = actualStrength(plan, {
-      takes: takes.flatMap(({ position, actualMicro }) => (actualMicro === null ? [] : [{ position, amountMicro: actualMicro }])),
+      takes: takes.flatMap(({ position, actualMicro }) =>
+        actualMicro === null ? [] : [{ position, amountMicro: actualMicro }],
+      ),
       volumeMl,
     });
     refuseDeviation(outcome, check.note !== '' || takes.some(({ explanation }) => explanation !== null));
@@ -168,7 +213,14 @@ export async function checkBatch(viewer: Viewer, id: string, check: BatchCheck):
     await changeState(viewer, 'batch', batch, 'checked', {
       label: batch.code,
       reason: check.note || null,
-      detail: { volumeMl, strengths: outcome.strengths.map(({ substanceId, molarity, expandedUncertainty }) => ({ substanceId, molarity, expandedUncertainty })) },
+      detail: {
+        volumeMl,
+        strengths: outcome.strengths.map(({ substanceId, molarity, expandedUncertainty }) => ({
+          substanceId,
+          molarity,
+          expandedUncertainty,
+        })),
+      },
     });
   });
   return getBatch(viewer, id);
@@ -177,19 +229,29 @@ export async function checkBatch(viewer: Viewer, id: string, check: BatchCheck):
 function refuseDeviation({ strengths, verdict }: ActualOutcome, isExplained: boolean): void {
   if (verdict === 'within') return;
   const worst = [...strengths].sort((a, b) => Math.abs(b.deviationPercent) - Math.abs(a.deviationPercent))[0];
-  const said = worst ? `${worst.name} is ${Math.abs(worst.deviationPercent).toPrecision(2)} % ${worst.deviationPercent > 0 ? 'too strong' : 'too weak'}` : '';
+  const said = worst
+    ? `${worst.name} is ${Math.abs(worst.deviationPercent).toPrecision(2)} % ${worst.deviationPercent > 0 ? 'too strong' : 'too weak'}`
+    : '';
   if (verdict === 'remake') throw new DomainError('wrong-state', `${said}. Discard it and make it again.`);
-  if (!isExplained) throw invalid([{ pointer: '#/note', detail: `${said}, more than allowed. Say why, or discard it and make it again.` }]);
+  if (!isExplained)
+    throw invalid([
+      { pointer: '#/note', detail: `${said}, more than allowed. Say why, or discard it and make it again.` },
+    ]);
 }
 
 /** Discards a batch with its bottles. What was taken stays taken; requests that relied on it go back into work. */
-export async function discardBatch(viewer: Viewer, id: string, { reason, version }: BatchReason): Promise<Batch> {
+export async function discardBatch(
+  viewer: Viewer,
+  id: string,
+  { reason, version }: BatchReason,
+): Promise<Batch> {
   await write(async () => {
     const batch = await changing(viewer, id, version);
     await changeState(viewer, 'batch', batch, 'discarded', { label: batch.code, reason });
     const bottles = await BottleModel.findAll({ where: { batchId: id } });
     for (const bottle of bottles) {
-      if (bottle.state !== 'discarded') await changeState(viewer, 'bottle', bottle, 'discarded', { label: bottle.code, reason });
+      if (bottle.state !== 'discarded')
+        await changeState(viewer, 'bottle', bottle, 'discarded', { label: bottle.code, reason });
     }
     await reopenUncovered(viewer, id);
   });
@@ -197,7 +259,12 @@ export async function discardBatch(viewer: Viewer, id: string, { reason, version
 }
 
 /** Puts a batch on hold or lifts the hold. */
-export async function setBatchHold(viewer: Viewer, id: string, isHeld: boolean, about: BatchReason): Promise<Batch> {
+export async function setBatchHold(
+  viewer: Viewer,
+  id: string,
+  isHeld: boolean,
+  about: BatchReason,
+): Promise<Batch> {
   await holdBatch(viewer, id, { isHeld, ...about });
   return getBatch(viewer, id);
 }

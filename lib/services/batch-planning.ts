@@ -19,7 +19,7 @@ import { ReviewModel } from '@/models/review';
 import { SolutionModel } from '@/models/solution';
 import { keepable, makeSheet } from './batch-sheets';
 import { getBatch } from './batches';
-import { openShortages } from './batch-shortages';
+import { closeShortages, openShortages } from './batch-shortages';
 import { nextCode } from './codes';
 import { once } from './idempotency';
 import { rowsById } from './lookup';
@@ -35,9 +35,19 @@ class NotEnough extends DomainError {
     readonly shortages: readonly SheetShortage[],
     readonly requestId: string,
   ) {
-    const lines = shortages.map(({ name, unit, shortMicro }) => `${name}: ${Number(fromMicro(shortMicro).toPrecision(4))} ${unit} short`);
+    const lines = shortages.map(
+      ({ name, unit, shortMicro }) =>
+        `${name}: ${Number(fromMicro(shortMicro).toPrecision(4))} ${unit} short`,
+    );
     super('not-enough', `Not enough stands on the shelves. ${lines.join('; ')}. Purchasing has been told.`, {
-      data: { shortages: shortages.map(({ substanceId, name, unit, shortMicro }) => ({ substanceId, name, unit, short: fromMicro(shortMicro) })) },
+      data: {
+        shortages: shortages.map(({ substanceId, name, unit, shortMicro }) => ({
+          substanceId,
+          name,
+          unit,
+          short: fromMicro(shortMicro),
+        })),
+      },
     });
   }
 }
@@ -52,7 +62,12 @@ export async function createBatch(viewer: Viewer, input: BatchCreate, key: strin
   try {
     const { id } = key
       ? await once(
-          { userId: viewer.id, endpoint: 'POST /api/batches', key, requestHash: createHash('sha256').update(JSON.stringify(input)).digest('hex') },
+          {
+            userId: viewer.id,
+            endpoint: 'POST /api/batches',
+            key,
+            requestHash: createHash('sha256').update(JSON.stringify(input)).digest('hex'),
+          },
           plan,
         )
       : await write(plan);
@@ -73,7 +88,10 @@ async function agreedRequests(ids: readonly string[]): Promise<RequestModel[]> {
     const request = rows.get(id);
     if (!request) throw invalid([{ pointer: `#/requestIds/${index}`, detail: 'There is no such request.' }]);
     if (request.state !== 'agreed' && request.state !== 'in-work') {
-      throw new DomainError('wrong-state', `Request ${request.code} is ${stateWords(request.state)}; only what is agreed can be made.`);
+      throw new DomainError(
+        'wrong-state',
+        `Request ${request.code} is ${stateWords(request.state)}; only what is agreed can be made.`,
+      );
     }
     return request;
   });
@@ -82,8 +100,15 @@ async function agreedRequests(ids: readonly string[]): Promise<RequestModel[]> {
 function openNeeds(needs: readonly Need[], requests: readonly RequestModel[], solutionId: string): Need[] {
   return requests.map((request, index) => {
     const need = needs.find((one) => one.requestId === request.id && one.solutionId === solutionId);
-    if (!need) throw invalid([{ pointer: `#/requestIds/${index}`, detail: `Request ${request.code} does not need this solution.` }]);
-    if (need.openMl === 0) throw new DomainError('wrong-state', `What request ${request.code} needs of it is already planned or made.`);
+    if (!need)
+      throw invalid([
+        { pointer: `#/requestIds/${index}`, detail: `Request ${request.code} does not need this solution.` },
+      ]);
+    if (need.openMl === 0)
+      throw new DomainError(
+        'wrong-state',
+        `What request ${request.code} needs of it is already planned or made.`,
+      );
     return need;
   });
 }
@@ -107,11 +132,20 @@ async function conditionsFor(requests: readonly RequestModel[]): Promise<string[
   });
   const codes = new Map(requests.map(({ id, code, planHash }) => [id, { code, planHash }]));
   const current = reviews.filter(({ requestId, planHash }) => codes.get(requestId)?.planHash === planHash);
-  return [...new Set(current.flatMap(({ requestId, conditions }) => conditions.map((line) => `${codes.get(requestId)?.code ?? ''}: ${line}`)))];
+  return [
+    ...new Set(
+      current.flatMap(({ requestId, conditions }) =>
+        conditions.map((line) => `${codes.get(requestId)?.code ?? ''}: ${line}`),
+      ),
+    ),
+  ];
 }
 
 /** The solution as the agreed plan classified it: the label says what was judged. */
-async function classificationOf(requests: readonly RequestModel[], solution: SolutionModel): Promise<Classification> {
+async function classificationOf(
+  requests: readonly RequestModel[],
+  solution: SolutionModel,
+): Promise<Classification> {
   for (const plan of (await plansOf(requests)).values()) {
     const planned = plan.solutions.find(({ solutionId }) => solutionId === solution.id);
     if (planned) return planned.classification;
@@ -128,7 +162,9 @@ async function planBatch(viewer: Viewer, input: BatchCreate): Promise<string> {
   const openMl = needs.reduce((sum, need) => sum + need.openMl, 0);
   const volumeMl = input.volumeMl ?? openMl;
   if (volumeMl < openMl) {
-    throw invalid([{ pointer: '#/volumeMl', detail: `The chosen requests need ${Number(openMl.toPrecision(6))} mL.` }]);
+    throw invalid([
+      { pointer: '#/volumeMl', detail: `The chosen requests need ${Number(openMl.toPrecision(6))} mL.` },
+    ]);
   }
   const sheet = await makeSheet(solution, {
     volumeMl,
@@ -151,10 +187,23 @@ async function planBatch(viewer: Viewer, input: BatchCreate): Promise<string> {
     plannedById: viewer.id,
   });
   await BatchTakeModel.bulkCreate(
-    sheet.plan.takes.map(({ position, substanceId, lotId, unit, targetMicro, lowMicro, highMicro }) => ({ batchId: batch.id, position, substanceId, lotId, unit, targetMicro, lowMicro, highMicro })),
+    sheet.plan.takes.map(({ position, substanceId, lotId, unit, targetMicro, lowMicro, highMicro }) => ({
+      batchId: batch.id,
+      position,
+      substanceId,
+      lotId,
+      unit,
+      targetMicro,
+      lowMicro,
+      highMicro,
+    })),
   );
-  await BatchStepModel.bulkCreate(sheet.plan.steps.map(({ kind, text }, position) => ({ batchId: batch.id, position, kind, text })));
-  await BatchRequestModel.bulkCreate(needs.map((need) => ({ batchId: batch.id, requestId: need.requestId, volumeMl: need.openMl })));
+  await BatchStepModel.bulkCreate(
+    sheet.plan.steps.map(({ kind, text }, position) => ({ batchId: batch.id, position, kind, text })),
+  );
+  await BatchRequestModel.bulkCreate(
+    needs.map((need) => ({ batchId: batch.id, requestId: need.requestId, volumeMl: need.openMl })),
+  );
   await record(viewer, {
     subjectType: 'batch',
     subjectId: batch.id,
@@ -163,8 +212,17 @@ async function planBatch(viewer: Viewer, input: BatchCreate): Promise<string> {
     toState: 'planned',
     detail: { solution: solution.name, volumeMl, requests: requests.map(({ code }) => code) },
   });
+  await closeShortages(
+    viewer,
+    requests.map(({ id }) => id),
+    sheet.solutes.map(({ substanceId }) => substanceId),
+  );
   for (const request of requests) {
-    if (request.state === 'agreed') await changeState(viewer, 'request', request, 'in-work', { label: request.code, reason: `Batch ${batch.code}` });
+    if (request.state === 'agreed')
+      await changeState(viewer, 'request', request, 'in-work', {
+        label: request.code,
+        reason: `Batch ${batch.code}`,
+      });
   }
   return batch.id;
 }

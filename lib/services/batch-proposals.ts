@@ -33,10 +33,20 @@ const MOST_NEEDS = 200;
 
 /** The fewest batches that make all that is open, each on the latest day that serves all of its requests. */
 export async function proposeBatches(viewer: Viewer): Promise<BatchProposals> {
-  const { items: needs } = await listNeeds(viewer, { page: 1, pageSize: MOST_NEEDS, sort: 'makeBy', search: '', format: 'json', show: 'open' });
+  const { items: needs } = await listNeeds(viewer, {
+    page: 1,
+    pageSize: MOST_NEEDS,
+    sort: 'makeBy',
+    search: '',
+    format: 'json',
+    show: 'open',
+  });
   const today = formatISO(new Date(), { representation: 'date' });
   const [solutions, flasks] = await Promise.all([
-    rowsById(SolutionModel, needs.map(({ solutionId }) => solutionId)),
+    rowsById(
+      SolutionModel,
+      needs.map(({ solutionId }) => solutionId),
+    ),
     EquipmentModel.findAll({ where: { kind: 'flask' } }),
   ]);
   const sizes = flasks.flatMap(({ capacityMl }) => (capacityMl ? [capacityMl] : []));

@@ -46,7 +46,10 @@ const ROOM_TEMPERATURE_C = 25;
 /** The solutes of a recipe with their names. */
 export async function solutesOf(solutionId: string): Promise<BatchSolute[]> {
   const rows = await SolutionSoluteModel.findAll({ where: { solutionId }, order: [['position', 'ASC']] });
-  const substances = await rowsById(SubstanceModel, rows.map(({ substanceId }) => substanceId));
+  const substances = await rowsById(
+    SubstanceModel,
+    rows.map(({ substanceId }) => substanceId),
+  );
   return rows.map(({ substanceId, molarity }) => {
     const substance = substances.get(substanceId);
     return { substanceId, molarity, name: substance?.name ?? substanceId, formula: substance?.formula ?? '' };
@@ -70,7 +73,10 @@ export function expectedLook(name: string, solutes: readonly BatchSolute[]): Kep
 /** Amounts that other planned batches will still take, by lot, in millionths. */
 async function reservedMicro(lotIds: readonly string[]): Promise<Map<string, number>> {
   const takes = await BatchTakeModel.findAll({ where: { lotId: [...lotIds], actualMicro: null } });
-  const batches = await rowsById(BatchModel, takes.map(({ batchId }) => batchId));
+  const batches = await rowsById(
+    BatchModel,
+    takes.map(({ batchId }) => batchId),
+  );
   const reserved = new Map<string, number>();
   for (const { batchId, lotId, targetMicro } of takes) {
     const state = batches.get(batchId)?.state;
@@ -84,16 +90,28 @@ async function reservedMicro(lotIds: readonly string[]): Promise<Map<string, num
 async function lotsFor(solutes: readonly BatchSolute[]): Promise<SheetLot[]> {
   const recipe = solutes.map(({ substanceId, name }) => {
     const substance = findSubstance(substanceId);
-    if (!substance) throw new DomainError('wrong-state', `${name} is not in the catalogue's data; its batch can't be planned.`);
+    if (!substance)
+      throw new DomainError(
+        'wrong-state',
+        `${name} is not in the catalogue's data; its batch can't be planned.`,
+      );
     return substance;
   });
-  const serving = ALL_SUBSTANCES.filter((bottle) => recipe.some((substance) => canServeFor(substance, bottle)));
+  const serving = ALL_SUBSTANCES.filter((bottle) =>
+    recipe.some((substance) => canServeFor(substance, bottle)),
+  );
   const lots = await LotModel.findAll({
     where: { substanceId: serving.map(({ id }) => id), balanceMicro: { [Op.gt]: 0 } },
   });
   const [places, substances, reserved] = await Promise.all([
-    rowsById(PlaceModel, lots.map(({ placeId }) => placeId)),
-    rowsById(SubstanceModel, lots.map(({ substanceId }) => substanceId)),
+    rowsById(
+      PlaceModel,
+      lots.map(({ placeId }) => placeId),
+    ),
+    rowsById(
+      SubstanceModel,
+      lots.map(({ substanceId }) => substanceId),
+    ),
     reservedMicro(lots.map(({ id }) => id)),
   ]);
   return lots.flatMap((lot) => {
@@ -120,7 +138,10 @@ async function lotsFor(solutes: readonly BatchSolute[]): Promise<SheetLot[]> {
 /** What the materials can do as they are taken, before they are diluted: that is what hands and eyes meet. */
 function materialHazards(solutes: readonly BatchSolute[]): HazardStatement[] {
   const classes = solutes.flatMap(({ substanceId, name }) =>
-    (findSubstanceHazards(substanceId)?.classes ?? []).map((assigned) => ({ class: assigned, because: `${name} as taken` })),
+    (findSubstanceHazards(substanceId)?.classes ?? []).map((assigned) => ({
+      class: assigned,
+      because: `${name} as taken`,
+    })),
   );
   return hazardStatements(classes);
 }
@@ -136,7 +157,8 @@ export async function makeSheet(
   },
 ): Promise<KeptSheet> {
   const solutes = await solutesOf(solution.id);
-  if (solutes.length === 0) throw new DomainError('wrong-state', `${solution.name} has no solute; there is nothing to take.`);
+  if (solutes.length === 0)
+    throw new DomainError('wrong-state', `${solution.name} has no solute; there is nothing to take.`);
   const [lots, equipment] = await Promise.all([lotsFor(solutes), EquipmentModel.findAll()]);
   const expected = expectedLook(solution.name, solutes);
   const plan = planBatchSheet({

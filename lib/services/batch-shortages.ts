@@ -34,15 +34,44 @@ function countedIn(unit: LedgerUnit, shortage: SheetShortage): { unit: LedgerUni
 
 async function leadDaysFor(substanceId: string): Promise<number> {
   const offers = await OfferModel.findAll({ where: { substanceId, active: true } });
-  const suppliers = await rowsById(SupplierModel, offers.map(({ supplierId }) => supplierId));
+  const suppliers = await rowsById(
+    SupplierModel,
+    offers.map(({ supplierId }) => supplierId),
+  );
   const leads = [...suppliers.values()].filter(({ active }) => active).map(({ leadDays }) => leadDays);
   return leads.length === 0 ? USUAL_LEAD_DAYS : Math.min(...leads);
+}
+
+/** What is planned after all is short no longer; what is on order stays until it is received. */
+export async function closeShortages(
+  viewer: Viewer,
+  requestIds: readonly string[],
+  substanceIds: readonly string[],
+): Promise<void> {
+  const open = await ShortageModel.findAll({
+    where: { requestId: [...requestIds], substanceId: [...substanceIds], state: 'open' },
+  });
+  for (const row of open) {
+    await row.update({ state: 'covered' });
+    await record(viewer, {
+      subjectType: 'shortage',
+      subjectId: row.id,
+      subjectLabel: row.substanceId,
+      action: 'covered',
+      fromState: 'open',
+      toState: 'covered',
+      reason: 'A batch could be planned',
+    });
+  }
 }
 
 /** Opens a shortage for all that is missing, or raises the one that is already open for the same request. */
 export async function openShortages(viewer: Viewer, missing: MissingStock): Promise<void> {
   await write(async () => {
-    const substances = await rowsById(SubstanceModel, missing.shortages.map(({ substanceId }) => substanceId));
+    const substances = await rowsById(
+      SubstanceModel,
+      missing.shortages.map(({ substanceId }) => substanceId),
+    );
     for (const shortage of missing.shortages) {
       const { substanceId } = shortage;
       const { unit, neededMicro } = countedIn(substances.get(substanceId)?.unit ?? shortage.unit, shortage);

@@ -34,12 +34,21 @@ const MOST_FOUND = 500;
 async function presentRows(batches: readonly BatchModel[]): Promise<BatchRow[]> {
   const ids = batches.map(({ id }) => id);
   const [solutions, people, links, stops] = await Promise.all([
-    rowsById(SolutionModel, batches.map(({ solutionId }) => solutionId)),
-    rowsById(UserModel, batches.map(({ makerId }) => makerId)),
+    rowsById(
+      SolutionModel,
+      batches.map(({ solutionId }) => solutionId),
+    ),
+    rowsById(
+      UserModel,
+      batches.map(({ makerId }) => makerId),
+    ),
     BatchRequestModel.findAll({ where: { batchId: ids } }),
     batchStops(batches),
   ]);
-  const requests = await rowsById(RequestModel, links.map(({ requestId }) => requestId));
+  const requests = await rowsById(
+    RequestModel,
+    links.map(({ requestId }) => requestId),
+  );
   const linksOf = groupedBy(links, ({ batchId }) => batchId);
   return batches.map((batch) => ({
     id: batch.id,
@@ -61,21 +70,31 @@ async function presentRows(batches: readonly BatchModel[]): Promise<BatchRow[]> 
 /** Batches of these requests; used to show an instructor only their own. */
 async function batchIdsFor(where: WhereOptions): Promise<string[]> {
   const requests = await RequestModel.findAll({ where, attributes: ['id'] });
-  const links = await BatchRequestModel.findAll({ where: { requestId: requests.map(({ id }) => id) }, attributes: ['batchId'] });
+  const links = await BatchRequestModel.findAll({
+    where: { requestId: requests.map(({ id }) => id) },
+    attributes: ['batchId'],
+  });
   return links.map(({ batchId }) => batchId);
 }
 
 /** Batches; who is no staff sees those made for their own requests. */
 export async function listBatches(viewer: Viewer, query: BatchListQuery): Promise<Page<BatchRow>> {
   const conditions: WhereOptions[] = [];
-  if (!mayByRole(viewer, 'stock:read')) conditions.push({ id: await batchIdsFor({ requesterId: viewer.id }) });
+  if (!mayByRole(viewer, 'stock:read'))
+    conditions.push({ id: await batchIdsFor({ requesterId: viewer.id }) });
   if (query.requestId) conditions.push({ id: await batchIdsFor({ id: query.requestId }) });
   if (query.state) conditions.push({ state: query.state });
   if (query.on) conditions.push({ makeOn: query.on });
   if (query.solutionId) conditions.push({ solutionId: query.solutionId });
   if (query.search) {
-    const solutions = await SolutionModel.findAll({ where: contains('name', query.search), attributes: ['id'], limit: MOST_FOUND });
-    conditions.push({ [Op.or]: [contains('code', query.search), { solutionId: solutions.map(({ id }) => id) }] });
+    const solutions = await SolutionModel.findAll({
+      where: contains('name', query.search),
+      attributes: ['id'],
+      limit: MOST_FOUND,
+    });
+    conditions.push({
+      [Op.or]: [contains('code', query.search), { solutionId: solutions.map(({ id }) => id) }],
+    });
   }
   const { rows, count } = await BatchModel.findAndCountAll({
     where: { [Op.and]: conditions },
@@ -89,12 +108,21 @@ export async function listBatches(viewer: Viewer, query: BatchListQuery): Promis
 
 async function presentTakes(takes: readonly BatchTakeModel[], sheet: KeptSheet): Promise<BatchTake[]> {
   const [lots, people] = await Promise.all([
-    rowsById(LotModel, takes.map(({ lotId }) => lotId)),
-    rowsById(UserModel, takes.map(({ enteredById }) => enteredById)),
+    rowsById(
+      LotModel,
+      takes.map(({ lotId }) => lotId),
+    ),
+    rowsById(
+      UserModel,
+      takes.map(({ enteredById }) => enteredById),
+    ),
   ]);
   const [stops, places] = await Promise.all([
     lotStops([...lots.values()]),
-    rowsById(PlaceModel, [...lots.values()].map(({ placeId }) => placeId)),
+    rowsById(
+      PlaceModel,
+      [...lots.values()].map(({ placeId }) => placeId),
+    ),
   ]);
   return takes.map((take) => {
     const line = sheet.plan.takes.find(({ position }) => position === take.position);
@@ -119,7 +147,8 @@ async function presentTakes(takes: readonly BatchTakeModel[], sheet: KeptSheet):
       measuredWith: line.measuredWith,
       note: line.note,
       actual: take.actualMicro === null ? null : fromMicro(take.actualMicro),
-      verdict: take.actualMicro === null ? null : judgeTake(line, sheet.plan.toleranceFraction, take.actualMicro),
+      verdict:
+        take.actualMicro === null ? null : judgeTake(line, sheet.plan.toleranceFraction, take.actualMicro),
       explanation: take.explanation,
       enteredBy: people.get(take.enteredById ?? '')?.name ?? null,
       enteredAt: take.enteredAt?.toISOString() ?? null,
@@ -129,7 +158,10 @@ async function presentTakes(takes: readonly BatchTakeModel[], sheet: KeptSheet):
 }
 
 async function presentSteps(steps: readonly BatchStepModel[]): Promise<BatchStep[]> {
-  const people = await rowsById(UserModel, steps.map(({ doneById }) => doneById));
+  const people = await rowsById(
+    UserModel,
+    steps.map(({ doneById }) => doneById),
+  );
   return steps.map(({ id, position, kind, text, doneAt, doneById }) => ({
     id,
     position,
@@ -141,9 +173,14 @@ async function presentSteps(steps: readonly BatchStepModel[]): Promise<BatchStep
 }
 
 /** What still keeps a batch from being checked, in words. */
-export function missingFor(takes: readonly { actualMicro: number | null; position: number }[], steps: readonly { kind: string; text: string; doneAt: Date | null }[]): string[] {
+export function missingFor(
+  takes: readonly { actualMicro: number | null; position: number }[],
+  steps: readonly { kind: string; text: string; doneAt: Date | null }[],
+): string[] {
   const open = takes.filter(({ actualMicro }) => actualMicro === null).map(({ position }) => position);
-  const unticked = steps.filter(({ kind, doneAt }) => (kind === 'condition' || kind === 'check') && doneAt === null);
+  const unticked = steps.filter(
+    ({ kind, doneAt }) => (kind === 'condition' || kind === 'check') && doneAt === null,
+  );
   return [
     ...(open.length > 0 ? [`Enter what was taken in line ${open.join(', ')}.`] : []),
     ...unticked.map(({ kind, text }) => `Tick the ${kind}: ${text}`),
@@ -151,11 +188,21 @@ export function missingFor(takes: readonly { actualMicro: number | null; positio
 }
 
 /** @throws DomainError `not-found`, also where it serves none of the viewer's requests and so is not theirs to see */
-export async function loadBatch(viewer: Viewer, id: string): Promise<{ batch: BatchModel; requests: RequestModel[]; links: BatchRequestModel[] }> {
+export async function loadBatch(
+  viewer: Viewer,
+  id: string,
+): Promise<{ batch: BatchModel; requests: RequestModel[]; links: BatchRequestModel[] }> {
   const batch = await BatchModel.findByPk(id);
   if (!batch) throw new DomainError('not-found', 'There is no such batch.');
   const links = await BatchRequestModel.findAll({ where: { batchId: id } });
-  const requests = [...(await rowsById(RequestModel, links.map(({ requestId }) => requestId))).values()];
+  const requests = [
+    ...(
+      await rowsById(
+        RequestModel,
+        links.map(({ requestId }) => requestId),
+      )
+    ).values(),
+  ];
   const isSeen = may(viewer, 'batch:read', { requesterIds: requests.map(({ requesterId }) => requesterId) });
   if (!isSeen) throw new DomainError('not-found', 'There is no such batch.');
   return { batch, requests, links };
@@ -168,8 +215,17 @@ export async function getBatch(viewer: Viewer, id: string): Promise<Batch> {
   const [takes, steps, bottles, sessions, people, [row], stops, story] = await Promise.all([
     BatchTakeModel.findAll({ where: { batchId: id }, order: [['position', 'ASC']] }),
     BatchStepModel.findAll({ where: { batchId: id }, order: [['position', 'ASC']] }),
-    BottleModel.findAll({ where: { batchId: id }, order: [['createdAt', 'ASC'], ['code', 'ASC']] }),
-    rowsById(SessionModel, requests.map(({ sessionId }) => sessionId)),
+    BottleModel.findAll({
+      where: { batchId: id },
+      order: [
+        ['createdAt', 'ASC'],
+        ['code', 'ASC'],
+      ],
+    }),
+    rowsById(
+      SessionModel,
+      requests.map(({ sessionId }) => sessionId),
+    ),
     rowsById(UserModel, [batch.plannedById, batch.checkerId]),
     presentRows([batch]),
     batchStops([batch]),
@@ -203,7 +259,16 @@ export async function getBatch(viewer: Viewer, id: string): Promise<Batch> {
       const request = requests.find((one) => one.id === requestId);
       const session = request && sessions.get(request.sessionId);
       if (!request || !session) return [];
-      return [{ id: requestId, code: request.code, state: request.state, session: `${session.course} ${session.title}`, startsAt: session.startsAt.toISOString(), volumeMl }];
+      return [
+        {
+          id: requestId,
+          code: request.code,
+          state: request.state,
+          session: `${session.course} ${session.title}`,
+          startsAt: session.startsAt.toISOString(),
+          volumeMl,
+        },
+      ];
     }),
     bottles: await presentBottles(bottles),
     actual: batch.actual as unknown as BatchActual | null,

@@ -34,12 +34,24 @@ async function labelsFor(batch: BatchModel, bottles: readonly BottleModel[]): Pr
 /** What the labels of a batch say, in the order of the bottles. Discarded bottles get none. */
 export async function labelsOfBatch(viewer: Viewer, id: string): Promise<{ labels: BottleLabel[] }> {
   const { batch } = await loadBatch(viewer, id);
-  const bottles = await BottleModel.findAll({ where: { batchId: id, state: ['filled', 'handed-over', 'returned'] }, order: [['createdAt', 'ASC'], ['code', 'ASC']] });
+  const bottles = await BottleModel.findAll({
+    where: { batchId: id, state: ['filled', 'handed-over', 'returned'] },
+    order: [
+      ['createdAt', 'ASC'],
+      ['code', 'ASC'],
+    ],
+  });
   return { labels: await labelsFor(batch, bottles) };
 }
 
 export type PublicBottle =
-  | { readonly kind: 'bottle'; readonly label: BottleLabel; readonly isHeld: boolean; readonly isDiscarded: boolean; readonly isPastDate: boolean }
+  | {
+      readonly kind: 'bottle';
+      readonly label: BottleLabel;
+      readonly isHeld: boolean;
+      readonly isDiscarded: boolean;
+      readonly isPastDate: boolean;
+    }
   | { readonly kind: 'revoked'; readonly house: BottleLabel['house'] };
 
 /** What anybody may read who holds the bottle; null where the address names nothing. */

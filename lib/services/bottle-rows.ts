@@ -14,7 +14,10 @@ import { contains, orderOf } from './lists';
 import { rowsById } from './lookup';
 
 export async function presentBottles(bottles: readonly BottleModel[]): Promise<Bottle[]> {
-  const requests = await rowsById(RequestModel, bottles.map(({ requestId }) => requestId));
+  const requests = await rowsById(
+    RequestModel,
+    bottles.map(({ requestId }) => requestId),
+  );
   return bottles.map((bottle) => ({
     id: bottle.id,
     code: bottle.code,
@@ -32,10 +35,16 @@ export async function presentBottles(bottles: readonly BottleModel[]): Promise<B
 }
 
 async function presentBottleRows(bottles: readonly BottleModel[]): Promise<BottleRow[]> {
-  const batches = await rowsById(BatchModel, bottles.map(({ batchId }) => batchId));
+  const batches = await rowsById(
+    BatchModel,
+    bottles.map(({ batchId }) => batchId),
+  );
   const [plain, solutions, stops] = await Promise.all([
     presentBottles(bottles),
-    rowsById(SolutionModel, [...batches.values()].map(({ solutionId }) => solutionId)),
+    rowsById(
+      SolutionModel,
+      [...batches.values()].map(({ solutionId }) => solutionId),
+    ),
     batchStops([...batches.values()]),
   ]);
   return plain.map((bottle) => {

@@ -17,12 +17,16 @@ import { record } from './record';
 
 /** Why nothing may be taken from these lots now; lots that may be used are absent. */
 export async function lotStops(lots: readonly LotModel[]): Promise<Map<string, string>> {
-  const substances = await rowsById(SubstanceModel, lots.map(({ substanceId }) => substanceId));
+  const substances = await rowsById(
+    SubstanceModel,
+    lots.map(({ substanceId }) => substanceId),
+  );
   const stops = new Map<string, string>();
   for (const lot of lots) {
     const substance = substances.get(lot.substanceId);
     if (lot.heldAt) stops.set(lot.id, `Lot ${lot.code} is on hold: ${lot.heldReason ?? ''}`);
-    else if (substance?.heldAt) stops.set(lot.id, `${substance.name} is on hold: ${substance.heldReason ?? ''}`);
+    else if (substance?.heldAt)
+      stops.set(lot.id, `${substance.name} is on hold: ${substance.heldReason ?? ''}`);
   }
   return stops;
 }
@@ -30,7 +34,10 @@ export async function lotStops(lots: readonly LotModel[]): Promise<Map<string, s
 /** Why these batches, and bottles of them, may not be used now; others are absent. */
 export async function batchStops(batches: readonly BatchModel[]): Promise<Map<string, string>> {
   const takes = await BatchTakeModel.findAll({ where: { batchId: batches.map(({ id }) => id) } });
-  const lots = await rowsById(LotModel, takes.map(({ lotId }) => lotId));
+  const lots = await rowsById(
+    LotModel,
+    takes.map(({ lotId }) => lotId),
+  );
   const ofLots = await lotStops([...lots.values()]);
   const stops = new Map<string, string>();
   for (const { batchId, lotId, actualMicro } of takes) {
@@ -69,7 +76,10 @@ async function setHold(
     if (!row) throw new DomainError('not-found', `There is no such ${kind}.`);
     refuseStale(row, change.version, { version: row.version });
     if ((row.heldAt !== null) === change.isHeld) {
-      throw new DomainError('wrong-state', change.isHeld ? `${row.code} is already on hold.` : `${row.code} is not on hold.`);
+      throw new DomainError(
+        'wrong-state',
+        change.isHeld ? `${row.code} is already on hold.` : `${row.code} is not on hold.`,
+      );
     }
     row.heldAt = change.isHeld ? new Date() : null;
     row.heldReason = change.isHeld ? change.reason : null;
@@ -86,11 +96,19 @@ async function setHold(
 }
 
 /** Stops or allows the use of a batch and its bottles. */
-export async function holdBatch(viewer: Viewer, id: string, change: { isHeld: boolean; reason: string; version: number }): Promise<void> {
+export async function holdBatch(
+  viewer: Viewer,
+  id: string,
+  change: { isHeld: boolean; reason: string; version: number },
+): Promise<void> {
   await setHold(viewer, 'batch', () => BatchModel.findByPk(id), change);
 }
 
 /** Stops or allows the use of a lot and of everything made from it. */
-export async function holdLot(viewer: Viewer, id: string, change: { isHeld: boolean; reason: string; version: number }): Promise<void> {
+export async function holdLot(
+  viewer: Viewer,
+  id: string,
+  change: { isHeld: boolean; reason: string; version: number },
+): Promise<void> {
   await setHold(viewer, 'lot', () => LotModel.findByPk(id), change);
 }

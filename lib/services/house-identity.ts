@@ -12,7 +12,8 @@ export type HouseIdentity = z.infer<typeof houseSchema>;
 const UNNAMED: HouseIdentity = {
   name: 'Prep room',
   contact: 'Ask the prep room of this laboratory.',
-  emergency: 'In an emergency call the emergency number of your country and tell the nearest member of staff.',
+  emergency:
+    'In an emergency call the emergency number of your country and tell the nearest member of staff.',
 };
 
 /** Whom the bottles belong to and how they are reached. */

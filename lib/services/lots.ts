@@ -35,8 +35,14 @@ const isoDay = (date: Date): string => formatISO(date, { representation: 'date' 
 
 async function presentLots(lots: readonly LotModel[]): Promise<LotRow[]> {
   const [substances, places, stops] = await Promise.all([
-    rowsById(SubstanceModel, lots.map(({ substanceId }) => substanceId)),
-    rowsById(PlaceModel, lots.map(({ placeId }) => placeId)),
+    rowsById(
+      SubstanceModel,
+      lots.map(({ substanceId }) => substanceId),
+    ),
+    rowsById(
+      PlaceModel,
+      lots.map(({ placeId }) => placeId),
+    ),
     lotStops(lots),
   ]);
   const today = isoDay(new Date());
@@ -63,14 +69,19 @@ async function presentLots(lots: readonly LotModel[]): Promise<LotRow[]> {
 
 /** Substances of which less stands on the shelves, held and expired lots aside, than their low-stock point. */
 async function lowSubstances(): Promise<string[]> {
-  const watched = await SubstanceModel.findAll({ where: { lowStockMicro: { [Op.ne]: null } }, attributes: ['id', 'lowStockMicro'] });
+  const watched = await SubstanceModel.findAll({
+    where: { lowStockMicro: { [Op.ne]: null } },
+    attributes: ['id', 'lowStockMicro'],
+  });
   const sums = (await LotModel.findAll({
     attributes: ['substanceId', [fn('SUM', col('balanceMicro')), 'balanceMicro']],
     where: { heldAt: null, [Op.or]: [{ expiresOn: null }, { expiresOn: { [Op.gte]: isoDay(new Date()) } }] },
     group: ['substanceId'],
   })) as unknown as readonly { substanceId: string; balanceMicro: number }[];
   const usable = new Map(sums.map(({ substanceId, balanceMicro }) => [substanceId, Number(balanceMicro)]));
-  return watched.filter(({ id, lowStockMicro }) => (usable.get(id) ?? 0) < (lowStockMicro ?? 0)).map(({ id }) => id);
+  return watched
+    .filter(({ id, lowStockMicro }) => (usable.get(id) ?? 0) < (lowStockMicro ?? 0))
+    .map(({ id }) => id);
 }
 
 async function shownWhere(show: LotListQuery['show']): Promise<WhereOptions> {
@@ -100,8 +111,18 @@ export async function listLots(_viewer: Viewer, query: LotListQuery): Promise<Pa
   if (query.substanceId) conditions.push({ substanceId: query.substanceId });
   if (query.placeId) conditions.push({ placeId: query.placeId });
   if (query.search) {
-    const found = await SubstanceModel.findAll({ where: contains('searchText', query.search.toLowerCase()), attributes: ['id'], limit: MOST_FOUND });
-    conditions.push({ [Op.or]: [contains('code', query.search), contains('lotNumber', query.search), { substanceId: found.map(({ id }) => id) }] });
+    const found = await SubstanceModel.findAll({
+      where: contains('searchText', query.search.toLowerCase()),
+      attributes: ['id'],
+      limit: MOST_FOUND,
+    });
+    conditions.push({
+      [Op.or]: [
+        contains('code', query.search),
+        contains('lotNumber', query.search),
+        { substanceId: found.map(({ id }) => id) },
+      ],
+    });
   }
   const { rows, count } = await LotModel.findAndCountAll({
     where: { [Op.and]: conditions },
@@ -113,10 +134,18 @@ export async function listLots(_viewer: Viewer, query: LotListQuery): Promise<Pa
 }
 
 async function usedIn(lotId: string): Promise<Lot['usedIn']> {
-  const takes = (await BatchTakeModel.findAll({ where: { lotId }, order: [['enteredAt', 'ASC']] })).filter(({ actualMicro }) => actualMicro !== null);
+  const takes = (await BatchTakeModel.findAll({ where: { lotId }, order: [['enteredAt', 'ASC']] })).filter(
+    ({ actualMicro }) => actualMicro !== null,
+  );
   const batchIds = takes.map(({ batchId }) => batchId);
-  const [batches, bottles] = await Promise.all([rowsById(BatchModel, batchIds), BottleModel.findAll({ where: { batchId: batchIds } })]);
-  const solutions = await rowsById(SolutionModel, [...batches.values()].map(({ solutionId }) => solutionId));
+  const [batches, bottles] = await Promise.all([
+    rowsById(BatchModel, batchIds),
+    BottleModel.findAll({ where: { batchId: batchIds } }),
+  ]);
+  const solutions = await rowsById(
+    SolutionModel,
+    [...batches.values()].map(({ solutionId }) => solutionId),
+  );
   const bottlesOf = groupedBy(bottles, ({ batchId }) => batchId);
   return takes.flatMap((take) => {
     const batch = batches.get(take.batchId);
@@ -163,8 +192,13 @@ export async function getLot(_viewer: Viewer, id: string): Promise<Lot> {
 }
 
 /** What a lot can be of, by name. */
-export async function listStockable(_viewer: Viewer): Promise<{ id: string; name: string; unit: string; storageGroup: string }[]> {
-  const substances = await SubstanceModel.findAll({ attributes: ['id', 'name', 'unit', 'storageGroup'], order: [['name', 'ASC']] });
+export async function listStockable(
+  _viewer: Viewer,
+): Promise<{ id: string; name: string; unit: string; storageGroup: string }[]> {
+  const substances = await SubstanceModel.findAll({
+    attributes: ['id', 'name', 'unit', 'storageGroup'],
+    order: [['name', 'ASC']],
+  });
   return substances.map(({ id, name, unit, storageGroup }) => ({ id, name, unit, storageGroup }));
 }
 
@@ -195,7 +229,13 @@ export async function addLot(
     expiresOn: lot.expiresOn,
     placeId: lot.placeId,
   });
-  await move(viewer, { lotId: row.id, kind: 'received', amountMicro: lot.amountMicro, reason: lot.reason, receiptId: lot.receiptId });
+  await move(viewer, {
+    lotId: row.id,
+    kind: 'received',
+    amountMicro: lot.amountMicro,
+    reason: lot.reason,
+    receiptId: lot.receiptId,
+  });
   await record(viewer, {
     subjectType: 'lot',
     subjectId: row.id,
@@ -210,16 +250,35 @@ export async function addLot(
 /** Puts a lot on the shelf by hand. */
 export async function createLot(viewer: Viewer, input: LotCreate): Promise<Lot> {
   const id = await write(async () => {
-    const [substance, place] = await Promise.all([SubstanceModel.findByPk(input.substanceId), PlaceModel.findByPk(input.placeId)]);
+    const [substance, place] = await Promise.all([
+      SubstanceModel.findByPk(input.substanceId),
+      PlaceModel.findByPk(input.placeId),
+    ]);
     const errors = [
-      ...(substance ? [] : [{ pointer: '#/substanceId', detail: 'There is no such substance in the catalogue.' }]),
+      ...(substance
+        ? []
+        : [{ pointer: '#/substanceId', detail: 'There is no such substance in the catalogue.' }]),
       ...(place ? [] : [{ pointer: '#/placeId', detail: 'There is no such place.' }]),
-      ...(input.expiresOn !== null && input.expiresOn < input.receivedOn ? [{ pointer: '#/expiresOn', detail: 'It would have expired before it came.' }] : []),
-      ...(input.receivedOn > isoDay(new Date()) ? [{ pointer: '#/receivedOn', detail: 'This day is still to come.' }] : []),
+      ...(input.expiresOn !== null && input.expiresOn < input.receivedOn
+        ? [{ pointer: '#/expiresOn', detail: 'It would have expired before it came.' }]
+        : []),
+      ...(input.receivedOn > isoDay(new Date())
+        ? [{ pointer: '#/receivedOn', detail: 'This day is still to come.' }]
+        : []),
     ];
     if (!substance || errors.length > 0) throw invalid(errors);
     const { lotNumber, receivedOn, expiresOn, placeId, reason } = input;
-    const lot = await addLot(viewer, { substance, lotNumber, assayPercent: input.assayPercent ?? null, amountMicro: toMicro(input.amount), receivedOn, expiresOn, placeId, supplierId: null, reason });
+    const lot = await addLot(viewer, {
+      substance,
+      lotNumber,
+      assayPercent: input.assayPercent ?? null,
+      amountMicro: toMicro(input.amount),
+      receivedOn,
+      expiresOn,
+      placeId,
+      supplierId: null,
+      reason,
+    });
     return lot.id;
   });
   return getLot(viewer, id);
@@ -231,17 +290,41 @@ export async function updateLot(viewer: Viewer, id: string, patch: LotPatch): Pr
     const lot = await LotModel.findByPk(id);
     if (!lot) throw new DomainError('not-found', 'There is no such lot.');
     if (lot.version !== patch.version) refuseStale(lot, patch.version, await getLot(viewer, id));
-    if (!(await PlaceModel.findByPk(patch.placeId))) throw invalid([{ pointer: '#/placeId', detail: 'There is no such place.' }]);
+    if (!(await PlaceModel.findByPk(patch.placeId)))
+      throw invalid([{ pointer: '#/placeId', detail: 'There is no such place.' }]);
     const { placeId, openedOn, expiresOn, reason } = patch;
-    const before = { placeId: lot.placeId, assayPercent: lot.assayPercent, openedOn: lot.openedOn, expiresOn: lot.expiresOn };
-    await lot.update({ placeId, openedOn, expiresOn, assayPercent: patch.assayPercent ?? null, version: lot.version + 1 });
-    await record(viewer, { subjectType: 'lot', subjectId: id, subjectLabel: lot.code, action: 'changed', reason, detail: { before } });
+    const before = {
+      placeId: lot.placeId,
+      assayPercent: lot.assayPercent,
+      openedOn: lot.openedOn,
+      expiresOn: lot.expiresOn,
+    };
+    await lot.update({
+      placeId,
+      openedOn,
+      expiresOn,
+      assayPercent: patch.assayPercent ?? null,
+      version: lot.version + 1,
+    });
+    await record(viewer, {
+      subjectType: 'lot',
+      subjectId: id,
+      subjectLabel: lot.code,
+      action: 'changed',
+      reason,
+      detail: { before },
+    });
   });
   return getLot(viewer, id);
 }
 
 /** Puts a lot on hold or lifts the hold. */
-export async function setLotHold(viewer: Viewer, id: string, isHeld: boolean, about: LotReason): Promise<Lot> {
+export async function setLotHold(
+  viewer: Viewer,
+  id: string,
+  isHeld: boolean,
+  about: LotReason,
+): Promise<Lot> {
   await holdLot(viewer, id, { isHeld, ...about });
   return getLot(viewer, id);
 }

@@ -19,11 +19,23 @@ import { record } from './record';
 
 async function presentMovements(rows: readonly MovementModel[]): Promise<Movement[]> {
   const [lots, people, batches] = await Promise.all([
-    rowsById(LotModel, rows.map(({ lotId }) => lotId)),
-    rowsById(UserModel, rows.map(({ actorId }) => actorId)),
-    rowsById(BatchModel, rows.map(({ batchId }) => batchId)),
+    rowsById(
+      LotModel,
+      rows.map(({ lotId }) => lotId),
+    ),
+    rowsById(
+      UserModel,
+      rows.map(({ actorId }) => actorId),
+    ),
+    rowsById(
+      BatchModel,
+      rows.map(({ batchId }) => batchId),
+    ),
   ]);
-  const substances = await rowsById(SubstanceModel, [...lots.values()].map(({ substanceId }) => substanceId));
+  const substances = await rowsById(
+    SubstanceModel,
+    [...lots.values()].map(({ substanceId }) => substanceId),
+  );
   return rows.map((row) => {
     const lot = lots.get(row.lotId);
     if (!lot) throw new Error(`Movement ${row.id} lost its lot`);
@@ -52,7 +64,11 @@ export async function listMovements(_viewer: Viewer, query: MovementListQuery): 
   if (query.batchId) conditions.push({ batchId: query.batchId });
   if (query.kind) conditions.push({ kind: query.kind });
   if (query.search) {
-    const lots = await LotModel.findAll({ where: { [Op.or]: [contains('code', query.search), contains('substanceId', query.search)] }, attributes: ['id'], limit: 500 });
+    const lots = await LotModel.findAll({
+      where: { [Op.or]: [contains('code', query.search), contains('substanceId', query.search)] },
+      attributes: ['id'],
+      limit: 500,
+    });
     conditions.push({ [Op.or]: [contains('reason', query.search), { lotId: lots.map(({ id }) => id) }] });
   }
   const { rows, count } = await MovementModel.findAndCountAll({
@@ -80,14 +96,16 @@ export async function createMovement(viewer: Viewer, line: MovementCreate): Prom
     const lot = await LotModel.findByPk(line.lotId);
     if (!lot) throw invalid([{ pointer: '#/lotId', detail: 'There is no such lot.' }]);
     const amountMicro = changeOf(lot, line);
-    if (amountMicro === 0) throw invalid([{ pointer: '#/amount', detail: 'The ledger already says so; nothing was changed.' }]);
+    if (amountMicro === 0)
+      throw invalid([{ pointer: '#/amount', detail: 'The ledger already says so; nothing was changed.' }]);
     const kind = line.kind === 'counted' ? 'corrected' : line.kind;
     const row = await move(viewer, { lotId: lot.id, kind, amountMicro, reason: line.reason });
     await record(viewer, {
       subjectType: 'lot',
       subjectId: lot.id,
       subjectLabel: lot.code,
-      action: line.kind === 'counted' ? 'counted' : line.kind === 'discarded' ? 'partly discarded' : 'put back',
+      action:
+        line.kind === 'counted' ? 'counted' : line.kind === 'discarded' ? 'partly discarded' : 'put back',
       reason: line.reason,
       detail: { amountMicro, unit: lot.unit },
     });

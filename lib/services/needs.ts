@@ -33,7 +33,10 @@ const coverageKey = (requestId: string, solutionId: string): string => `${reques
 /** What covers the needs of these requests, by request and solution. Discarded batches and bottles cover nothing. */
 async function coverageOf(requestIds: readonly string[]): Promise<Map<string, Coverage[]>> {
   const links = await BatchRequestModel.findAll({ where: { requestId: [...requestIds] } });
-  const batches = await rowsById(BatchModel, links.map(({ batchId }) => batchId));
+  const batches = await rowsById(
+    BatchModel,
+    links.map(({ batchId }) => batchId),
+  );
   const bottles = groupedBy(
     await BottleModel.findAll({ where: { requestId: [...requestIds] } }),
     ({ batchId, requestId }) => `${batchId}:${requestId}`,
@@ -44,7 +47,9 @@ async function coverageOf(requestIds: readonly string[]): Promise<Map<string, Co
     if (!batch || batch.state === 'discarded') continue;
     const isBottled = batch.state === 'bottled' || batch.state === 'spent';
     const own = bottles.get(`${link.batchId}:${link.requestId}`) ?? [];
-    const bottledMl = own.filter(({ state }) => state !== 'discarded').reduce((sum, { volumeMl }) => sum + volumeMl, 0);
+    const bottledMl = own
+      .filter(({ state }) => state !== 'discarded')
+      .reduce((sum, { volumeMl }) => sum + volumeMl, 0);
     const key = coverageKey(link.requestId, batch.solutionId);
     const volumeMl = isBottled ? bottledMl : link.volumeMl;
     coverage.set(key, [...(coverage.get(key) ?? []), { batch, volumeMl, isBottled }]);
@@ -55,7 +60,10 @@ async function coverageOf(requestIds: readonly string[]): Promise<Map<string, Co
 /** The frozen plans that requests are agreed on, by request. */
 export async function plansOf(requests: readonly RequestModel[]): Promise<Map<string, RequestPlan>> {
   const hashes = new Map(requests.flatMap(({ id, planHash }) => (planHash ? [[id, planHash]] : [])));
-  const plans = await PlanModel.findAll({ where: { requestId: [...hashes.keys()] }, order: [['createdAt', 'ASC']] });
+  const plans = await PlanModel.findAll({
+    where: { requestId: [...hashes.keys()] },
+    order: [['createdAt', 'ASC']],
+  });
   return new Map(
     plans
       .filter(({ requestId, hash }) => hashes.get(requestId) === hash)
@@ -78,10 +86,15 @@ export async function needsOf(requests: readonly RequestModel[]): Promise<Need[]
   const ids = requests.map(({ id }) => id);
   const [plans, sessions, coverage] = await Promise.all([
     plansOf(requests),
-    rowsById(SessionModel, requests.map(({ sessionId }) => sessionId)),
+    rowsById(
+      SessionModel,
+      requests.map(({ sessionId }) => sessionId),
+    ),
     coverageOf(ids),
   ]);
-  const planned = [...plans.values()].flatMap(({ solutions }) => solutions.map(({ solutionId }) => solutionId));
+  const planned = [...plans.values()].flatMap(({ solutions }) =>
+    solutions.map(({ solutionId }) => solutionId),
+  );
   const solutions = await rowsById(SolutionModel, planned);
   const today = isoDay(new Date());
   return requests.flatMap((request) => {
@@ -112,7 +125,12 @@ export async function needsOf(requests: readonly RequestModel[]): Promise<Need[]
           makeBy,
           readyBy: readyBy.toISOString(),
           isLate: makeBy < today,
-          batches: covers.map(({ batch, volumeMl: coverMl }) => ({ id: batch.id, code: batch.code, state: batch.state, volumeMl: coverMl })),
+          batches: covers.map(({ batch, volumeMl: coverMl }) => ({
+            id: batch.id,
+            code: batch.code,
+            state: batch.state,
+            volumeMl: coverMl,
+          })),
         },
       ];
     });
@@ -125,7 +143,9 @@ export async function isAllBottled(request: RequestModel): Promise<boolean> {
   if (!plan || plan.solutions.length === 0) return false;
   const coverage = await coverageOf([request.id]);
   return plan.solutions.every(({ solutionId, volumeMl }) => {
-    const bottled = (coverage.get(coverageKey(request.id, solutionId)) ?? []).filter(({ isBottled }) => isBottled);
+    const bottled = (coverage.get(coverageKey(request.id, solutionId)) ?? []).filter(
+      ({ isBottled }) => isBottled,
+    );
     return bottled.reduce((sum, cover) => sum + cover.volumeMl, 0) >= volumeMl - SAME_VOLUME_ML;
   });
 }
@@ -143,7 +163,10 @@ const SORTS: Readonly<Record<string, (a: Need, b: Need) => number>> = {
  */
 export async function listNeeds(_viewer: Viewer, query: NeedListQuery): Promise<Page<Need>> {
   const states: RequestState[] = ['agreed', 'in-work'];
-  const requests = await RequestModel.findAll({ where: { state: states, ...(query.requestId ? { id: query.requestId } : {}) }, order: [['id', 'ASC']] });
+  const requests = await RequestModel.findAll({
+    where: { state: states, ...(query.requestId ? { id: query.requestId } : {}) },
+    order: [['id', 'ASC']],
+  });
   const text = query.search.toLowerCase();
   const column = query.sort.replace('-', '');
   const sort = SORTS[column] ?? SORTS.makeBy;
@@ -152,7 +175,9 @@ export async function listNeeds(_viewer: Viewer, query: NeedListQuery): Promise<
     .filter((need) => query.show === 'all' || need.openMl > 0)
     .filter((need) => !query.solutionId || need.solutionId === query.solutionId)
     .filter((need) => !query.until || need.makeBy <= query.until)
-    .filter(({ solutionName, requestCode, session }) => `${solutionName} ${requestCode} ${session}`.toLowerCase().includes(text))
+    .filter(({ solutionName, requestCode, session }) =>
+      `${solutionName} ${requestCode} ${session}`.toLowerCase().includes(text),
+    )
     .sort((a, b) => sign * (sort?.(a, b) ?? 0));
   const { page, pageSize } = query;
   return { items: needs.slice((page - 1) * pageSize, page * pageSize), total: needs.length, page, pageSize };

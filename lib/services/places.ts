@@ -24,8 +24,16 @@ export async function receivedMicro(lotIds: readonly string[]): Promise<Map<stri
 
 /** Cabinets, shelves and safes, room by room. */
 export async function listPlaces(_viewer: Viewer): Promise<{ items: Place[] }> {
-  const places = await PlaceModel.findAll({ order: [['position', 'ASC'], ['name', 'ASC']] });
-  const rooms = await rowsById(RoomModel, places.map(({ roomId }) => roomId));
+  const places = await PlaceModel.findAll({
+    order: [
+      ['position', 'ASC'],
+      ['name', 'ASC'],
+    ],
+  });
+  const rooms = await rowsById(
+    RoomModel,
+    places.map(({ roomId }) => roomId),
+  );
   const items = places.map(({ id, roomId, name, kind, storageGroup, position }) => ({
     id,
     roomId,
@@ -35,15 +43,26 @@ export async function listPlaces(_viewer: Viewer): Promise<{ items: Place[] }> {
     storageGroup,
     position,
   }));
-  return { items: items.sort((a, b) => a.roomName.localeCompare(b.roomName, 'en') || a.position - b.position) };
+  return {
+    items: items.sort((a, b) => a.roomName.localeCompare(b.roomName, 'en') || a.position - b.position),
+  };
 }
 
 /** Every place with what stands in it. */
 export async function listShelves(viewer: Viewer): Promise<Shelf[]> {
   const { items } = await listPlaces(viewer);
-  const lots = await LotModel.findAll({ where: { balanceMicro: { [Op.gt]: 0 } }, order: [['substanceId', 'ASC'], ['expiresOn', 'ASC']] });
+  const lots = await LotModel.findAll({
+    where: { balanceMicro: { [Op.gt]: 0 } },
+    order: [
+      ['substanceId', 'ASC'],
+      ['expiresOn', 'ASC'],
+    ],
+  });
   const [substances, received, stops] = await Promise.all([
-    rowsById(SubstanceModel, lots.map(({ substanceId }) => substanceId)),
+    rowsById(
+      SubstanceModel,
+      lots.map(({ substanceId }) => substanceId),
+    ),
     receivedMicro(lots.map(({ id }) => id)),
     lotStops(lots),
   ]);

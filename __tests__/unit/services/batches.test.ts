@@ -1,7 +1,14 @@
 import { addDays, formatISO } from 'date-fns';
 import { toMicro } from '@/lib/domain/quantities';
 import type { Batch } from '@/lib/schemas/batches';
-import { checkBatch, discardBatch, enterTake, setBatchHold, startBatch, tickStep } from '@/lib/services/batch-making';
+import {
+  checkBatch,
+  discardBatch,
+  enterTake,
+  setBatchHold,
+  startBatch,
+  tickStep,
+} from '@/lib/services/batch-making';
 import { createBatch } from '@/lib/services/batch-planning';
 import { getBatch, listBatches } from '@/lib/services/batches';
 import { findPublicBottle, labelsOfBatch } from '@/lib/services/bottle-labels';
@@ -15,7 +22,13 @@ import { MovementModel } from '@/models/movement';
 import { RecordEntryModel } from '@/models/record-entry';
 import { RequestModel } from '@/models/request';
 import { ShortageModel } from '@/models/shortage';
-import { buildAgreedRequest, buildLot, buildPerson, buildSolution, openPrepRoom } from '../../support/prep-room';
+import {
+  buildAgreedRequest,
+  buildLot,
+  buildPerson,
+  buildSolution,
+  openPrepRoom,
+} from '../../support/prep-room';
 import type { PrepRoom } from '../../support/prep-room';
 
 let house: PrepRoom;
@@ -25,7 +38,14 @@ beforeAll(async () => {
 afterAll(() => house.close());
 
 const day = (offset: number) => formatISO(addDays(new Date(), offset), { representation: 'date' });
-const ALL_NEEDS = { page: 1, pageSize: 200, sort: 'makeBy', search: '', format: 'json', show: 'all' } as const;
+const ALL_NEEDS = {
+  page: 1,
+  pageSize: 200,
+  sort: 'makeBy',
+  search: '',
+  format: 'json',
+  show: 'all',
+} as const;
 const stateOf = async (id: string) => (await RequestModel.findByPk(id, { rejectOnEmpty: true })).state;
 const balanceOf = async (id: string) => (await LotModel.findByPk(id, { rejectOnEmpty: true })).balanceMicro;
 
@@ -34,11 +54,20 @@ const NACL = 22.99 + 35.45;
 const COPPER_SULFATE_PENTAHYDRATE = 63.546 + 32.06 + 9 * 15.999 + 10 * 1.008;
 
 /** A planned batch of one solution for one request of its own. */
-async function planOne(about: { substanceId?: string; molarity?: number; volumeMl?: number; conditions?: string[] } = {}) {
-  const solution = await buildSolution({ substanceId: about.substanceId ?? 'sodium-chloride', molarity: about.molarity ?? 0.1 });
+async function planOne(
+  about: { substanceId?: string; molarity?: number; volumeMl?: number; conditions?: string[] } = {},
+) {
+  const solution = await buildSolution({
+    substanceId: about.substanceId ?? 'sodium-chloride',
+    molarity: about.molarity ?? 0.1,
+  });
   const volumeMl = about.volumeMl ?? 500;
   const request = await buildAgreedRequest(house, [{ solution, volumeMl }], { conditions: about.conditions });
-  const batch = await createBatch(house.prep, { solutionId: solution.id, requestIds: [request.id], makeOn: day(0) }, null);
+  const batch = await createBatch(
+    house.prep,
+    { solutionId: solution.id, requestIds: [request.id], makeOn: day(0) },
+    null,
+  );
   return { solution, request, batch };
 }
 
@@ -50,7 +79,11 @@ async function started(batch: Batch): Promise<Batch> {
 async function madeAsPlanned(batch: Batch): Promise<Batch> {
   const making = batch.state === 'planned' ? await started(batch) : batch;
   for (const take of making.takes) {
-    await enterTake(house.prep, batch.id, take.id, { amount: take.target, explanation: '', version: take.version });
+    await enterTake(house.prep, batch.id, take.id, {
+      amount: take.target,
+      explanation: '',
+      version: take.version,
+    });
   }
   for (const step of making.steps) await tickStep(house.prep, batch.id, step.id, true);
   return getBatch(house.prep, batch.id);
@@ -68,19 +101,42 @@ describe('needs', () => {
     const request = await buildAgreedRequest(house, [{ solution, volumeMl: 750 }], { inDays: 5 });
     const [before] = (await listNeeds(house.prep, { ...ALL_NEEDS, requestId: request.id })).items;
     expect(before).toMatchObject({ neededMl: 750, coveredMl: 0, openMl: 750, notBefore: day(2) });
-    const early = createBatch(house.prep, { solutionId: solution.id, requestIds: [request.id], makeOn: day(1) }, null);
-    await expect(early).rejects.toMatchObject({ code: 'invalid', extra: { errors: [{ pointer: '#/makeOn' }] } });
-    await createBatch(house.prep, { solutionId: solution.id, requestIds: [request.id], makeOn: day(3) }, null);
+    const early = createBatch(
+      house.prep,
+      { solutionId: solution.id, requestIds: [request.id], makeOn: day(1) },
+      null,
+    );
+    await expect(early).rejects.toMatchObject({
+      code: 'invalid',
+      extra: { errors: [{ pointer: '#/makeOn' }] },
+    });
+    await createBatch(
+      house.prep,
+      { solutionId: solution.id, requestIds: [request.id], makeOn: day(3) },
+      null,
+    );
     const [after] = (await listNeeds(house.prep, { ...ALL_NEEDS, requestId: request.id })).items;
     expect(after).toMatchObject({ coveredMl: 750, openMl: 0 });
-    expect((await listNeeds(house.prep, { ...ALL_NEEDS, show: 'open', requestId: request.id })).total).toBe(0);
+    expect((await listNeeds(house.prep, { ...ALL_NEEDS, show: 'open', requestId: request.id })).total).toBe(
+      0,
+    );
   });
 });
 
 describe('planning a batch', () => {
   it('takes from the usable lot that expires first and corrects the target for its assay', async () => {
-    await buildLot(house, { substanceId: 'potassium-chloride', amount: 100, assayPercent: 99.9, expiresInDays: 200 });
-    const soon = await buildLot(house, { substanceId: 'potassium-chloride', amount: 100, assayPercent: 98, expiresInDays: 20 });
+    await buildLot(house, {
+      substanceId: 'potassium-chloride',
+      amount: 100,
+      assayPercent: 99.9,
+      expiresInDays: 200,
+    });
+    const soon = await buildLot(house, {
+      substanceId: 'potassium-chloride',
+      amount: 100,
+      assayPercent: 98,
+      expiresInDays: 20,
+    });
     await buildLot(house, { substanceId: 'potassium-chloride', amount: 100, expiresInDays: -1 });
     const { batch } = await planOne({ substanceId: 'potassium-chloride' });
     expect(batch.takes).toHaveLength(1);
@@ -109,7 +165,9 @@ describe('planning a batch', () => {
     expect(await BatchModel.count({ where: { solutionId: solution.id } })).toBe(1);
     expect(once.volumeMl).toBe(500);
     expect([await stateOf(first.id), await stateOf(second.id)]).toEqual(['in-work', 'in-work']);
-    await expect(createBatch(house.prep, input, 'intention-0002')).rejects.toMatchObject({ code: 'wrong-state' });
+    await expect(createBatch(house.prep, input, 'intention-0002')).rejects.toMatchObject({
+      code: 'wrong-state',
+    });
   });
 
   it('plans nothing where the shelves hold too little, and tells purchasing what is short', async () => {
@@ -118,7 +176,10 @@ describe('planning a batch', () => {
     const request = await buildAgreedRequest(house, [{ solution, volumeMl: 1000 }]);
     const input = { solutionId: solution.id, requestIds: [request.id], makeOn: day(0) };
     for (const key of ['short-0001', 'short-0002']) {
-      await expect(createBatch(house.prep, input, key)).rejects.toMatchObject({ code: 'not-enough', message: expect.stringContaining('ickel') });
+      await expect(createBatch(house.prep, input, key)).rejects.toMatchObject({
+        code: 'not-enough',
+        message: expect.stringContaining('ickel'),
+      });
     }
     expect(await stateOf(request.id)).toBe('agreed');
     expect(await BatchModel.count({ where: { solutionId: solution.id } })).toBe(0);
@@ -127,6 +188,9 @@ describe('planning a batch', () => {
     expect(shortages[0]).toMatchObject({ substanceId: 'nickel-sulfate', unit: 'g', state: 'open' });
     // NiSO4·6H2O 262.84 g/mol: 26.28 g wanted, 4 g there.
     expect((shortages[0]?.neededMicro ?? 0) / 1e6).toBeCloseTo(22.28, 1);
+    await buildLot(house, { substanceId: 'nickel-sulfate', amount: 100, assayPercent: 100 });
+    await createBatch(house.prep, input, 'short-0001');
+    expect((await ShortageModel.findOne({ where: { requestId: request.id } }))?.state).toBe('covered');
   });
 
   it('does not count the same stock on for two batches', async () => {
@@ -139,12 +203,22 @@ describe('planning a batch', () => {
     const solution = await buildSolution({ substanceId: 'sodium-chloride', molarity: 0.4 });
     const other = await buildSolution({ substanceId: 'sodium-chloride', molarity: 0.5 });
     const request = await buildAgreedRequest(house, [{ solution, volumeMl: 100 }]);
-    await expect(createBatch(house.prep, { solutionId: other.id, requestIds: [request.id], makeOn: day(0) }, null)).rejects.toMatchObject({ code: 'invalid' });
-    await expect(createBatch(house.prep, { solutionId: solution.id, requestIds: [request.id], makeOn: day(0), volumeMl: 50 }, null)).rejects.toMatchObject({
+    await expect(
+      createBatch(house.prep, { solutionId: other.id, requestIds: [request.id], makeOn: day(0) }, null),
+    ).rejects.toMatchObject({ code: 'invalid' });
+    await expect(
+      createBatch(
+        house.prep,
+        { solutionId: solution.id, requestIds: [request.id], makeOn: day(0), volumeMl: 50 },
+        null,
+      ),
+    ).rejects.toMatchObject({
       extra: { errors: [{ pointer: '#/volumeMl' }] },
     });
     await request.update({ state: 'in-review' });
-    await expect(createBatch(house.prep, { solutionId: solution.id, requestIds: [request.id], makeOn: day(0) }, null)).rejects.toMatchObject({ code: 'wrong-state' });
+    await expect(
+      createBatch(house.prep, { solutionId: solution.id, requestIds: [request.id], makeOn: day(0) }, null),
+    ).rejects.toMatchObject({ code: 'wrong-state' });
   });
 });
 
@@ -167,9 +241,14 @@ describe('making a batch', () => {
     const [take] = (await started(batch)).takes;
     if (!take) throw new Error('no line');
     await enterTake(house.prep, batch.id, take.id, { amount: take.target, explanation: '', version: 0 });
-    await expect(enterTake(house.prep, batch.id, take.id, { amount: take.low, explanation: '', version: 0 })).rejects.toMatchObject({ code: 'conflict' });
+    await expect(
+      enterTake(house.prep, batch.id, take.id, { amount: take.low, explanation: '', version: 0 }),
+    ).rejects.toMatchObject({ code: 'conflict' });
     await enterTake(house.prep, batch.id, take.id, { amount: take.low, explanation: '', version: 1 });
-    const lines = await MovementModel.findAll({ where: { batchId: batch.id }, order: [['createdAt', 'ASC']] });
+    const lines = await MovementModel.findAll({
+      where: { batchId: batch.id },
+      order: [['createdAt', 'ASC']],
+    });
     expect(lines.map(({ kind }) => kind).sort()).toEqual(['corrected', 'taken', 'taken']);
     expect(await balanceOf(lot.id)).toBe(toMicro(100) - toMicro(take.low));
   });
@@ -179,9 +258,14 @@ describe('making a batch', () => {
     const [take] = (await started(batch)).takes;
     if (!take) throw new Error('no line');
     const entry = { amount: take.target * 1.015, version: take.version };
-    await expect(enterTake(house.prep, batch.id, take.id, { ...entry, explanation: '' })).rejects.toMatchObject({ code: 'invalid', extra: { errors: [{ pointer: '#/explanation' }] } });
+    await expect(
+      enterTake(house.prep, batch.id, take.id, { ...entry, explanation: '' }),
+    ).rejects.toMatchObject({ code: 'invalid', extra: { errors: [{ pointer: '#/explanation' }] } });
     expect(await MovementModel.count({ where: { batchId: batch.id } })).toBe(0);
-    const after = await enterTake(house.prep, batch.id, take.id, { ...entry, explanation: 'Spatula slipped' });
+    const after = await enterTake(house.prep, batch.id, take.id, {
+      ...entry,
+      explanation: 'Spatula slipped',
+    });
     expect(after.takes[0]).toMatchObject({ verdict: 'explain', explanation: 'Spatula slipped' });
   });
 
@@ -190,14 +274,20 @@ describe('making a batch', () => {
     const condition = batch.steps.find(({ kind }) => kind === 'condition');
     expect(condition?.text).toContain('Fume cupboard 2 only');
     const making = await started(batch);
-    await expect(checkBatch(house.prep, batch.id, { note: '', version: making.version })).rejects.toMatchObject({ code: 'wrong-state' });
+    await expect(
+      checkBatch(house.prep, batch.id, { note: '', version: making.version }),
+    ).rejects.toMatchObject({ code: 'wrong-state' });
     const made = await madeAsPlanned(making);
     await tickStep(house.prep, batch.id, condition?.id ?? '', false);
-    await expect(checkBatch(house.prep, batch.id, { note: '', version: made.version })).rejects.toMatchObject({ message: expect.stringContaining('Fume cupboard 2 only') });
+    await expect(checkBatch(house.prep, batch.id, { note: '', version: made.version })).rejects.toMatchObject(
+      { message: expect.stringContaining('Fume cupboard 2 only') },
+    );
     await tickStep(house.prep, batch.id, condition?.id ?? '', true);
     const done = await checkBatch(house.prep, batch.id, { note: '', version: made.version });
     expect(done.state).toBe('checked');
-    expect(await RecordEntryModel.count({ where: { subjectId: batch.id, action: 'condition met' } })).toBeGreaterThan(0);
+    expect(
+      await RecordEntryModel.count({ where: { subjectId: batch.id, action: 'condition met' } }),
+    ).toBeGreaterThan(0);
   });
 
   it('states the real strength with its uncertainty: c = m w / (M V)', async () => {
@@ -221,9 +311,15 @@ describe('making a batch', () => {
     const making = await started(batch);
     const [take] = making.takes;
     if (!take) throw new Error('no line');
-    await enterTake(house.prep, batch.id, take.id, { amount: take.target * 1.2, explanation: 'Wrong mark', version: take.version });
+    await enterTake(house.prep, batch.id, take.id, {
+      amount: take.target * 1.2,
+      explanation: 'Wrong mark',
+      version: take.version,
+    });
     for (const step of making.steps) await tickStep(house.prep, batch.id, step.id, true);
-    await expect(checkBatch(house.prep, batch.id, { note: 'Known', version: making.version })).rejects.toMatchObject({ code: 'wrong-state', message: expect.stringContaining('make it again') });
+    await expect(
+      checkBatch(house.prep, batch.id, { note: 'Known', version: making.version }),
+    ).rejects.toMatchObject({ code: 'wrong-state', message: expect.stringContaining('make it again') });
     const now = await getBatch(house.prep, batch.id);
     await discardBatch(house.prep, batch.id, { reason: 'Too strong', version: now.version });
     const [need] = (await listNeeds(house.prep, { ...ALL_NEEDS, requestId: request.id })).items;
@@ -235,39 +331,71 @@ describe('bottles', () => {
   it('make the request ready when all stands bottled, and handed over when all left', async () => {
     const { batch, request } = await planOne();
     const done = await checked(batch);
-    await expect(bottleBatch(house.prep, batch.id, { bottles: [{ volumeMl: 600, requestId: request.id }], version: done.version })).rejects.toMatchObject({ code: 'invalid' });
-    const bottled = await bottleBatch(house.prep, batch.id, { bottles: [{ volumeMl: 250, requestId: request.id }, { volumeMl: 250, requestId: request.id }], version: done.version });
+    await expect(
+      bottleBatch(house.prep, batch.id, {
+        bottles: [{ volumeMl: 600, requestId: request.id }],
+        version: done.version,
+      }),
+    ).rejects.toMatchObject({ code: 'invalid' });
+    const bottled = await bottleBatch(house.prep, batch.id, {
+      bottles: [
+        { volumeMl: 250, requestId: request.id },
+        { volumeMl: 250, requestId: request.id },
+      ],
+      version: done.version,
+    });
     expect(bottled.bottles.map(({ code }) => code)).toEqual([`${batch.code}/1`, `${batch.code}/2`]);
     expect(new Set(bottled.bottles.map(({ publicToken }) => publicToken)).size).toBe(2);
     expect(await stateOf(request.id)).toBe('ready');
     const [one, two] = bottled.bottles;
-    expect((await handOver(house.prep, { requestId: request.id, bottleIds: [one?.id ?? ''] })).requestState).toBe('ready');
-    expect((await handOver(house.prep, { requestId: request.id, bottleIds: [two?.id ?? ''] })).requestState).toBe('handed-over');
+    expect(
+      (await handOver(house.prep, { requestId: request.id, bottleIds: [one?.id ?? ''] })).requestState,
+    ).toBe('ready');
+    expect(
+      (await handOver(house.prep, { requestId: request.id, bottleIds: [two?.id ?? ''] })).requestState,
+    ).toBe('handed-over');
   });
 
   it('stay where they are while their lot is on hold, and are found from it', async () => {
     const lot = await buildLot(house, { substanceId: 'zinc-sulfate', amount: 100, assayPercent: 100 });
     const { batch, request } = await planOne({ substanceId: 'zinc-sulfate' });
     const done = await checked(batch);
-    const bottled = await bottleBatch(house.prep, batch.id, { bottles: [{ volumeMl: 500, requestId: request.id }], version: done.version });
+    const bottled = await bottleBatch(house.prep, batch.id, {
+      bottles: [{ volumeMl: 500, requestId: request.id }],
+      version: done.version,
+    });
     const bottleIds = bottled.bottles.map(({ id }) => id);
     const before = await getLot(house.prep, lot.id);
     expect(before.usedIn[0]?.bottleCodes).toEqual([`${batch.code}/1`]);
-    const held = await setLotHold(house.safety, lot.id, true, { reason: 'Certificate doubted', version: before.version });
-    await expect(handOver(house.prep, { requestId: request.id, bottleIds })).rejects.toMatchObject({ message: expect.stringContaining('Certificate doubted') });
+    const held = await setLotHold(house.safety, lot.id, true, {
+      reason: 'Certificate doubted',
+      version: before.version,
+    });
+    await expect(handOver(house.prep, { requestId: request.id, bottleIds })).rejects.toMatchObject({
+      message: expect.stringContaining('Certificate doubted'),
+    });
     expect((await getBatch(house.prep, batch.id)).isHeld).toBe(true);
     const token = bottled.bottles[0]?.publicToken ?? '';
     expect(await findPublicBottle(token)).toMatchObject({ kind: 'bottle', isHeld: true });
     await setLotHold(house.safety, lot.id, false, { reason: 'Certificate came', version: held.version });
-    expect((await handOver(house.prep, { requestId: request.id, bottleIds })).requestState).toBe('handed-over');
+    expect((await handOver(house.prep, { requestId: request.id, bottleIds })).requestState).toBe(
+      'handed-over',
+    );
   });
 
   it('that are discarded put the request back to work', async () => {
     const { batch, request } = await planOne();
     const done = await checked(batch);
-    const bottled = await bottleBatch(house.prep, batch.id, { bottles: [{ volumeMl: 500, requestId: request.id }], version: done.version });
+    const bottled = await bottleBatch(house.prep, batch.id, {
+      bottles: [{ volumeMl: 500, requestId: request.id }],
+      version: done.version,
+    });
     const [bottle] = bottled.bottles;
-    await changeBottle(house.prep, bottle?.id ?? '', { state: 'discarded', reason: 'Dropped', version: bottle?.version ?? 0 });
+    await changeBottle(house.prep, bottle?.id ?? '', {
+      state: 'discarded',
+      reason: 'Dropped',
+      version: bottle?.version ?? 0,
+    });
     expect(await stateOf(request.id)).toBe('in-work');
     expect((await getBatch(house.prep, batch.id)).state).toBe('spent');
   });
@@ -275,14 +403,19 @@ describe('bottles', () => {
   it('carry a label of the solution as diluted; a revoked address says nothing more', async () => {
     const { batch, request } = await planOne();
     const done = await checked(batch);
-    const bottled = await bottleBatch(house.prep, batch.id, { bottles: [{ volumeMl: 500, requestId: request.id }], version: done.version });
+    const bottled = await bottleBatch(house.prep, batch.id, {
+      bottles: [{ volumeMl: 500, requestId: request.id }],
+      version: done.version,
+    });
     const [bottle] = bottled.bottles;
     if (!bottle) throw new Error('no bottle');
     const [label] = (await labelsOfBatch(house.prep, batch.id)).labels;
     expect(label?.address).toMatch(new RegExp(`/b/${bottle.publicToken}$`));
     expect(label?.classification.hazards).toEqual([]);
     await printLabels(house.prep, { bottleIds: [bottle.id], reason: '' });
-    await expect(printLabels(house.prep, { bottleIds: [bottle.id], reason: '' })).rejects.toMatchObject({ code: 'invalid' });
+    await expect(printLabels(house.prep, { bottleIds: [bottle.id], reason: '' })).rejects.toMatchObject({
+      code: 'invalid',
+    });
     await revokeBottle(house.prep, bottle.id, { reason: 'Label lost', version: bottle.version });
     expect(await findPublicBottle(bottle.publicToken)).toMatchObject({ kind: 'revoked' });
     expect(await findPublicBottle('no-such-token')).toBeNull();
@@ -293,10 +426,15 @@ describe('holds and sight', () => {
   it('a held batch takes no entries and no bottles until the hold is lifted', async () => {
     const { batch } = await planOne();
     const making = await started(batch);
-    const held = await setBatchHold(house.safety, batch.id, true, { reason: 'Spill', version: making.version });
+    const held = await setBatchHold(house.safety, batch.id, true, {
+      reason: 'Spill',
+      version: making.version,
+    });
     const [take] = making.takes;
     const entry = { amount: take?.target ?? 1, explanation: '', version: 0 };
-    await expect(enterTake(house.prep, batch.id, take?.id ?? '', entry)).rejects.toMatchObject({ code: 'wrong-state' });
+    await expect(enterTake(house.prep, batch.id, take?.id ?? '', entry)).rejects.toMatchObject({
+      code: 'wrong-state',
+    });
     await setBatchHold(house.safety, batch.id, false, { reason: 'Cleaned', version: held.version });
     await expect(enterTake(house.prep, batch.id, take?.id ?? '', entry)).resolves.toBeDefined();
   });

@@ -11,7 +11,8 @@ import { listBatches } from '@/lib/services/batches';
 
 export const metadata: Metadata = { title: 'Batches' };
 
-const count = (number: number, one: string, many: string) => `${number === 0 ? 'No' : number} ${number === 1 ? one : many}`;
+const count = (number: number, one: string, many: string) =>
+  `${number === 0 ? 'No' : number} ${number === 1 ? one : many}`;
 
 export default async function BatchesPage() {
   const viewer = await pageViewer('batch:list');

@@ -10,7 +10,11 @@ import { Moment } from '@/components/ui/moment';
 import { findPublicBottle } from '@/lib/services/bottle-labels';
 import type { PublicBottle } from '@/lib/services/bottle-labels';
 
-export const metadata: Metadata = { title: 'Bottle', robots: { index: false, follow: false }, referrer: 'no-referrer' };
+export const metadata: Metadata = {
+  title: 'Bottle',
+  robots: { index: false, follow: false },
+  referrer: 'no-referrer',
+};
 
 const TOKEN = /^[\w-]{20,60}$/;
 
@@ -39,9 +43,18 @@ function Known({ bottle }: { readonly bottle: Extract<PublicBottle, { kind: 'bot
           <SoluteLine solutes={label.solutes} />
         </p>
         <p className="mt-1 mb-5">
-          Bottle <span className="font-mono font-bold">{label.bottleCode}</span>, <Amount value={label.volumeMl} unit="mL" />
-          {label.madeAt && <>, made <Moment at={label.madeAt} style="short-day" /></>}
-          {label.useBy && <>, use by <Moment at={label.useBy} style="short-day" /></>}
+          Bottle <span className="font-mono font-bold">{label.bottleCode}</span>,{' '}
+          <Amount value={label.volumeMl} unit="mL" />
+          {label.madeAt && (
+            <>
+              , made <Moment at={label.madeAt} style="short-day" />
+            </>
+          )}
+          {label.useBy && (
+            <>
+              , use by <Moment at={label.useBy} style="short-day" />
+            </>
+          )}
         </p>
         <HazardBlock classification={label.classification} />
       </article>
@@ -57,7 +70,10 @@ function Revoked({ house }: { readonly house: Extract<PublicBottle, { kind: 'rev
   return (
     <>
       <h1 className="rule-double mb-4 pb-2 text-3xl">This label is no longer valid</h1>
-      <p className="text-lg">Its address was revoked, so nothing is said here about what the bottle holds. Treat it as unknown and hazardous: do not open it, do not use it, keep others away.</p>
+      <p className="text-lg">
+        Its address was revoked, so nothing is said here about what the bottle holds. Treat it as unknown and
+        hazardous: do not open it, do not use it, keep others away.
+      </p>
       <Contact house={house} />
     </>
   );

@@ -25,6 +25,7 @@ export default async function BatchPage({ params }: PageProps<'/batches/[id]'>) 
         initial={batch}
         mayWrite={mayByRole(viewer, 'batch:write')}
         mayHold={mayByRole(viewer, 'stock:hold')}
+        maySeeStock={mayByRole(viewer, 'stock:read')}
         qr={<QrSquare text={batch.address} label={`Opens the sheet of ${batch.code}`} sizeMm={QR_MM} />}
         hazards={<HazardBlock classification={batch.classification} />}
       />

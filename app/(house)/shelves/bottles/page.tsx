@@ -9,7 +9,14 @@ export const metadata: Metadata = { title: 'Bottles' };
 
 export default async function BottlesPage() {
   const viewer = await pageViewer('stock:read');
-  const { total } = await listBottles(viewer, { page: 1, pageSize: 1, sort: '-code', search: '', format: 'json', state: 'filled' });
+  const { total } = await listBottles(viewer, {
+    page: 1,
+    pageSize: 1,
+    sort: '-code',
+    search: '',
+    format: 'json',
+    state: 'filled',
+  });
   return (
     <>
       <PageHeader title={`${total} ${total === 1 ? 'bottle stands' : 'bottles stand'} in the prep room`} />

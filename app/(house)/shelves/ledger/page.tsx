@@ -10,7 +10,10 @@ export default async function LedgerPage() {
   await pageViewer('stock:read');
   return (
     <>
-      <PageHeader title="Everything that came in and went out" lead="Lines are never changed; a mistake is put right by a further line." />
+      <PageHeader
+        title="Everything that came in and went out"
+        lead="Lines are never changed; a mistake is put right by a further line."
+      />
       <ShelfNav current="Ledger" />
       <MovementList />
     </>

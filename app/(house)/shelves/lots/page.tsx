@@ -23,7 +23,11 @@ export default async function LotsPage() {
     <>
       <PageHeader
         title={`${inStock.total} lots in stock: ${expiring.total} expire within 30 days, ${held.total} on hold`}
-        actions={mayByRole(viewer, 'stock:write') ? <LinkButton href="/shelves/lots/new">Put a lot on the shelf</LinkButton> : null}
+        actions={
+          mayByRole(viewer, 'stock:write') ? (
+            <LinkButton href="/shelves/lots/new">Put a lot on the shelf</LinkButton>
+          ) : null
+        }
       />
       <ShelfNav current="Lots" />
       <LotList places={places} />

@@ -3,4 +3,6 @@ import { lotEndpoints } from '@/lib/schemas/lots';
 import { getLot, updateLot } from '@/lib/services/lots';
 
 export const GET = route(lotEndpoints.read, ({ viewer, params }) => getLot(viewer, params.id));
-export const PATCH = route(lotEndpoints.update, ({ viewer, params, body }) => updateLot(viewer, params.id, body));
+export const PATCH = route(lotEndpoints.update, ({ viewer, params, body }) =>
+  updateLot(viewer, params.id, body),
+);

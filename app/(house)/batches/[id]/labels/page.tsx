@@ -13,7 +13,10 @@ export const metadata: Metadata = { title: 'Labels' };
 export default async function LabelsPage({ params }: PageProps<'/batches/[id]/labels'>) {
   const viewer = await pageViewer('batch:write');
   const { id } = await params;
-  const [batch, { labels }] = await Promise.all([load(getBatch(viewer, id)), load(labelsOfBatch(viewer, id))]);
+  const [batch, { labels }] = await Promise.all([
+    load(getBatch(viewer, id)),
+    load(labelsOfBatch(viewer, id)),
+  ]);
   const bottles = new Map(batch.bottles.map((bottle) => [bottle.code, bottle]));
   return (
     <>
@@ -28,12 +31,23 @@ export default async function LabelsPage({ params }: PageProps<'/batches/[id]/la
         />
       </div>
       {labels.length === 0 ? (
-        <EmptyState title="No bottle to label">Labels come with the bottles; divide the batch on its sheet first.</EmptyState>
+        <EmptyState title="No bottle to label">
+          Labels come with the bottles; divide the batch on its sheet first.
+        </EmptyState>
       ) : (
         <LabelSheet
           labels={labels.flatMap((label) => {
             const bottle = bottles.get(label.bottleCode);
-            return bottle ? [{ bottleId: bottle.id, code: label.bottleCode, prints: bottle.labelPrints, face: <LabelFace label={label} /> }] : [];
+            return bottle
+              ? [
+                  {
+                    bottleId: bottle.id,
+                    code: label.bottleCode,
+                    prints: bottle.labelPrints,
+                    face: <LabelFace label={label} />,
+                  },
+                ]
+              : [];
           })}
         />
       )}

@@ -13,8 +13,15 @@ export default async function NewLotPage() {
   const [substances, { items: places }] = await Promise.all([listStockable(viewer), listPlaces(viewer)]);
   return (
     <>
-      <PageHeader title="Put a lot on the shelf" lead="For what came outside an order. What was ordered is received on the order's page." />
-      <LotForm substances={substances} places={places} today={formatISO(new Date(), { representation: 'date' })} />
+      <PageHeader
+        title="Put a lot on the shelf"
+        lead="For what came outside an order. What was ordered is received on the order's page."
+      />
+      <LotForm
+        substances={substances}
+        places={places}
+        today={formatISO(new Date(), { representation: 'date' })}
+      />
     </>
   );
 }

@@ -2,4 +2,6 @@ import { route } from '@/lib/http/route';
 import { batchEndpoints } from '@/lib/schemas/batches';
 import { setBatchHold } from '@/lib/services/batch-making';
 
-export const POST = route(batchEndpoints.hold, ({ viewer, params, body }) => setBatchHold(viewer, params.id, true, body));
+export const POST = route(batchEndpoints.hold, ({ viewer, params, body }) =>
+  setBatchHold(viewer, params.id, true, body),
+);
