@@ -61,7 +61,9 @@ export function appearanceOf(state: EquilibriumState): Appearance {
     }
   }
   const glass: Rgb = [244, 244, 240];
-  const rgb = glass.map((channel, index) => channel * Math.exp(-Math.min(absorbance[index] ?? 0, 5))) as unknown as Rgb;
+  const rgb = glass.map(
+    (channel, index) => channel * Math.exp(-Math.min(absorbance[index] ?? 0, 5)),
+  ) as unknown as Rgb;
   const deepest = Math.max(...absorbance);
   return {
     solution: { hex: hexOf(rgb), words: wordsFor(deepest, strongest) },
@@ -70,7 +72,12 @@ export function appearanceOf(state: EquilibriumState): Appearance {
       .sort((a, b) => (b.grams ?? 0) - (a.grams ?? 0))
       .map(({ id, grams }) => {
         const species = findSpecies(id);
-        return { id, name: species ? `${species.colour} ${species.name}` : id, hex: species?.hex ?? '#ffffff', grams: grams ?? 0 };
+        return {
+          id,
+          name: species ? `${species.colour} ${species.name}` : id,
+          hex: species?.hex ?? '#ffffff',
+          grams: grams ?? 0,
+        };
       }),
   };
 }

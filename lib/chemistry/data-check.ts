@@ -32,7 +32,8 @@ function speciesFaults(): DataFault[] {
     const faults: DataFault[] = [];
     if (seen.has(id)) faults.push({ where: id, what: 'stands twice' });
     seen.add(id);
-    if (!isMaster && !ALL_REACTIONS.some(({ species }) => species === id)) faults.push({ where: id, what: 'has no formation reaction' });
+    if (!isMaster && !ALL_REACTIONS.some(({ species }) => species === id))
+      faults.push({ where: id, what: 'has no formation reaction' });
     if (!/^#[0-9A-F]{6}$/i.test(hex)) faults.push({ where: id, what: `colour ${hex} can't be read` });
     return faults;
   });
@@ -51,7 +52,8 @@ function reactionFaults(): DataFault[] {
         continue;
       }
       left.charge = (left.charge ?? 0) + count * master.charge;
-      for (const [element, atoms] of Object.entries(master.composition)) left[element] = (left[element] ?? 0) + count * atoms;
+      for (const [element, atoms] of Object.entries(master.composition))
+        left[element] = (left[element] ?? 0) + count * atoms;
     }
     const right: Record<string, number> = { charge: product.charge, ...product.composition };
     for (const key of new Set([...Object.keys(left), ...Object.keys(right)])) {
@@ -72,30 +74,38 @@ function substanceFaults(): DataFault[] {
     if (formula === '') return faults;
     const composition = parseFormula(formula);
     const mass = massOf(composition);
-    if (Math.abs(mass - molarMassGPerMol) > SAME_MASS) faults.push({ where: id, what: `molar mass ${molarMassGPerMol} against ${mass.toFixed(3)}` });
+    if (Math.abs(mass - molarMassGPerMol) > SAME_MASS)
+      faults.push({ where: id, what: `molar mass ${molarMassGPerMol} against ${mass.toFixed(3)}` });
     if (releases) faults.push(...releaseFaults(id, composition, releases));
     return faults;
   });
 }
 
 /** What is released must be the formula, but for whole waters, and neutral. */
-function releaseFaults(id: string, composition: Readonly<Record<string, number>>, releases: Readonly<Record<string, number>>): DataFault[] {
+function releaseFaults(
+  id: string,
+  composition: Readonly<Record<string, number>>,
+  releases: Readonly<Record<string, number>>,
+): DataFault[] {
   const left: Record<string, number> = {};
   let charge = 0;
   for (const [component, count] of Object.entries(releases)) {
     const species = findSpecies(component);
     if (!species) return [{ where: id, what: `releases ${component}, which is no species` }];
     charge += count * species.charge;
-    for (const [element, atoms] of Object.entries(species.composition)) left[element] = (left[element] ?? 0) + count * atoms;
+    for (const [element, atoms] of Object.entries(species.composition))
+      left[element] = (left[element] ?? 0) + count * atoms;
   }
   const faults: DataFault[] = [];
   if (Math.abs(charge) > SAME_ATOMS) faults.push({ where: id, what: `releases a charge of ${charge}` });
   for (const element of new Set([...Object.keys(left), ...Object.keys(composition)])) {
     if (element === 'H' || element === 'O') continue;
-    if (Math.abs((left[element] ?? 0) - (composition[element] ?? 0)) > SAME_ATOMS) faults.push({ where: id, what: `releases another amount of ${element} than it holds` });
+    if (Math.abs((left[element] ?? 0) - (composition[element] ?? 0)) > SAME_ATOMS)
+      faults.push({ where: id, what: `releases another amount of ${element} than it holds` });
   }
   const waters = (composition.O ?? 0) - (left.O ?? 0);
   const hydrogens = (composition.H ?? 0) - (left.H ?? 0);
-  if (Math.abs(hydrogens - 2 * waters) > SAME_ATOMS) faults.push({ where: id, what: 'hydrogen and oxygen do not differ by whole waters' });
+  if (Math.abs(hydrogens - 2 * waters) > SAME_ATOMS)
+    faults.push({ where: id, what: 'hydrogen and oxygen do not differ by whole waters' });
   return faults;
 }

@@ -44,7 +44,8 @@ export function pourMix(input: MixInput): MixOutcome {
   for (const portion of input.portions) {
     if (!(portion.volumeMl > 0)) throw new RangeError(`The volume of ${portion.label} must be positive`);
     poured.push(portion);
-    for (const [component, mol] of Object.entries(componentAmounts(portion))) amounts[component] = (amounts[component] ?? 0) + mol;
+    for (const [component, mol] of Object.entries(componentAmounts(portion)))
+      amounts[component] = (amounts[component] ?? 0) + mol;
     const volumeMl = poured.reduce((sum, part) => sum + part.volumeMl, 0);
     const equilibrium = speciate({
       volumeL: volumeMl / 1000,
@@ -65,13 +66,18 @@ export function pourMix(input: MixInput): MixOutcome {
 function finish(poured: readonly Portion[], steps: readonly MixStep[]): Mix {
   const last = steps.at(-1);
   if (!last) throw new RangeError('There is nothing to pour');
-  const isStrong = poured.some(({ solutes }) => solutes.some(({ molarity }) => molarity > VOLUMES_ADD_UP_TO_MOLARITY));
+  const isStrong = poured.some(({ solutes }) =>
+    solutes.some(({ molarity }) => molarity > VOLUMES_ADD_UP_TO_MOLARITY),
+  );
   const equilibrium = isStrong
     ? {
         ...last.equilibrium,
         notes: [
           ...last.equilibrium.notes,
-          { code: 'volumes-added', message: `A portion is stronger than ${VOLUMES_ADD_UP_TO_MOLARITY} mol/L; volumes were added all the same, which may be a few per cent off.` },
+          {
+            code: 'volumes-added',
+            message: `A portion is stronger than ${VOLUMES_ADD_UP_TO_MOLARITY} mol/L; volumes were added all the same, which may be a few per cent off.`,
+          },
         ],
       }
     : last.equilibrium;
@@ -90,7 +96,12 @@ function finish(poured: readonly Portion[], steps: readonly MixStep[]): Mix {
 function dilutedSolutes(poured: readonly Portion[], volumeMl: number): DilutedSolute[] {
   const mmol = new Map<string, number>();
   for (const { solutes, volumeMl: portionMl } of poured) {
-    for (const { substance, molarity } of solutes) mmol.set(substance, (mmol.get(substance) ?? 0) + molarity * portionMl);
+    for (const { substance, molarity } of solutes)
+      mmol.set(substance, (mmol.get(substance) ?? 0) + molarity * portionMl);
   }
-  return [...mmol].map(([substance, amount]) => ({ substance, name: substanceOf(substance).name, molarity: amount / volumeMl }));
+  return [...mmol].map(([substance, amount]) => ({
+    substance,
+    name: substanceOf(substance).name,
+    molarity: amount / volumeMl,
+  }));
 }

@@ -26,10 +26,16 @@ export function speciationNotes(system: ReactionSystem, input: SpeciationInput, 
   }
   if (input.reactions !== 'catalogue') return notes;
   if (system.moved.length > 0) {
-    notes.push({ code: 'constants-moved', message: `Moved from 25 °C: ${listed(system.moved)}. The others stand at 25 °C.` });
+    notes.push({
+      code: 'constants-moved',
+      message: `Moved from 25 °C: ${listed(system.moved)}. The others stand at 25 °C.`,
+    });
   }
   if (system.leftOut.length > 0) {
-    notes.push({ code: 'too-slow', message: `Left out because they form too slowly at room temperature: ${listed(system.leftOut)}.` });
+    notes.push({
+      code: 'too-slow',
+      message: `Left out because they form too slowly at room temperature: ${listed(system.leftOut)}.`,
+    });
   }
   notes.push(...redoxNotes(input, state), ...flagNotes(state), ...disagreementNotes(state));
   return notes;
@@ -44,30 +50,57 @@ function redoxNotes(input: SpeciationInput, state: Facts): Note[] {
   const isPresent = (id: string) => {
     if (id === 'H+') return state.pH !== null && state.pH < ACID_BELOW_PH;
     if (id === 'OH-') return state.pH !== null && state.pH > 14 - ACID_BELOW_PH;
-    const amount = input.amounts[id] ?? (state.species.find((species) => species.id === id)?.molarity ?? 0) * input.volumeL;
+    const amount =
+      input.amounts[id] ??
+      (state.species.find((species) => species.id === id)?.molarity ?? 0) * input.volumeL;
     return amount / input.volumeL > PRESENT_MOLARITY;
   };
-  return redoxWatch.pairs.filter((pair) => pair.with.every(isPresent)).map((pair) => ({ code: pair.kind === 'redox' ? 'redox-not-modelled' : 'not-modelled', message: `Not modelled: ${pair.what}.` }));
+  return redoxWatch.pairs
+    .filter((pair) => pair.with.every(isPresent))
+    .map((pair) => ({
+      code: pair.kind === 'redox' ? 'redox-not-modelled' : 'not-modelled',
+      message: `Not modelled: ${pair.what}.`,
+    }));
 }
 
 function tellingSpecies(state: Facts): string[] {
   const most = state.species[0]?.molarity ?? 0;
-  const dissolved = state.species.filter(({ molarity }) => molarity > TELLING_SHARE * most).map(({ id }) => id);
+  const dissolved = state.species
+    .filter(({ molarity }) => molarity > TELLING_SHARE * most)
+    .map(({ id }) => id);
   return [...dissolved, ...state.solids.filter(({ moles }) => moles > 0).map(({ id }) => id)];
 }
 
-const TOLD_FLAGS = ['slow', 'slow-to-form', 'slow-when-cold', 'air-oxidised', 'redox-slow', 'redox-fast', 'disproportionates', 'low-confidence', 'estimate', 'from-memory', 'solvent-dependent', 'decomposes-NOx', 'decomposes-S-SO2'];
+const TOLD_FLAGS = [
+  'slow',
+  'slow-to-form',
+  'slow-when-cold',
+  'air-oxidised',
+  'redox-slow',
+  'redox-fast',
+  'disproportionates',
+  'low-confidence',
+  'estimate',
+  'from-memory',
+  'solvent-dependent',
+  'decomposes-NOx',
+  'decomposes-S-SO2',
+];
 
 function flagNotes(state: Facts): Note[] {
   return tellingSpecies(state).flatMap((id) =>
-    (findReaction(id)?.flags ?? []).filter((flag) => TOLD_FLAGS.includes(flag)).map((flag) => ({ code: `species-${flag}`, message: `${id}: ${FLAG_MEANINGS[flag] ?? flag}` })),
+    (findReaction(id)?.flags ?? [])
+      .filter((flag) => TOLD_FLAGS.includes(flag))
+      .map((flag) => ({ code: `species-${flag}`, message: `${id}: ${FLAG_MEANINGS[flag] ?? flag}` })),
   );
 }
 
 function disagreementNotes(state: Facts): Note[] {
   return tellingSpecies(state).flatMap((id) => {
     const reaction = findReaction(id);
-    const rivals = reaction?.alternatives.filter(({ ionicStrength }) => ionicStrength === null || ionicStrength === 0) ?? [];
+    const rivals =
+      reaction?.alternatives.filter(({ ionicStrength }) => ionicStrength === null || ionicStrength === 0) ??
+      [];
     if (!reaction || rivals.length === 0) return [];
     const values = [reaction.logK, ...rivals.map(({ logK }) => logK)];
     const spread = Math.max(...values) - Math.min(...values);

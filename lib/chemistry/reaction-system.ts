@@ -43,27 +43,43 @@ export function gasId(name: string): string {
 export function buildSystem(input: SpeciationInput): ReactionSystem {
   const isCatalogue = input.reactions === 'catalogue';
   const suppressed = new Set(input.suppress);
-  const openGases = input.headspace.kind === 'open' ? Object.keys(input.headspace.partialPressuresBar).map(gasId) : [];
-  const present = new Set(Object.keys(input.amounts).filter((id) => input.amounts[id] !== 0 || id === 'H+'));
+  const openGases =
+    input.headspace.kind === 'open' ? Object.keys(input.headspace.partialPressuresBar).map(gasId) : [];
+  const present = new Set(
+    Object.keys(input.amounts).filter((id) => id !== 'H2O' && (input.amounts[id] !== 0 || id === 'H+')),
+  );
   if (isCatalogue) {
     present.add('H+');
-    for (const gas of openGases) for (const id of Object.keys(findReaction(gas)?.stoich ?? {})) if (id !== 'H2O') present.add(id);
+    for (const gas of openGases)
+      for (const id of Object.keys(findReaction(gas)?.stoich ?? {})) if (id !== 'H2O') present.add(id);
   }
-  const offered: readonly Reaction[] = input.reactions === 'catalogue' ? catalogueReactions(present) : input.reactions;
+  const offered: readonly Reaction[] =
+    input.reactions === 'catalogue' ? catalogueReactions(present) : input.reactions;
   const kept = offered.filter(({ species }) => !suppressed.has(species));
-  if (!isCatalogue) for (const { stoich } of kept) for (const id of Object.keys(stoich)) if (id !== 'H2O') present.add(id);
+  if (!isCatalogue)
+    for (const { stoich } of kept) for (const id of Object.keys(stoich)) if (id !== 'H2O') present.add(id);
 
   const reactions = reachable(kept, present, input, openGases);
   const described = reactions.list.map((reaction) => describe(reaction, isCatalogue, input.temperatureC));
   const leftOut = isCatalogue
-    ? reactionsAmong(present).filter((reaction) => reaction.flags.includes('kinetically-inert')).map(({ species }) => species)
+    ? reactionsAmong(present)
+        .filter((reaction) => reaction.flags.includes('kinetically-inert'))
+        .map(({ species }) => species)
     : [];
   return {
-    components: [...reactions.present].map((id) => ({ id, charge: speciesCharge(id), ionSizePm: findSpecies(id)?.ionSizePm ?? null, total: input.amounts[id] ?? 0 })),
+    components: [...reactions.present].map((id) => ({
+      id,
+      charge: speciesCharge(id),
+      ionSizePm: findSpecies(id)?.ionSizePm ?? null,
+      total: input.amounts[id] ?? 0,
+    })),
     aqueous: described.filter(({ phase }) => phase === 'aq'),
     solids: described.filter(({ phase }) => phase === 's' || phase === 'l'),
     gases: described.filter(({ phase }) => phase === 'g'),
-    moved: isCatalogue && input.temperatureC !== 25 ? described.filter(({ species }) => isMoved(species)).map(({ species }) => species) : [],
+    moved:
+      isCatalogue && input.temperatureC !== 25
+        ? described.filter(({ species }) => isMoved(species)).map(({ species }) => species)
+        : [],
     leftOut,
   };
 }
@@ -71,11 +87,21 @@ export function buildSystem(input: SpeciationInput): ReactionSystem {
 function catalogueReactions(present: ReadonlySet<string>): Reaction[] {
   return reactionsAmong(present)
     .filter(formsOnTheBench)
-    .map(({ species, stoich, logK }) => ({ species, stoich, logK, phase: findSpecies(species)?.phase ?? 'aq' }));
+    .map(({ species, stoich, logK }) => ({
+      species,
+      stoich,
+      logK,
+      phase: findSpecies(species)?.phase ?? 'aq',
+    }));
 }
 
 /** Takes out, until nothing changes, components that are absent and what is formed from them. */
-function reachable(reactions: readonly Reaction[], present: ReadonlySet<string>, input: SpeciationInput, openGases: readonly string[]) {
+function reachable(
+  reactions: readonly Reaction[],
+  present: ReadonlySet<string>,
+  input: SpeciationInput,
+  openGases: readonly string[],
+) {
   const left = new Set(present);
   let list = [...reactions];
   const isSupplied = (id: string) =>

@@ -83,22 +83,24 @@ export const ALL_SPECIES: readonly Species[] = (speciesData.species as RawSpecie
   note: raw.note ?? null,
 }));
 
-export const ALL_REACTIONS: readonly CatalogueReaction[] = (reactionData.reactions as RawReaction[]).map((raw) => ({
-  species: raw.species,
-  stoich: raw.stoich as Readonly<Record<string, number>>,
-  logK: raw.logK,
-  ionicStrength: raw.ionicStrength ?? 0,
-  enthalpyKJ: raw.enthalpyKJ ?? null,
-  stepwiseLogK: raw.stepwiseLogK ?? null,
-  source: sourceText(raw.source),
-  alternatives: (raw.alternatives ?? []).map(({ logK, ionicStrength, source }) => ({
-    logK,
-    ionicStrength: ionicStrength === undefined ? 0 : ionicStrength,
-    source: sourceText(source),
-  })),
-  flags: raw.flags ?? [],
-  note: raw.note ?? null,
-}));
+export const ALL_REACTIONS: readonly CatalogueReaction[] = (reactionData.reactions as RawReaction[]).map(
+  (raw) => ({
+    species: raw.species,
+    stoich: raw.stoich as Readonly<Record<string, number>>,
+    logK: raw.logK,
+    ionicStrength: raw.ionicStrength ?? 0,
+    enthalpyKJ: raw.enthalpyKJ ?? null,
+    stepwiseLogK: raw.stepwiseLogK ?? null,
+    source: sourceText(raw.source),
+    alternatives: (raw.alternatives ?? []).map(({ logK, ionicStrength, source }) => ({
+      logK,
+      ionicStrength: ionicStrength === undefined ? 0 : ionicStrength,
+      source: sourceText(source),
+    })),
+    flags: raw.flags ?? [],
+    note: raw.note ?? null,
+  }),
+);
 
 /** What each flag of a reaction means, in a sentence. */
 export const FLAG_MEANINGS: Readonly<Record<string, string>> = reactionData.flags;
@@ -119,7 +121,13 @@ export function isMasterComponent(id: string): boolean {
 }
 
 /** Flags of species that do not come about when solutions are poured together at room temperature. */
-const NOT_ON_THE_BENCH = ['off-by-default', 'does-not-form-on-bench', 'needs-heat-or-ageing', 'kinetically-inert', 'ill-defined'];
+const NOT_ON_THE_BENCH = [
+  'off-by-default',
+  'does-not-form-on-bench',
+  'needs-heat-or-ageing',
+  'kinetically-inert',
+  'ill-defined',
+];
 
 export function formsOnTheBench(reaction: CatalogueReaction): boolean {
   return !reaction.flags.some((flag) => NOT_ON_THE_BENCH.includes(flag));
@@ -127,5 +135,7 @@ export function formsOnTheBench(reaction: CatalogueReaction): boolean {
 
 /** The reactions whose masters are all among the given components; H+ and water are always there. */
 export function reactionsAmong(components: ReadonlySet<string>): CatalogueReaction[] {
-  return ALL_REACTIONS.filter(({ stoich }) => Object.keys(stoich).every((id) => id === 'H2O' || id === 'H+' || components.has(id)));
+  return ALL_REACTIONS.filter(({ stoich }) =>
+    Object.keys(stoich).every((id) => id === 'H2O' || id === 'H+' || components.has(id)),
+  );
 }

@@ -24,7 +24,10 @@ function interpolate(table: readonly Point[], at: number): number {
   const first = Math.min(Math.max(0, middle - 2), table.length - 4);
   const near = table.slice(first, first + 4);
   return near.reduce((sum, point) => {
-    const weight = near.reduce((product, other) => (other === point ? product : (product * (at - other.at)) / (point.at - other.at)), 1);
+    const weight = near.reduce(
+      (product, other) => (other === point ? product : (product * (at - other.at)) / (point.at - other.at)),
+      1,
+    );
     return sum + weight * point.value;
   }, 0);
 }
@@ -40,7 +43,10 @@ export function logKwShift(temperatureC: number): number {
 
 /** Debye–Hückel A of log10 γ, (L/mol)^½, and B in 1/(Å·(mol/L)^½). */
 export function debyeHuckel(temperatureC: number): { readonly a: number; readonly b: number } {
-  return { a: temperatureC === 25 ? 0.509 : interpolate(DEBYE_A, temperatureC), b: interpolate(DEBYE_B, temperatureC) };
+  return {
+    a: temperatureC === 25 ? 0.509 : interpolate(DEBYE_A, temperatureC),
+    b: interpolate(DEBYE_B, temperatureC),
+  };
 }
 
 /** van 't Hoff: log K at a temperature from its value at 25 °C and the enthalpy, taken as constant over 10–40 °C. */

@@ -7,7 +7,12 @@
 const SPLITTER = 134_217_729;
 
 /** Σ weights[k·stride] · values[k], rounded once at the end. */
-export function exactDot(weights: Float64Array, offset: number, stride: number, values: Float64Array): number {
+export function exactDot(
+  weights: Float64Array,
+  offset: number,
+  stride: number,
+  values: Float64Array,
+): number {
   let high = 0;
   let low = 0;
   for (let k = 0; k < values.length; k += 1) {

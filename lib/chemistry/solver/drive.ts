@@ -127,7 +127,8 @@ function largestRow(table: Tableau, column: number, free: Uint8Array): number {
 /** Any real column that can stand for a basis element of amount zero. */
 function anyColumn(table: Tableau, row: number, real: number, free: Uint8Array): number {
   for (let column = 0; column < real; column += 1) {
-    if ((table.rowOf[column] ?? -1) < 0 && free[column] !== 1 && Math.abs(table.at(row, column)) > 1e-9) return column;
+    if ((table.rowOf[column] ?? -1) < 0 && free[column] !== 1 && Math.abs(table.at(row, column)) > 1e-9)
+      return column;
   }
   return -1;
 }

@@ -30,7 +30,8 @@ export function solveInPlace(a: Float64Array, b: Float64Array, f: number): boole
     for (let row = column + 1; row < f; row += 1) {
       const share = (a[row * f + column] ?? 0) * inverse;
       if (share === 0) continue;
-      for (let k = column + 1; k < f; k += 1) a[row * f + k] = (a[row * f + k] ?? 0) - share * (a[column * f + k] ?? 0);
+      for (let k = column + 1; k < f; k += 1)
+        a[row * f + k] = (a[row * f + k] ?? 0) - share * (a[column * f + k] ?? 0);
       b[row] = (b[row] ?? 0) - share * (b[column] ?? 0);
     }
   }

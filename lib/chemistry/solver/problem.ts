@@ -1,6 +1,14 @@
+/** Activity coefficients as functions of the ionic strength alone. */
+export interface ActivityLaw {
+  /** z² / 2V of each solute: ionic strength, mol/L, per mol of it; 0 for gases. */
+  readonly strengthPerMol: Float64Array;
+  /** Writes ln γ of each solute and its derivative by the ionic strength. */
+  fill(ionicStrength: number, lnGamma: Float64Array, slope: Float64Array): void;
+}
+
 /**
  * An equilibrium to be found, as bare numbers. All columns are formed from the same n components:
- * first `solutes` columns whose amount is exp(lnK + ν·x), the first n of them the components themselves;
+ * first `solutes` columns whose amount is exp(lnK + ν·x) / γ, the first n of them the components themselves;
  * then `phases` of unit activity, for which lnK + ν·x ≤ 0.
  */
 export interface EquilibriumProblem {
@@ -12,12 +20,14 @@ export interface EquilibriumProblem {
   readonly phaseCount: number;
   /** ν by column: `stoich[column · n + component]`. */
   readonly stoich: Float64Array;
-  /** ln of the amount constant by column: for solutes volume and activity coefficient are already in it. */
+  /** ln of the amount constant by column: for solutes the volume is already in it. May be changed between solves. */
   readonly lnK: Float64Array;
-  /** mol of each component. */
+  /** mol of each component. May be changed between solves. */
   readonly totals: Float64Array;
   /** By phase: true where it stands for a held activity that gives or takes any amount. */
   readonly isReservoir: readonly boolean[];
+  /** null where every γ is 1. */
+  readonly activity: ActivityLaw | null;
 }
 
 export interface EquilibriumSolution {
@@ -27,6 +37,10 @@ export interface EquilibriumSolution {
   readonly lnActivity: Float64Array;
   /** mol of each solute. */
   readonly amounts: Float64Array;
+  /** ln γ of each solute. */
+  readonly lnGamma: Float64Array;
+  /** mol/L; 0 where every γ is 1. */
+  readonly ionicStrength: number;
   /** mol of each phase; of a reservoir what it gave (negative: took). */
   readonly phaseAmounts: Float64Array;
   /** ln(ion activity product / solubility product) of each phase. */

@@ -23,15 +23,21 @@ export class Tableau {
   readonly rowOf: Int32Array;
   /** Σ totals in the basis. */
   readonly totals: Float64Array;
-  /** lnK of each column as formed from the basis. */
+  /** lnK of each column as formed from the basis; 0 for the basis itself. */
   readonly lnK: Float64Array;
+  /** The entries of the first columns that are not zero, by column: `entryStart[c]` to `entryStart[c + 1]`. */
+  readonly entryStart: Int32Array;
+  readonly entryRow: Int32Array;
+  readonly entryValue: Float64Array;
   private readonly weights: Float64Array;
+  private readonly pivotColumn: Float64Array;
+  private readonly pivotRows: Int32Array;
 
   constructor(
     private readonly problem: EquilibriumProblem,
     columnCount = problem.soluteCount + problem.phaseCount,
   ) {
-    const { componentCount: n, stoich } = problem;
+    const { componentCount: n, soluteCount, stoich } = problem;
     this.n = n;
     this.columnCount = columnCount;
     this.w = Float64Array.from(stoich.subarray(0, columnCount * n));
@@ -40,8 +46,14 @@ export class Tableau {
     for (let i = 0; i < n; i += 1) this.rowOf[i] = i;
     this.totals = Float64Array.from(problem.totals);
     this.lnK = new Float64Array(columnCount);
+    this.entryStart = new Int32Array(soluteCount + 1);
+    this.entryRow = new Int32Array(soluteCount * n);
+    this.entryValue = new Float64Array(soluteCount * n);
     this.weights = new Float64Array(n * n);
-    this.refreshConstants();
+    this.pivotColumn = new Float64Array(n);
+    this.pivotRows = new Int32Array(n);
+    for (let k = 0; k < n; k += 1) this.weights[k * n + k] = DENOMINATOR;
+    this.settle();
   }
 
   at(row: number, column: number): number {
@@ -50,43 +62,67 @@ export class Tableau {
 
   /** Lets a column take the place of basis element `row`. The entry must not be zero. */
   pivot(row: number, column: number): void {
-    const { n, w, columnCount } = this;
+    const { n, w, lnK, columnCount, pivotColumn, pivotRows } = this;
     const start = column * n;
     const entry = w[start + row] ?? 0;
-    const pivotColumn = w.slice(start, start + n);
+    const gained = lnK[column] ?? 0;
+    let rowCount = 0;
+    for (let i = 0; i < n; i += 1) {
+      const value = w[start + i] ?? 0;
+      if (value === 0 || i === row) continue;
+      pivotColumn[i] = value;
+      pivotRows[rowCount] = i;
+      rowCount += 1;
+    }
     for (let c = 0; c < columnCount; c += 1) {
       const at = c * n;
       const inRow = w[at + row] ?? 0;
       if (inRow === 0) continue;
-      const share = inRow / entry;
-      for (let i = 0; i < n; i += 1) w[at + i] = snap((w[at + i] ?? 0) - share * (pivotColumn[i] ?? 0));
-      w[at + row] = snap(share);
+      const share = snap(inRow / entry);
+      for (let k = 0; k < rowCount; k += 1) {
+        const i = pivotRows[k] ?? 0;
+        w[at + i] = snap((w[at + i] ?? 0) - share * (pivotColumn[i] ?? 0));
+      }
+      w[at + row] = share;
+      lnK[c] = (lnK[c] ?? 0) - share * gained;
     }
     this.rowOf[this.basis[row] ?? 0] = -1;
     this.basis[row] = column;
     this.rowOf[column] = row;
-    this.refreshTotals();
-    this.refreshConstants();
+    lnK[column] = 0;
+    this.refreshTotal(row);
+    for (let k = 0; k < rowCount; k += 1) this.refreshTotal(pivotRows[k] ?? 0);
   }
 
-  /** Totals of the basis: row i is Σ_k W[i][component k] · T_k, summed exactly. */
-  private refreshTotals(): void {
-    const { n, w, weights, totals } = this;
-    for (let k = 0; k < n * n; k += 1) weights[k] = inDenominators(w[k] ?? 0);
-    for (let i = 0; i < n; i += 1) totals[i] = exactDot(weights, i, n, this.problem.totals) / DENOMINATOR;
+  /** Total of a basis element: Σ_k W[i][component k] · T_k, summed exactly. */
+  private refreshTotal(row: number): void {
+    const { n, w, weights } = this;
+    for (let k = 0; k < n; k += 1) weights[k * n + row] = inDenominators(w[k * n + row] ?? 0);
+    this.totals[row] = exactDot(weights, row, n, this.problem.totals) / DENOMINATOR;
   }
 
-  /** To be called after the problem's constants changed too. */
-  refreshConstants(): void {
-    const { n, w, basis, lnK, columnCount } = this;
-    const given = this.problem.lnK;
+  /**
+   * Brings constants, totals and the lists of entries up to date: after pivots, whose running constants carry
+   * rounding, and after the problem's totals or constants changed.
+   */
+  settle(): void {
+    const { n, w, basis, lnK, rowOf, columnCount, entryStart, entryRow, entryValue } = this;
+    const { lnK: given, soluteCount } = this.problem;
+    for (let row = 0; row < n; row += 1) this.refreshTotal(row);
+    let count = 0;
     for (let c = 0; c < columnCount; c += 1) {
       let sum = given[c] ?? 0;
       for (let i = 0; i < n; i += 1) {
-        const entry = w[c * n + i] ?? 0;
-        if (entry !== 0) sum -= entry * (given[basis[i] ?? 0] ?? 0);
+        const value = w[c * n + i] ?? 0;
+        if (value === 0) continue;
+        sum -= value * (given[basis[i] ?? 0] ?? 0);
+        if (c >= soluteCount) continue;
+        entryRow[count] = i;
+        entryValue[count] = value;
+        count += 1;
       }
-      lnK[c] = this.rowOf[c] === -1 ? sum : 0;
+      lnK[c] = rowOf[c] === -1 ? sum : 0;
+      if (c < soluteCount) entryStart[c + 1] = count;
     }
   }
 }
