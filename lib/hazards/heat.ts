@@ -78,11 +78,19 @@ export function adiabaticRiseK(bottles: readonly ScreenedBottle[], finalVolumeMl
   return ((neutralisationKJ(bottles) + dilutionKJ(bottles, finalVolumeMl)) * 1000) / heatCapacityJPerK(bottles, finalVolumeMl);
 }
 
-/** A finding where the mix grows hot; thresholds are ours, to be confirmed locally. */
+/** How grave a rise is; thresholds are ours, to be confirmed locally. */
+export function heatSeverity(riseK: number, startC: number): Severity | null {
+  const hottest = startC + riseK;
+  if (hottest > 95) return 'review';
+  if (riseK > 40 || hottest > 70) return 'controlled';
+  return riseK > 20 ? 'caution' : null;
+}
+
+/** A finding where the mix grows hot. */
 export function heatFinding(bottles: readonly ScreenedBottle[], mix: Mix, startC: number): Finding | null {
   const rise = adiabaticRiseK(bottles, mix.finalVolumeMl);
   const hottest = startC + rise;
-  const severity: Severity | null = hottest > 95 ? 'review' : rise > 40 || hottest > 70 ? 'controlled' : rise > 20 ? 'caution' : null;
+  const severity = heatSeverity(rise, startC);
   if (!severity) return null;
   return {
     rule: 'heat',

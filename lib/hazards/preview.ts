@@ -4,6 +4,7 @@ import type { ActivityModel, Mix, NotConverged, Solute } from '../chemistry/type
 import { classifySolution } from './classification/classify-solution';
 import { screenPolicy } from './policy-gates';
 import { decide, screenMix, sortFindings } from './screen';
+import { checkSlips } from './slips';
 import type { BottleContent, Finding, MixPreview, Room } from './types';
 
 export interface PreviewInput {
@@ -12,6 +13,8 @@ export interface PreviewInput {
   readonly activity: ActivityModel;
   readonly temperatureC: number;
   readonly room: Room;
+  /** Whether every single slip is tried too. */
+  readonly slips?: boolean;
 }
 export type PreviewOutcome = MixPreview | (NotConverged & { readonly afterPortion: string });
 
@@ -19,7 +22,7 @@ export type PreviewOutcome = MixPreview | (NotConverged & { readonly afterPortio
  * The whole answer about one mix.
  * @throws RangeError for an unknown substance or a volume that is not positive
  */
-export function previewMix({ portions, activity, temperatureC, room }: PreviewInput): PreviewOutcome {
+export function previewMix({ portions, activity, temperatureC, room, slips = false }: PreviewInput): PreviewOutcome {
   const mix = pourMix({ portions, activity, temperatureC });
   if (!mix.converged) return mix;
   const findings = sortFindings([...screenMix(portions, mix, room), ...orderFindings(portions, mix, activity, temperatureC, room), ...screenPolicy(portions)]);
@@ -32,6 +35,7 @@ export function previewMix({ portions, activity, temperatureC, room }: PreviewIn
     findings,
     classification: classifySolution({ solutes: leftAfterNeutralising(mix), pH: mix.equilibrium.pH }),
     decision: decide(findings),
+    ...(slips ? { slips: checkSlips({ portions, others: [], activity, temperatureC, room }) } : {}),
   };
 }
 

@@ -53,20 +53,34 @@ function withGas({ rule, gas }: Firing): string {
   return `${rule.reason} At worst ${figure(gas.worstCaseMoles * 1000)} mmol of ${gas.species}, ${figure(gas.mlAt25C)} mL at 25 °C: ${figure(gas.ppmInBreathingZone)} ppm in a breathing zone of 0.1 m³${limit}.`;
 }
 
-/** Findings on the portions as poured, at the composition computed after every pour. */
-export function screenMix(portions: readonly BottleContent[], mix: Mix, room: Room): Finding[] {
+/**
+ * Findings on the portions as poured, at the composition computed after every pour.
+ * @param isKept - true where the mix is to stand, overnight or in a bottle
+ */
+export function screenMix(portions: readonly BottleContent[], mix: Mix, room: Room, isKept = false): Finding[] {
   const bottles = portions.map(screenedBottle);
   const findings: Finding[] = bottles.flatMap(unknownFindings);
   mix.steps.forEach((step, index) => {
     const met = bottles.slice(0, index + 1);
     if (met.length < 2 && bottles.length > 1) return;
-    const firings = firingRules({ bottles: met, volumeMl: step.volumeMl, state: step.equilibrium, temperatureC: step.equilibrium.temperatureC, isKept: false, room });
+    const firings = firingRules({ bottles: met, volumeMl: step.volumeMl, state: step.equilibrium, temperatureC: step.equilibrium.temperatureC, isKept, room });
     findings.push(...firings.map((firing) => findingOf(firing, firing.rule.kinds.includes('quality-only') ? 'quality' : 'mix', withGas(firing))));
   });
   const heat = heatFinding(bottles, mix, mix.equilibrium.temperatureC);
   if (heat) findings.push(heat);
   findings.push(...vapourFindings(mix, room), ...redoxFindings(portions, mix));
   return sortFindings(mergeSteps(findings));
+}
+
+/** Findings on each solution by itself, as made and kept in its bottle; notes are left to the mixes. */
+export function screenSolutions(contents: readonly BottleContent[], room: Room): Finding[] {
+  return sortFindings(
+    contents.flatMap((content) => {
+      const mix = pourMix({ portions: [content], activity: 'davies', temperatureC: ROOM_TEMPERATURE_C });
+      if (!mix.converged) return [];
+      return screenMix([content], mix, room, true).filter(({ severity }) => severity !== 'note');
+    }),
+  );
 }
 
 /** A rule that fired after several pours is told once, as it stands when most has met. */
@@ -126,16 +140,18 @@ export function screenNeighbours(contents: readonly BottleContent[], room: Room)
   const bottles = contents.map(screenedBottle);
   const findings: Finding[] = [];
   bottles.forEach((first, index) => {
-    for (const second of bottles.slice(index + 1)) findings.push(...screenPair(first, second, contents, room));
+    bottles.slice(index + 1).forEach((second, offset) => {
+      const portions = [contents[index], contents[index + 1 + offset]].filter((content) => content !== undefined);
+      findings.push(...screenPair(first, second, portions, room));
+    });
   });
   return sortFindings(findings);
 }
 
-function screenPair(first: ScreenedBottle, second: ScreenedBottle, contents: readonly BottleContent[], room: Room): Finding[] {
+function screenPair(first: ScreenedBottle, second: ScreenedBottle, portions: readonly BottleContent[], room: Room): Finding[] {
   const pair = [first, second];
   const could = firingRules({ bottles: pair, volumeMl: first.volumeMl + second.volumeMl, state: null, temperatureC: ROOM_TEMPERATURE_C, isKept: false, room });
   if (!could.some(({ rule }) => BESIDE[rule.severity] !== null && needsBoth(rule.groups, pair))) return [];
-  const portions = contents.filter(({ label }) => label === first.label || label === second.label);
   const mix = pourMix({ portions, activity: 'davies', temperatureC: ROOM_TEMPERATURE_C });
   const state = mix.converged ? mix.equilibrium : null;
   return firingRules({ bottles: pair, volumeMl: first.volumeMl + second.volumeMl, state, temperatureC: ROOM_TEMPERATURE_C, isKept: false, room }).flatMap((firing) => {

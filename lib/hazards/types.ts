@@ -72,6 +72,29 @@ export interface Classification {
   readonly incomplete: readonly string[];
 }
 
+/** One plausible slip and what the same screen says of it. */
+export interface Slip {
+  readonly kind: 'too-strong' | 'doubled' | 'swapped' | 'reversed' | 'left-out' | 'wrong-substance' | 'wrong-bottle' | 'overnight' | 'wrong-jar';
+  /** Whole sentence, beginning with "If". */
+  readonly sentence: string;
+  readonly decision: Decision;
+  /** The gravest finding that the slip brings. */
+  readonly finding: Finding;
+  /** Labels of the portions that are handled wrongly. */
+  readonly concerns: readonly string[];
+}
+export interface SlipReport {
+  /** How many slips were tried. */
+  readonly tried: number;
+  /** Those that make the decision graver, gravest first. */
+  readonly raised: readonly Slip[];
+  readonly stops: number;
+  /** "3 of 26 single slips lead to a stop." */
+  readonly summary: string;
+  /** The one change that removes most of them; null where none is needed. */
+  readonly separation: string | null;
+}
+
 /** The answer about one mix: what the vessel holds after every pour, what was found, how it is labelled. */
 export interface MixPreview {
   readonly finalVolumeMl: number;
@@ -83,4 +106,6 @@ export interface MixPreview {
   readonly findings: readonly Finding[];
   readonly classification: Classification;
   readonly decision: Decision;
+  /** Only where asked for. */
+  readonly slips?: SlipReport;
 }

@@ -5,7 +5,7 @@ import { findSubstance } from '../chemistry/substances';
 import { classifySolution } from '../hazards/classification/classify-solution';
 import { screenPolicy } from '../hazards/policy-gates';
 import { previewMix } from '../hazards/preview';
-import { decide, screenNeighbours, sortFindings } from '../hazards/screen';
+import { decide, screenNeighbours, screenSolutions, sortFindings } from '../hazards/screen';
 import type { BottleContent, Finding, MixPreview } from '../hazards/types';
 import { solutionNeeds } from './request-need';
 import type { PlannedDemonstration, PlannedSession, PlannedSolution, PlannedSubstance, RequestPlan } from './request-plan-types';
@@ -67,6 +67,7 @@ export function planRequest({ session, lines, neighbours }: RequestToPlan): Requ
   const own: BottleContent[] = solutions.map(({ name, volumeMl, solutes }) => ({ label: name, volumeMl, solutes: plainSolutes(solutes) }));
   const findings = sortFindings([
     ...demonstrations.flatMap((demonstration) => mixFindings(demonstration)),
+    ...screenSolutions(own, session.room),
     ...screenNeighbours([...own, ...neighbours], session.room).filter(({ concerns }) => concerns.some((label) => own.some((bottle) => bottle.label === label))),
     ...screenPolicy(own),
   ]);

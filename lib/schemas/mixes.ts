@@ -124,6 +124,22 @@ export const classificationSchema = z.object({
 });
 export const decisionSchema = z.enum(['stop', 'review', 'controlled', 'caution', 'clear']);
 
+const slipSchema = z.object({
+  kind: z.enum(['too-strong', 'doubled', 'swapped', 'reversed', 'left-out', 'wrong-substance', 'wrong-bottle', 'overnight', 'wrong-jar']),
+  sentence: z.string(),
+  decision: decisionSchema,
+  finding: findingSchema,
+  concerns: listOf(z.string()),
+});
+/** What single slips would lead to; only where asked for. */
+export const slipReportSchema = z.object({
+  tried: z.number().int(),
+  raised: listOf(slipSchema),
+  stops: z.number().int(),
+  summary: z.string(),
+  separation: z.string().nullable(),
+});
+
 export const mixAnswerSchema = z.object({
   finalVolumeMl: z.number(),
   diluted: listOf(z.object({ substance: z.string(), name: z.string(), molarity: z.number() })),
@@ -138,6 +154,7 @@ export const mixAnswerSchema = z.object({
   findings: listOf(findingSchema),
   classification: classificationSchema,
   decision: decisionSchema,
+  slips: slipReportSchema.optional(),
 });
 export type MixAnswer = z.infer<typeof mixAnswerSchema>;
 

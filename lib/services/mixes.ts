@@ -42,13 +42,13 @@ export function computeSpeciation(body: SpeciationBody): EquilibriumState {
 }
 
 /** @throws DomainError `invalid` for each substance that is not in the catalogue, `not-converged` */
-export function computePreview({ portions, activity, temperatureC, room }: MixPreviewBody): MixPreview {
+export function computePreview({ portions, activity, temperatureC, room, slips }: MixPreviewBody): MixPreview {
   const unknown = portions.flatMap(({ solutes }, portion) =>
     solutes.flatMap(({ substance }, index) =>
       findSubstance(substance) ? [] : [{ pointer: `#/portions/${portion}/solutes/${index}/substance`, detail: 'This substance is not in the catalogue.' }],
     ),
   );
   if (unknown.length > 0) throw invalid(unknown);
-  const outcome = previewMix({ portions, activity, temperatureC, room });
+  const outcome = previewMix({ portions, activity, temperatureC, room, slips });
   return 'converged' in outcome ? refuse(outcome) : outcome;
 }
