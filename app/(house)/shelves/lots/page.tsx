@@ -5,7 +5,7 @@ import { LinkButton } from '@/components/ui/button';
 import { PageHeader } from '@/components/ui/page-header';
 import { mayByRole } from '@/lib/domain/policy';
 import { pageViewer } from '@/lib/http/page';
-import { listLots } from '@/lib/services/lots';
+import { listLots } from '@/lib/services/lot-rows';
 import { listPlaces } from '@/lib/services/places';
 
 export const metadata: Metadata = { title: 'Lots' };
