@@ -23,7 +23,7 @@ export class InvoiceModel extends Model<InferAttributes<InvoiceModel>, InferCrea
         amountMinor: { type: DataTypes.INTEGER, allowNull: false },
         currency: { type: DataTypes.STRING, allowNull: false },
         state: { type: DataTypes.STRING, allowNull: false },
-        dueOn: { type: DataTypes.DATEONLY },
+        dueOn: { type: DataTypes.DATEONLY, defaultValue: null },
         createdAt: { type: DataTypes.DATE, allowNull: false },
         updatedAt: { type: DataTypes.DATE, allowNull: false },
       },

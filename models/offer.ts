@@ -27,7 +27,7 @@ export class OfferModel extends Model<InferAttributes<OfferModel>, InferCreation
         packMicro: { type: DataTypes.BIGINT, allowNull: false },
         unit: { type: DataTypes.STRING, allowNull: false },
         priceMinor: { type: DataTypes.INTEGER, allowNull: false },
-        assayPercent: { type: DataTypes.DOUBLE },
+        assayPercent: { type: DataTypes.DOUBLE, defaultValue: null },
         hazardous: { type: DataTypes.BOOLEAN, allowNull: false, defaultValue: false },
         active: { type: DataTypes.BOOLEAN, allowNull: false, defaultValue: true },
         createdAt: { type: DataTypes.DATE, allowNull: false },

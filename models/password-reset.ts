@@ -18,7 +18,7 @@ export class PasswordResetModel extends Model<InferAttributes<PasswordResetModel
         userId: { type: DataTypes.UUID, allowNull: false },
         tokenHash: { type: DataTypes.STRING, allowNull: false, unique: true },
         expiresAt: { type: DataTypes.DATE, allowNull: false },
-        usedAt: { type: DataTypes.DATE },
+        usedAt: { type: DataTypes.DATE, defaultValue: null },
         createdAt: { type: DataTypes.DATE, allowNull: false },
         updatedAt: { type: DataTypes.DATE, allowNull: false },
       },

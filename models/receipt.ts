@@ -20,7 +20,7 @@ export class ReceiptModel extends Model<InferAttributes<ReceiptModel>, InferCrea
         lotId: { type: DataTypes.UUID, allowNull: false },
         packs: { type: DataTypes.INTEGER, allowNull: false },
         receivedById: { type: DataTypes.UUID, allowNull: false },
-        note: { type: DataTypes.TEXT },
+        note: { type: DataTypes.TEXT, defaultValue: null },
         createdAt: { type: DataTypes.DATE, allowNull: false },
         updatedAt: { type: DataTypes.DATE, allowNull: false },
       },

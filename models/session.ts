@@ -27,7 +27,7 @@ export class SessionModel extends Model<InferAttributes<SessionModel>, InferCrea
         roomId: { type: DataTypes.UUID, allowNull: false },
         benches: { type: DataTypes.INTEGER, allowNull: false },
         instructorId: { type: DataTypes.UUID, allowNull: false },
-        cancelledAt: { type: DataTypes.DATE },
+        cancelledAt: { type: DataTypes.DATE, defaultValue: null },
         version: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 0 },
         createdAt: { type: DataTypes.DATE, allowNull: false },
         updatedAt: { type: DataTypes.DATE, allowNull: false },

@@ -26,7 +26,7 @@ export class WasteJarModel extends Model<InferAttributes<WasteJarModel>, InferCr
         capacityMl: { type: DataTypes.DOUBLE, allowNull: false },
         volumeMl: { type: DataTypes.DOUBLE, allowNull: false, defaultValue: 0 },
         content: { type: DataTypes.JSON, allowNull: false },
-        collectionId: { type: DataTypes.UUID },
+        collectionId: { type: DataTypes.UUID, defaultValue: null },
         version: { type: DataTypes.INTEGER, allowNull: false, defaultValue: 0 },
         createdAt: { type: DataTypes.DATE, allowNull: false },
         updatedAt: { type: DataTypes.DATE, allowNull: false },

@@ -70,7 +70,9 @@ export async function callApi<E extends Endpoint>(endpoint: E, input: CallInput<
   }
   if (!response.ok) throw await problemOf(response);
   if (endpoint.response === 'none' || endpoint.response === 'file') return undefined as ResponseOf<E>;
-  return endpoint.response.parse(await response.json()) as ResponseOf<E>;
+  const answer = endpoint.response.safeParse(await response.json().catch(() => undefined));
+  if (answer.success) return answer.data as ResponseOf<E>;
+  throw new ApiProblem(response.status, 'unreadable', 'An answer that can’t be read', 'The server did it, but its answer could not be read. Reload the page.', [], {});
 }
 
 /** Reads a failed answer; an answer that is no problem document still becomes one. */
