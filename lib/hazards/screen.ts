@@ -8,6 +8,7 @@ import { heatFinding } from './heat';
 import { firingRules, meetingTitle } from './rules';
 import type { Firing } from './rules';
 import type { BottleContent, Decision, Finding, Room, Severity } from './types';
+import { uncoveredFindings } from './uncovered';
 import { vapourFindings } from './vapour';
 
 const ROOM_TEMPERATURE_C = 25;
@@ -66,6 +67,7 @@ export function screenMix(portions: readonly BottleContent[], mix: Mix, room: Ro
     const firings = firingRules({ bottles: met, volumeMl: step.volumeMl, state: step.equilibrium, temperatureC: step.equilibrium.temperatureC, isKept, room });
     findings.push(...firings.map((firing) => findingOf(firing, firing.rule.kinds.includes('quality-only') ? 'quality' : 'mix', withGas(firing))));
   });
+  findings.push(...uncoveredFindings(bottles));
   const heat = heatFinding(bottles, mix, mix.equilibrium.temperatureC);
   if (heat) findings.push(heat);
   findings.push(...vapourFindings(mix, room), ...redoxFindings(portions, mix));

@@ -5,6 +5,7 @@ import { screenedBottle } from './contents';
 import { adiabaticRiseK, heatSeverity } from './heat';
 import { firingRules } from './rules';
 import { decide, screenMix } from './screen';
+import { uncoveredFindings } from './uncovered';
 import { slipVariants } from './slip-variants';
 import type { SlipVariant } from './slip-variants';
 import type { BottleContent, Finding, Room, Slip, SlipReport } from './types';
@@ -36,7 +37,7 @@ const VOLATILE = ['CN-', 'HS-', 'SO3-2', 'NH3'];
 function mayBeGraver({ portions, isKept }: SlipVariant, before: number, { temperatureC, room }: SlipInput): boolean {
   const bottles = portions.map(screenedBottle);
   const volumeMl = portions.reduce((sum, portion) => sum + portion.volumeMl, 0);
-  if (bottles.some(({ unknown }) => unknown.length > 0)) return true;
+  if (bottles.some(({ unknown }) => unknown.length > 0) || uncoveredFindings(bottles).length > 0) return true;
   if (firingRules({ bottles, volumeMl, state: null, temperatureC, isKept, room }).some(({ severity }) => gravityOf(severity) < before)) return true;
   const heat = heatSeverity(adiabaticRiseK(bottles, volumeMl), temperatureC);
   if (heat && gravityOf(heat) < before) return true;
