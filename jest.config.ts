@@ -28,7 +28,10 @@ export default async function config(): Promise<Config> {
     testPathIgnorePatterns: ['/node_modules/', '/.next/', '/data/', '/test-output/'],
     modulePathIgnorePatterns: ['<rootDir>/.next/', '<rootDir>/data/', '<rootDir>/test-output/'],
     ...(served
-      ? { globalSetup: '<rootDir>/__tests__/support/global-setup.ts', globalTeardown: '<rootDir>/__tests__/support/global-teardown.ts' }
+      ? {
+          globalSetup: '<rootDir>/__tests__/support/global-setup.ts',
+          globalTeardown: '<rootDir>/__tests__/support/global-teardown.ts',
+        }
       : {}),
   };
 }

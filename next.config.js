@@ -12,7 +12,16 @@ const headers = [
 
 /** @type {import('next').NextConfig} */
 module.exports = {
-  serverExternalPackages: ['sequelize', 'sqlite3', 'umzug', 'highs', 'exceljs', 'pino', 'nodemailer', 'stripe'],
+  serverExternalPackages: [
+    'sequelize',
+    'sqlite3',
+    'umzug',
+    'highs',
+    'exceljs',
+    'pino',
+    'nodemailer',
+    'stripe',
+  ],
   transpilePackages: [
     '@tanstack/react-table',
     '@tanstack/table-core',

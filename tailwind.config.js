@@ -1,4 +1,22 @@
-const names = ['paper', 'raised', 'sunken', 'ink', 'soft', 'rule', 'line', 'verdigris', 'on-verdigris', 'verdigris-wash', 'amber', 'amber-wash', 'copper', 'copper-wash', 'signal', 'on-signal', 'signal-wash'];
+const names = [
+  'paper',
+  'raised',
+  'sunken',
+  'ink',
+  'soft',
+  'rule',
+  'line',
+  'verdigris',
+  'on-verdigris',
+  'verdigris-wash',
+  'amber',
+  'amber-wash',
+  'copper',
+  'copper-wash',
+  'signal',
+  'on-signal',
+  'signal-wash',
+];
 
 /** Colours are CSS variables (app/globals.css), so that light, dark and print change them in one place. */
 module.exports = {

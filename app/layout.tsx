@@ -20,7 +20,8 @@ export const viewport: Viewport = {
 export const dynamic = 'force-dynamic';
 
 /** Puts a kept choice of paper on the page before anything is drawn. */
-const KEEP_PAPER = "try{const p=localStorage.getItem('benchwright-paper');if(p==='light'||p==='dark')document.documentElement.dataset.theme=p}catch{}";
+const KEEP_PAPER =
+  "try{const p=localStorage.getItem('benchwright-paper');if(p==='light'||p==='dark')document.documentElement.dataset.theme=p}catch{}";
 
 export default async function RootLayout({ children }: Readonly<{ children: ReactNode }>) {
   const nonce = (await headers()).get('x-nonce') ?? undefined;
@@ -29,7 +30,12 @@ export default async function RootLayout({ children }: Readonly<{ children: Reac
       <body>
         <script nonce={nonce} suppressHydrationWarning dangerouslySetInnerHTML={{ __html: KEEP_PAPER }} />
         <QueryProvider>{children}</QueryProvider>
-        <Toaster position="bottom-center" toastOptions={{ style: { background: 'var(--ink)', color: 'var(--paper)', border: 'none', fontSize: '1rem' } }} />
+        <Toaster
+          position="bottom-center"
+          toastOptions={{
+            style: { background: 'var(--ink)', color: 'var(--paper)', border: 'none', fontSize: '1rem' },
+          }}
+        />
       </body>
     </html>
   );

@@ -2,7 +2,10 @@ import { DataTypes, Model } from 'sequelize';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize';
 
 /** Which request a batch serves, and with how much. */
-export class BatchRequestModel extends Model<InferAttributes<BatchRequestModel>, InferCreationAttributes<BatchRequestModel>> {
+export class BatchRequestModel extends Model<
+  InferAttributes<BatchRequestModel>,
+  InferCreationAttributes<BatchRequestModel>
+> {
   declare id: CreationOptional<string>;
   declare batchId: string;
   declare requestId: string;

@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { BatchStepKind } from '@/lib/domain/states';
 
 /** A line of the batch sheet to be ticked. */
-export class BatchStepModel extends Model<InferAttributes<BatchStepModel>, InferCreationAttributes<BatchStepModel>> {
+export class BatchStepModel extends Model<
+  InferAttributes<BatchStepModel>,
+  InferCreationAttributes<BatchStepModel>
+> {
   declare id: CreationOptional<string>;
   declare batchId: string;
   declare position: number;

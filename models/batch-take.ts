@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { LedgerUnit } from '@/lib/domain/quantities';
 
 /** What is taken from which lot, planned and actual. */
-export class BatchTakeModel extends Model<InferAttributes<BatchTakeModel>, InferCreationAttributes<BatchTakeModel>> {
+export class BatchTakeModel extends Model<
+  InferAttributes<BatchTakeModel>,
+  InferCreationAttributes<BatchTakeModel>
+> {
   declare id: CreationOptional<string>;
   declare batchId: string;
   declare position: number;

@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { JsonObject } from '@/lib/domain/json';
 
 /** Waste handed to a carrier with its manifest. */
-export class CollectionModel extends Model<InferAttributes<CollectionModel>, InferCreationAttributes<CollectionModel>> {
+export class CollectionModel extends Model<
+  InferAttributes<CollectionModel>,
+  InferCreationAttributes<CollectionModel>
+> {
   declare id: CreationOptional<string>;
   declare collectedOn: string;
   declare carrier: string;

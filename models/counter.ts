@@ -2,7 +2,10 @@ import { DataTypes, Model } from 'sequelize';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize';
 
 /** The last number given out for a series of codes. */
-export class CounterModel extends Model<InferAttributes<CounterModel>, InferCreationAttributes<CounterModel>> {
+export class CounterModel extends Model<
+  InferAttributes<CounterModel>,
+  InferCreationAttributes<CounterModel>
+> {
   declare name: string;
   declare value: CreationOptional<number>;
 

@@ -2,7 +2,10 @@ import { DataTypes, Model } from 'sequelize';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize';
 
 /** A supplier's safety data sheet kept outside the public folder. */
-export class DataSheetModel extends Model<InferAttributes<DataSheetModel>, InferCreationAttributes<DataSheetModel>> {
+export class DataSheetModel extends Model<
+  InferAttributes<DataSheetModel>,
+  InferCreationAttributes<DataSheetModel>
+> {
   declare id: CreationOptional<string>;
   declare substanceId: string;
   declare fileName: string;

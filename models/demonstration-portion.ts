@@ -2,7 +2,10 @@ import { DataTypes, Model } from 'sequelize';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize';
 
 /** One pour of a demonstration. */
-export class DemonstrationPortionModel extends Model<InferAttributes<DemonstrationPortionModel>, InferCreationAttributes<DemonstrationPortionModel>> {
+export class DemonstrationPortionModel extends Model<
+  InferAttributes<DemonstrationPortionModel>,
+  InferCreationAttributes<DemonstrationPortionModel>
+> {
   declare id: CreationOptional<string>;
   declare demonstrationId: string;
   declare position: number;

@@ -2,7 +2,10 @@ import { DataTypes, Model } from 'sequelize';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize';
 
 /** Solutions poured in a stated order. */
-export class DemonstrationModel extends Model<InferAttributes<DemonstrationModel>, InferCreationAttributes<DemonstrationModel>> {
+export class DemonstrationModel extends Model<
+  InferAttributes<DemonstrationModel>,
+  InferCreationAttributes<DemonstrationModel>
+> {
   declare id: CreationOptional<string>;
   declare name: string;
   declare ownerId: CreationOptional<string | null>;

@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { EquipmentKind } from '@/lib/domain/states';
 
 /** Balances and glassware that a room owns. */
-export class EquipmentModel extends Model<InferAttributes<EquipmentModel>, InferCreationAttributes<EquipmentModel>> {
+export class EquipmentModel extends Model<
+  InferAttributes<EquipmentModel>,
+  InferCreationAttributes<EquipmentModel>
+> {
   declare id: CreationOptional<string>;
   declare roomId: string;
   declare kind: EquipmentKind;

@@ -4,7 +4,10 @@ import type { Severity } from '@/lib/domain/gravity';
 import type { JsonObject } from '@/lib/domain/json';
 
 /** One remark of a plan with its rule, evidence and source. */
-export class FindingModel extends Model<InferAttributes<FindingModel>, InferCreationAttributes<FindingModel>> {
+export class FindingModel extends Model<
+  InferAttributes<FindingModel>,
+  InferCreationAttributes<FindingModel>
+> {
   declare id: CreationOptional<string>;
   declare planId: string;
   declare position: number;

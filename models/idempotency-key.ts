@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { JsonObject } from '@/lib/domain/json';
 
 /** The answer given to a call that may be sent twice. */
-export class IdempotencyKeyModel extends Model<InferAttributes<IdempotencyKeyModel>, InferCreationAttributes<IdempotencyKeyModel>> {
+export class IdempotencyKeyModel extends Model<
+  InferAttributes<IdempotencyKeyModel>,
+  InferCreationAttributes<IdempotencyKeyModel>
+> {
   declare id: CreationOptional<string>;
   declare key: string;
   declare userId: string;

@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { InvoiceState } from '@/lib/domain/states';
 
 /** A supplier's bill. */
-export class InvoiceModel extends Model<InferAttributes<InvoiceModel>, InferCreationAttributes<InvoiceModel>> {
+export class InvoiceModel extends Model<
+  InferAttributes<InvoiceModel>,
+  InferCreationAttributes<InvoiceModel>
+> {
   declare id: CreationOptional<string>;
   declare orderId: string;
   declare number: string;

@@ -7,7 +7,11 @@ import { prepareFile } from './sqlite';
 export function migrator(database: Sequelize): Umzug<QueryInterface> {
   const context = database.getQueryInterface();
   return new Umzug({
-    migrations: ALL_MIGRATIONS.map(({ name, up, down }) => ({ name, up: () => up(context), down: () => down(context) })),
+    migrations: ALL_MIGRATIONS.map(({ name, up, down }) => ({
+      name,
+      up: () => up(context),
+      down: () => down(context),
+    })),
     context,
     storage: new SequelizeStorage({ sequelize: database }),
     logger: undefined,

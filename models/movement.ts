@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { MovementKind } from '@/lib/domain/states';
 
 /** One line of the stock ledger; never edited. Amounts are millionths of the unit. */
-export class MovementModel extends Model<InferAttributes<MovementModel>, InferCreationAttributes<MovementModel>> {
+export class MovementModel extends Model<
+  InferAttributes<MovementModel>,
+  InferCreationAttributes<MovementModel>
+> {
   declare id: CreationOptional<string>;
   declare lotId: string;
   declare kind: MovementKind;

@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { LedgerUnit } from '@/lib/domain/quantities';
 
 /** Packs of one offer. */
-export class OrderLineModel extends Model<InferAttributes<OrderLineModel>, InferCreationAttributes<OrderLineModel>> {
+export class OrderLineModel extends Model<
+  InferAttributes<OrderLineModel>,
+  InferCreationAttributes<OrderLineModel>
+> {
   declare id: CreationOptional<string>;
   declare orderId: string;
   declare position: number;

@@ -4,7 +4,10 @@ import type { JsonObject } from '@/lib/domain/json';
 import type { OutboxChannel, OutboxState } from '@/lib/domain/states';
 
 /** Something to send to the outside, with its attempts. */
-export class OutboxMessageModel extends Model<InferAttributes<OutboxMessageModel>, InferCreationAttributes<OutboxMessageModel>> {
+export class OutboxMessageModel extends Model<
+  InferAttributes<OutboxMessageModel>,
+  InferCreationAttributes<OutboxMessageModel>
+> {
   declare id: CreationOptional<string>;
   declare channel: OutboxChannel;
   declare dedupeKey: string;

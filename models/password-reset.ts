@@ -2,7 +2,10 @@ import { DataTypes, Model } from 'sequelize';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize';
 
 /** A single-use token sent by e-mail; only its hash is kept. */
-export class PasswordResetModel extends Model<InferAttributes<PasswordResetModel>, InferCreationAttributes<PasswordResetModel>> {
+export class PasswordResetModel extends Model<
+  InferAttributes<PasswordResetModel>,
+  InferCreationAttributes<PasswordResetModel>
+> {
   declare id: CreationOptional<string>;
   declare userId: string;
   declare tokenHash: string;

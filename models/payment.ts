@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { PaymentState } from '@/lib/domain/states';
 
 /** Money asked for through the payment service. */
-export class PaymentModel extends Model<InferAttributes<PaymentModel>, InferCreationAttributes<PaymentModel>> {
+export class PaymentModel extends Model<
+  InferAttributes<PaymentModel>,
+  InferCreationAttributes<PaymentModel>
+> {
   declare id: CreationOptional<string>;
   declare orderId: string;
   declare amountMinor: number;

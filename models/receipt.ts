@@ -2,7 +2,10 @@ import { DataTypes, Model } from 'sequelize';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize';
 
 /** Packs that arrived and the lot they became. */
-export class ReceiptModel extends Model<InferAttributes<ReceiptModel>, InferCreationAttributes<ReceiptModel>> {
+export class ReceiptModel extends Model<
+  InferAttributes<ReceiptModel>,
+  InferCreationAttributes<ReceiptModel>
+> {
   declare id: CreationOptional<string>;
   declare orderLineId: string;
   declare lotId: string;

@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { JsonObject } from '@/lib/domain/json';
 
 /** One line of the append-only record; each hash covers the line before. */
-export class RecordEntryModel extends Model<InferAttributes<RecordEntryModel>, InferCreationAttributes<RecordEntryModel>> {
+export class RecordEntryModel extends Model<
+  InferAttributes<RecordEntryModel>,
+  InferCreationAttributes<RecordEntryModel>
+> {
   declare seq: CreationOptional<number>;
   declare at: string;
   declare actorId: CreationOptional<string | null>;

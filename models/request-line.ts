@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { RequestLineKind } from '@/lib/domain/states';
 
 /** A solution or a demonstration asked for. */
-export class RequestLineModel extends Model<InferAttributes<RequestLineModel>, InferCreationAttributes<RequestLineModel>> {
+export class RequestLineModel extends Model<
+  InferAttributes<RequestLineModel>,
+  InferCreationAttributes<RequestLineModel>
+> {
   declare id: CreationOptional<string>;
   declare requestId: string;
   declare position: number;

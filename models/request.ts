@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { RequestState } from '@/lib/domain/states';
 
 /** What one session needs. */
-export class RequestModel extends Model<InferAttributes<RequestModel>, InferCreationAttributes<RequestModel>> {
+export class RequestModel extends Model<
+  InferAttributes<RequestModel>,
+  InferCreationAttributes<RequestModel>
+> {
   declare id: CreationOptional<string>;
   declare code: string;
   declare sessionId: string;

@@ -2,7 +2,10 @@ import { DataTypes, Model } from 'sequelize';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize';
 
 /** A question or answer in a review. */
-export class ReviewMessageModel extends Model<InferAttributes<ReviewMessageModel>, InferCreationAttributes<ReviewMessageModel>> {
+export class ReviewMessageModel extends Model<
+  InferAttributes<ReviewMessageModel>,
+  InferCreationAttributes<ReviewMessageModel>
+> {
   declare id: CreationOptional<string>;
   declare reviewId: string;
   declare authorId: string;

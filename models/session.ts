@@ -2,7 +2,10 @@ import { DataTypes, Model } from 'sequelize';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize';
 
 /** A bench session of a course. */
-export class SessionModel extends Model<InferAttributes<SessionModel>, InferCreationAttributes<SessionModel>> {
+export class SessionModel extends Model<
+  InferAttributes<SessionModel>,
+  InferCreationAttributes<SessionModel>
+> {
   declare id: CreationOptional<string>;
   declare course: string;
   declare title: string;

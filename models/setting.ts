@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { JsonObject } from '@/lib/domain/json';
 
 /** A setting of the house. */
-export class SettingModel extends Model<InferAttributes<SettingModel>, InferCreationAttributes<SettingModel>> {
+export class SettingModel extends Model<
+  InferAttributes<SettingModel>,
+  InferCreationAttributes<SettingModel>
+> {
   declare key: string;
   declare value: JsonObject;
   declare version: CreationOptional<number>;

@@ -4,7 +4,10 @@ import type { LedgerUnit } from '@/lib/domain/quantities';
 import type { ShortageState } from '@/lib/domain/states';
 
 /** What planned use lacks, and by when it must be ordered. */
-export class ShortageModel extends Model<InferAttributes<ShortageModel>, InferCreationAttributes<ShortageModel>> {
+export class ShortageModel extends Model<
+  InferAttributes<ShortageModel>,
+  InferCreationAttributes<ShortageModel>
+> {
   declare id: CreationOptional<string>;
   declare substanceId: string;
   declare unit: LedgerUnit;

@@ -2,7 +2,10 @@ import { DataTypes, Model } from 'sequelize';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize';
 
 /** One solute of a recipe. */
-export class SolutionSoluteModel extends Model<InferAttributes<SolutionSoluteModel>, InferCreationAttributes<SolutionSoluteModel>> {
+export class SolutionSoluteModel extends Model<
+  InferAttributes<SolutionSoluteModel>,
+  InferCreationAttributes<SolutionSoluteModel>
+> {
   declare id: CreationOptional<string>;
   declare solutionId: string;
   declare position: number;

@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { ToleranceClass } from '@/lib/domain/quantities';
 
 /** A recipe: solutes at strengths in water. */
-export class SolutionModel extends Model<InferAttributes<SolutionModel>, InferCreationAttributes<SolutionModel>> {
+export class SolutionModel extends Model<
+  InferAttributes<SolutionModel>,
+  InferCreationAttributes<SolutionModel>
+> {
   declare id: CreationOptional<string>;
   declare name: string;
   declare ownerId: CreationOptional<string | null>;

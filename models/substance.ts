@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { LedgerUnit } from '@/lib/domain/quantities';
 
 /** A catalogue entry; identity comes from the data files, holds and low-stock points are local. */
-export class SubstanceModel extends Model<InferAttributes<SubstanceModel>, InferCreationAttributes<SubstanceModel>> {
+export class SubstanceModel extends Model<
+  InferAttributes<SubstanceModel>,
+  InferCreationAttributes<SubstanceModel>
+> {
   declare id: string;
   declare name: string;
   declare cas: string;

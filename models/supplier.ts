@@ -2,7 +2,10 @@ import { DataTypes, Model } from 'sequelize';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize';
 
 /** A supplier with its terms. */
-export class SupplierModel extends Model<InferAttributes<SupplierModel>, InferCreationAttributes<SupplierModel>> {
+export class SupplierModel extends Model<
+  InferAttributes<SupplierModel>,
+  InferCreationAttributes<SupplierModel>
+> {
   declare id: CreationOptional<string>;
   declare name: string;
   declare email: string;

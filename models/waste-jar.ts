@@ -3,7 +3,10 @@ import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequel
 import type { JsonObject } from '@/lib/domain/json';
 
 /** A jar whose content is known by composition. */
-export class WasteJarModel extends Model<InferAttributes<WasteJarModel>, InferCreationAttributes<WasteJarModel>> {
+export class WasteJarModel extends Model<
+  InferAttributes<WasteJarModel>,
+  InferCreationAttributes<WasteJarModel>
+> {
   declare id: CreationOptional<string>;
   declare code: string;
   declare stream: string;

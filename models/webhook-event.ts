@@ -2,7 +2,10 @@ import { DataTypes, Model } from 'sequelize';
 import type { CreationOptional, InferAttributes, InferCreationAttributes, Sequelize } from 'sequelize';
 
 /** An event already taken in from the payment service. */
-export class WebhookEventModel extends Model<InferAttributes<WebhookEventModel>, InferCreationAttributes<WebhookEventModel>> {
+export class WebhookEventModel extends Model<
+  InferAttributes<WebhookEventModel>,
+  InferCreationAttributes<WebhookEventModel>
+> {
   declare id: string;
   declare kind: string;
   declare createdAt: CreationOptional<Date>;

@@ -4,7 +4,9 @@ import { closeDatabase } from '@/models/db';
 
 async function main(): Promise<void> {
   if (environment().APP_MODE === 'production') throw new Error('The demo is not for production');
-  console.log((await seedDemo()) ? 'Larkmoor College moved in.' : 'Somebody lives here already; nothing was seeded.');
+  console.log(
+    (await seedDemo()) ? 'Larkmoor College moved in.' : 'Somebody lives here already; nothing was seeded.',
+  );
   await closeDatabase();
 }
 

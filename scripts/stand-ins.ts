@@ -10,7 +10,9 @@ async function main(): Promise<void> {
     webhookSecret: process.env.STRIPE_WEBHOOK_SECRET ?? '',
     supplierKey: process.env.SUPPLIER_API_KEY ?? '',
   });
-  console.log(`Stand-ins: SMTP on ${standIns.smtpPort}; payments, ordering and kept letters on http://127.0.0.1:${standIns.httpPort}/mail`);
+  console.log(
+    `Stand-ins: SMTP on ${standIns.smtpPort}; payments, ordering and kept letters on http://127.0.0.1:${standIns.httpPort}/mail`,
+  );
   for (const signal of ['SIGINT', 'SIGTERM'] as const) {
     process.once(signal, () => {
       void standIns.close().then(() => process.exit(0));

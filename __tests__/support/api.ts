@@ -32,7 +32,8 @@ export const nobody = callerWith(null);
 export async function signIn(mailbox: string, password = DEMO_PASSWORD): Promise<Caller> {
   const email = mailbox.includes('@') ? mailbox : `${mailbox}@larkmoor.example`;
   const response = await request(serverUrl()).post('/api/session').send({ email, password });
-  if (response.status !== 200) throw new Error(`${email} could not sign in: ${response.status} ${response.text}`);
+  if (response.status !== 200)
+    throw new Error(`${email} could not sign in: ${response.status} ${response.text}`);
   const [cookie = ''] = response.get('set-cookie') ?? [];
   return callerWith(cookie.split(';')[0] ?? '');
 }
@@ -65,11 +66,15 @@ export function pointersOf(response: Response): string[] {
  * schema, so an answer that does not fit breaks the page.
  */
 export function bodyOf<T>(response: Response, status = 200): T {
-  if (response.status !== status) throw new Error(`Expected ${status}, got ${response.status}: ${response.text.slice(0, 600)}`);
+  if (response.status !== status)
+    throw new Error(`Expected ${status}, got ${response.status}: ${response.text.slice(0, 600)}`);
   const { method, url } = response.request;
   const { pathname } = new URL(url);
   const schema = responseSchemaOf(method, pathname);
-  if (schema) schema.parse(response.body, { error: (issue) => `${method} ${pathname} answers ${issue.path?.join('.')}: ${issue.code}` });
+  if (schema)
+    schema.parse(response.body, {
+      error: (issue) => `${method} ${pathname} answers ${issue.path?.join('.')}: ${issue.code}`,
+    });
   return response.body as T;
 }
 
@@ -77,7 +82,10 @@ function responseSchemaOf(method: string, pathname: string) {
   const parts = pathname.split('/');
   const endpoint = ALL_ENDPOINTS.filter((declared) => declared.method === method).filter(({ path }) => {
     const wanted = path.split('/');
-    return wanted.length === parts.length && wanted.every((part, index) => part.startsWith('{') || part === parts[index]);
+    return (
+      wanted.length === parts.length &&
+      wanted.every((part, index) => part.startsWith('{') || part === parts[index])
+    );
   });
   // a fixed address goes before one with a parameter, as it does in the router
   const response = endpoint.sort((a, b) => a.path.split('{').length - b.path.split('{').length)[0]?.response;

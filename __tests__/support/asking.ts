@@ -8,14 +8,18 @@ import type { Caller } from './api';
 
 /** The recipe of this name among those of the demo college. */
 export async function recipe(caller: Caller, name: string): Promise<Solution> {
-  const page = bodyOf<Page<Solution>>(await caller.get(`/api/solutions?search=${encodeURIComponent(name)}&pageSize=50`));
+  const page = bodyOf<Page<Solution>>(
+    await caller.get(`/api/solutions?search=${encodeURIComponent(name)}&pageSize=50`),
+  );
   const found = page.items.find((solution) => solution.name === name);
   if (!found) throw new Error(`No recipe is called ${name}`);
   return found;
 }
 
 export async function demonstration(caller: Caller, name: string): Promise<Demonstration> {
-  const page = bodyOf<Page<Demonstration>>(await caller.get(`/api/demonstrations?search=${encodeURIComponent(name)}&pageSize=50`));
+  const page = bodyOf<Page<Demonstration>>(
+    await caller.get(`/api/demonstrations?search=${encodeURIComponent(name)}&pageSize=50`),
+  );
   const found = page.items.find((candidate) => candidate.name === name);
   if (!found) throw new Error(`No demonstration is called ${name}`);
   return found;
@@ -34,15 +38,34 @@ export async function buildSession(caller: Caller, year: number, benches = 10): 
   if (!room) throw new Error('The demo has no Laboratory 1');
   const startsAt = new Date(Date.UTC(year, 0, sessions, 9));
   const endsAt = new Date(Date.UTC(year, 0, sessions, 11));
-  const session = { course: 'CH 900', title: `Test session ${sessions}`, startsAt: startsAt.toISOString(), endsAt: endsAt.toISOString(), roomId: room.id, benches };
+  const session = {
+    course: 'CH 900',
+    title: `Test session ${sessions}`,
+    startsAt: startsAt.toISOString(),
+    endsAt: endsAt.toISOString(),
+    roomId: room.id,
+    benches,
+  };
   return bodyOf<LabSession>(await caller.post('/api/lab-sessions', session), 201);
 }
 
-export async function buildDraft(caller: Caller, year: number, lines: readonly RequestLineInput[]): Promise<RequestDetail> {
+export async function buildDraft(
+  caller: Caller,
+  year: number,
+  lines: readonly RequestLineInput[],
+): Promise<RequestDetail> {
   const session = await buildSession(caller, year);
-  return bodyOf<RequestDetail>(await caller.post('/api/requests', { sessionId: session.id, note: null, lines }), 201);
+  return bodyOf<RequestDetail>(
+    await caller.post('/api/requests', { sessionId: session.id, note: null, lines }),
+    201,
+  );
 }
 
-export async function submit(caller: Caller, draft: Pick<RequestDetail, 'id' | 'version'>): Promise<RequestDetail> {
-  return bodyOf<RequestDetail>(await caller.post(`/api/requests/${draft.id}/submit`, { version: draft.version }));
+export async function submit(
+  caller: Caller,
+  draft: Pick<RequestDetail, 'id' | 'version'>,
+): Promise<RequestDetail> {
+  return bodyOf<RequestDetail>(
+    await caller.post(`/api/requests/${draft.id}/submit`, { version: draft.version }),
+  );
 }

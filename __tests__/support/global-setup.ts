@@ -29,10 +29,25 @@ async function freePorts(): Promise<number> {
 export default async function globalSetup(): Promise<void> {
   const port = await freePorts();
   const dataDir = mkdtempSync(path.join(os.tmpdir(), 'benchwright-test-'));
-  const child: ChildProcess = spawn(process.execPath, ['-e', "require('./scripts/lib/serve.js').serveHouse('start').catch((e) => { console.error(e); process.exit(1); })"], {
-    stdio: ['ignore', 'ignore', 'inherit'],
-    env: { ...process.env, NODE_ENV: 'production', PORT: String(port), DATA_DIR: dataDir, RATE_LIMITS: 'relaxed', LOG_LEVEL: 'error', BASE_URL: `http://localhost:${port}` },
-  });
+  const child: ChildProcess = spawn(
+    process.execPath,
+    [
+      '-e',
+      "require('./scripts/lib/serve.js').serveHouse('start').catch((e) => { console.error(e); process.exit(1); })",
+    ],
+    {
+      stdio: ['ignore', 'ignore', 'inherit'],
+      env: {
+        ...process.env,
+        NODE_ENV: 'production',
+        PORT: String(port),
+        DATA_DIR: dataDir,
+        RATE_LIMITS: 'relaxed',
+        LOG_LEVEL: 'error',
+        BASE_URL: `http://localhost:${port}`,
+      },
+    },
+  );
   globalThis.benchwrightTestRun = { child, dataDir };
   const app = `http://localhost:${port}`;
   mkdirSync(path.dirname(SERVED_FILE), { recursive: true });
@@ -41,7 +56,8 @@ export default async function globalSetup(): Promise<void> {
   for (;;) {
     const response = await fetch(`${app}/api/health`).catch(() => null);
     if (response?.ok) return;
-    if (child.exitCode !== null || Date.now() > until) throw new Error('The server for the tests did not start');
+    if (child.exitCode !== null || Date.now() > until)
+      throw new Error('The server for the tests did not start');
     await new Promise((resolve) => setTimeout(resolve, 250));
   }
 }

@@ -15,10 +15,16 @@ export default async function TodayPage({ searchParams }: PageProps<'/'>) {
   const viewer = await pageViewer('today:read');
   const { day: asked } = await searchParams;
   const today = isoDay(new Date());
-  const day = typeof asked === 'string' && /^\d{4}-\d\d-\d\d$/.test(asked) && isValid(parseISO(asked)) ? asked : today;
+  const day =
+    typeof asked === 'string' && /^\d{4}-\d\d-\d\d$/.test(asked) && isValid(parseISO(asked)) ? asked : today;
   const { lines, margin } = await getDay(viewer, day);
   const week = Array.from({ length: 7 }, (_, offset) => isoDay(addDays(parseISO(day), offset - 2)));
-  const named = new Intl.DateTimeFormat('en-GB', { weekday: 'long', day: 'numeric', month: 'long', timeZone: 'UTC' }).format(new Date(day));
+  const named = new Intl.DateTimeFormat('en-GB', {
+    weekday: 'long',
+    day: 'numeric',
+    month: 'long',
+    timeZone: 'UTC',
+  }).format(new Date(day));
   const kinds = [...new Set(lines.map(({ kind }) => kind.toLowerCase()))];
   const counts = kinds.map((kind) => {
     const count = lines.filter((line) => line.kind.toLowerCase() === kind).length;
@@ -36,7 +42,18 @@ export default async function TodayPage({ searchParams }: PageProps<'/'>) {
           ) : null
         }
       />
-      <DayPage day={day} today={today} week={week} lines={lines} margin={margin} empty={<EmptyState title="Nothing is due on this day">Look at another day above, or find anything with the search at the top.</EmptyState>} />
+      <DayPage
+        day={day}
+        today={today}
+        week={week}
+        lines={lines}
+        margin={margin}
+        empty={
+          <EmptyState title="Nothing is due on this day">
+            Look at another day above, or find anything with the search at the top.
+          </EmptyState>
+        }
+      />
     </>
   );
 }

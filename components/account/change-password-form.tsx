@@ -32,8 +32,23 @@ export function ChangePasswordForm() {
   return (
     <form method="post" onSubmit={(event) => void save(event)} noValidate className="grid gap-4">
       {failure && <Alert tone="stop" title={failure} />}
-      <TextInput id="current" label="Present password" type="password" autoComplete="current-password" error={formState.errors.currentPassword?.message} {...register('currentPassword')} />
-      <TextInput id="new" label="New password" type="password" autoComplete="new-password" hint="At least 12 characters." error={formState.errors.newPassword?.message} {...register('newPassword')} />
+      <TextInput
+        id="current"
+        label="Present password"
+        type="password"
+        autoComplete="current-password"
+        error={formState.errors.currentPassword?.message}
+        {...register('currentPassword')}
+      />
+      <TextInput
+        id="new"
+        label="New password"
+        type="password"
+        autoComplete="new-password"
+        hint="At least 12 characters."
+        error={formState.errors.newPassword?.message}
+        {...register('newPassword')}
+      />
       <Button type="submit" look="primary" isBusy={formState.isSubmitting} busyText="Saving …">
         Change the password
       </Button>

@@ -14,7 +14,10 @@ import { TextInput } from '../ui/inputs';
 export function ForgotPasswordForm() {
   const [failure, setFailure] = useState<string | null>(null);
   const [isAsked, setAsked] = useState(false);
-  const { register, handleSubmit, setError, formState } = useForm({ resolver: zodResolver(forgotPasswordSchema), defaultValues: { email: '' } });
+  const { register, handleSubmit, setError, formState } = useForm({
+    resolver: zodResolver(forgotPasswordSchema),
+    defaultValues: { email: '' },
+  });
 
   const ask = handleSubmit(async (values) => {
     setFailure(null);
@@ -36,7 +39,14 @@ export function ForgotPasswordForm() {
   return (
     <form method="post" onSubmit={(event) => void ask(event)} noValidate className="grid gap-4">
       {failure && <Alert tone="stop" title={failure} />}
-      <TextInput id="email" label="E-mail" type="email" autoComplete="username" error={formState.errors.email?.message} {...register('email')} />
+      <TextInput
+        id="email"
+        label="E-mail"
+        type="email"
+        autoComplete="username"
+        error={formState.errors.email?.message}
+        {...register('email')}
+      />
       <Button type="submit" look="primary" isBusy={formState.isSubmitting} busyText="Asking …">
         Send me a letter
       </Button>

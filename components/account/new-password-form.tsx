@@ -14,7 +14,10 @@ import { TextInput } from '../ui/inputs';
 export function NewPasswordForm({ token }: { readonly token: string }) {
   const [failure, setFailure] = useState<string | null>(null);
   const [isDone, setDone] = useState(false);
-  const { register, handleSubmit, setError, formState } = useForm({ resolver: zodResolver(resetPasswordSchema), defaultValues: { token, password: '' } });
+  const { register, handleSubmit, setError, formState } = useForm({
+    resolver: zodResolver(resetPasswordSchema),
+    defaultValues: { token, password: '' },
+  });
 
   const save = handleSubmit(async (values) => {
     setFailure(null);

@@ -15,7 +15,10 @@ import { TextInput } from '../ui/inputs';
 export function SignInForm() {
   const router = useRouter();
   const [failure, setFailure] = useState<string | null>(null);
-  const { register, handleSubmit, setError, formState } = useForm({ resolver: zodResolver(signInSchema), defaultValues: { email: '', password: '' } });
+  const { register, handleSubmit, setError, formState } = useForm({
+    resolver: zodResolver(signInSchema),
+    defaultValues: { email: '', password: '' },
+  });
   const { errors, isSubmitting, isSubmitSuccessful } = formState;
 
   const signIn = handleSubmit(async (values) => {
@@ -34,9 +37,28 @@ export function SignInForm() {
   return (
     <form method="post" onSubmit={(event) => void signIn(event)} noValidate className="grid gap-4">
       {failure && <Alert tone="stop" title={failure} />}
-      <TextInput id="email" label="E-mail" type="email" autoComplete="username" error={errors.email?.message} {...register('email')} />
-      <TextInput id="password" label="Password" type="password" autoComplete="current-password" error={errors.password?.message} {...register('password')} />
-      <Button type="submit" look="primary" isBusy={isSubmitting || isSubmitSuccessful} busyText="Signing in …">
+      <TextInput
+        id="email"
+        label="E-mail"
+        type="email"
+        autoComplete="username"
+        error={errors.email?.message}
+        {...register('email')}
+      />
+      <TextInput
+        id="password"
+        label="Password"
+        type="password"
+        autoComplete="current-password"
+        error={errors.password?.message}
+        {...register('password')}
+      />
+      <Button
+        type="submit"
+        look="primary"
+        isBusy={isSubmitting || isSubmitSuccessful}
+        busyText="Signing in …"
+      >
         Sign in
       </Button>
       <p>

@@ -38,7 +38,14 @@ export function ThemeChoice() {
       <legend className="mb-1 font-semibold">Paper</legend>
       {CHOICES.map(([value, words]) => (
         <label key={value} className="flex min-h-11 items-center gap-3">
-          <input type="radio" name="paper" value={value} checked={choice === value} onChange={() => choose(value)} className="size-5 accent-verdigris" />
+          <input
+            type="radio"
+            name="paper"
+            value={value}
+            checked={choice === value}
+            onChange={() => choose(value)}
+            className="size-5 accent-verdigris"
+          />
           {words}
         </label>
       ))}

@@ -26,7 +26,8 @@ export function AccountForm({ user, onDone }: { readonly user: User | null; read
   const [problem, setProblem] = useState<ApiProblem | null>(null);
   const [isBusy, setBusy] = useState(false);
   const [key] = useState(newIdempotencyKey);
-  const errorOf = (field: string) => problem?.errors.find(({ pointer }) => fieldNameOf(pointer).split('.')[0] === field)?.detail;
+  const errorOf = (field: string) =>
+    problem?.errors.find(({ pointer }) => fieldNameOf(pointer).split('.')[0] === field)?.detail;
 
   const save = async (event: FormEvent) => {
     event.preventDefault();
@@ -35,7 +36,12 @@ export function AccountForm({ user, onDone }: { readonly user: User | null; read
     const approvalLimitMinor = Math.round(Number(limit.replace(',', '.')) * 100);
     const shared = { name, roles: [...roles], approvalLimitMinor };
     try {
-      if (user) await callApi(userEndpoints.update, { params: { id: user.id }, body: { ...shared, isDisabled, version: user.version }, idempotencyKey: key });
+      if (user)
+        await callApi(userEndpoints.update, {
+          params: { id: user.id },
+          body: { ...shared, isDisabled, version: user.version },
+          idempotencyKey: key,
+        });
       else await callApi(userEndpoints.create, { body: { ...shared, email, password }, idempotencyKey: key });
       await cache.invalidateQueries({ queryKey: [userEndpoints.list.path, 'list'] });
       toast(user ? `${name} changed` : `${name} can sign in now`);
@@ -51,10 +57,23 @@ export function AccountForm({ user, onDone }: { readonly user: User | null; read
   return (
     <form onSubmit={(event) => void save(event)} noValidate className="grid gap-4">
       {problem && problem.errors.length === 0 && <Alert tone="stop" title={problem.message} />}
-      <TextInput id="account-name" label="Name" value={name} onChange={(event) => setName(event.target.value)} error={errorOf('name')} />
+      <TextInput
+        id="account-name"
+        label="Name"
+        value={name}
+        onChange={(event) => setName(event.target.value)}
+        error={errorOf('name')}
+      />
       {!user && (
         <>
-          <TextInput id="account-email" label="E-mail" type="email" value={email} onChange={(event) => setEmail(event.target.value)} error={errorOf('email')} />
+          <TextInput
+            id="account-email"
+            label="E-mail"
+            type="email"
+            value={email}
+            onChange={(event) => setEmail(event.target.value)}
+            error={errorOf('email')}
+          />
           <TextInput
             id="account-password"
             label="First password"
@@ -75,13 +94,30 @@ export function AccountForm({ user, onDone }: { readonly user: User | null; read
             id={`role-${role}`}
             label={ROLE_NAMES[role]}
             checked={roles.includes(role)}
-            onChange={(event) => setRoles(event.target.checked ? [...roles, role] : roles.filter((other) => other !== role))}
+            onChange={(event) =>
+              setRoles(event.target.checked ? [...roles, role] : roles.filter((other) => other !== role))
+            }
           />
         ))}
         {errorOf('roles') && <p className="text-sm font-semibold text-signal">{errorOf('roles')}</p>}
       </fieldset>
-      <NumberInput id="account-limit" label="May approve orders up to" unit="GBP" value={limit} onChange={(event) => setLimit(event.target.value)} error={errorOf('approvalLimitMinor')} />
-      {user && <Checkbox id="account-closed" label="Closed" hint="Cannot sign in; what they did stays in the record." checked={isDisabled} onChange={(event) => setDisabled(event.target.checked)} />}
+      <NumberInput
+        id="account-limit"
+        label="May approve orders up to"
+        unit="GBP"
+        value={limit}
+        onChange={(event) => setLimit(event.target.value)}
+        error={errorOf('approvalLimitMinor')}
+      />
+      {user && (
+        <Checkbox
+          id="account-closed"
+          label="Closed"
+          hint="Cannot sign in; what they did stays in the record."
+          checked={isDisabled}
+          onChange={(event) => setDisabled(event.target.checked)}
+        />
+      )}
       <Button type="submit" look="primary" isBusy={isBusy} busyText="Saving …">
         {user ? 'Save' : 'Open the account'}
       </Button>

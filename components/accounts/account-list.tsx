@@ -27,14 +27,39 @@ export function AccountList() {
         searchLabel="Name or e-mail"
         empty="No accounts."
         columns={[
-          { id: 'name', header: 'Name', sortKey: 'name', cell: ({ name }) => <span className="font-semibold">{name}</span> },
-          { id: 'email', header: 'E-mail', sortKey: 'email', cell: ({ email }) => <span className="break-all">{email}</span> },
-          { id: 'roles', header: 'Roles', cell: ({ roles }) => roles.map((role) => ROLE_NAMES[role]).join(', ') },
-          { id: 'limit', header: 'Approves up to', isNumeric: true, cell: ({ roles, approvalLimitMinor }) => (roles.includes('purchasing') ? formatMoney(approvalLimitMinor, 'GBP') : '–') },
+          {
+            id: 'name',
+            header: 'Name',
+            sortKey: 'name',
+            cell: ({ name }) => <span className="font-semibold">{name}</span>,
+          },
+          {
+            id: 'email',
+            header: 'E-mail',
+            sortKey: 'email',
+            cell: ({ email }) => <span className="break-all">{email}</span>,
+          },
+          {
+            id: 'roles',
+            header: 'Roles',
+            cell: ({ roles }) => roles.map((role) => ROLE_NAMES[role]).join(', '),
+          },
+          {
+            id: 'limit',
+            header: 'Approves up to',
+            isNumeric: true,
+            cell: ({ roles, approvalLimitMinor }) =>
+              roles.includes('purchasing') ? formatMoney(approvalLimitMinor, 'GBP') : '–',
+          },
           {
             id: 'state',
             header: 'State',
-            cell: ({ isDisabled, isLocked }) => <StateMark state={isDisabled ? 'refused' : isLocked ? 'waiting' : 'ready'} words={isDisabled ? 'closed' : isLocked ? 'locked for now' : 'open'} />,
+            cell: ({ isDisabled, isLocked }) => (
+              <StateMark
+                state={isDisabled ? 'refused' : isLocked ? 'waiting' : 'ready'}
+                words={isDisabled ? 'closed' : isLocked ? 'locked for now' : 'open'}
+              />
+            ),
           },
           {
             id: 'change',
@@ -47,7 +72,11 @@ export function AccountList() {
           },
         ]}
       />
-      <Dialog title={open === 'new' ? 'Open an account' : `Change ${open?.name ?? ''}`} isOpen={open !== null} onOpenChange={() => setOpen(null)}>
+      <Dialog
+        title={open === 'new' ? 'Open an account' : `Change ${open?.name ?? ''}`}
+        isOpen={open !== null}
+        onOpenChange={() => setOpen(null)}
+      >
         {open !== null && <AccountForm user={open === 'new' ? null : open} onDone={() => setOpen(null)} />}
       </Dialog>
     </>

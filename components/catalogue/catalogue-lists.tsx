@@ -29,9 +29,25 @@ export function SubstanceList() {
             </Link>
           ),
         },
-        { id: 'formula', header: 'Formula', sortKey: 'formula', cell: ({ formula }) => <Formula id={formula} /> },
-        { id: 'cas', header: 'CAS', sortKey: 'cas', cell: ({ cas }) => <span className="font-mono">{cas}</span> },
-        { id: 'group', header: 'Stands with', sortKey: 'storageGroup', cell: ({ storageGroup, restricted }) => `${storageGroup.replaceAll('_', ' ')}${restricted ? ', restricted' : ''}` },
+        {
+          id: 'formula',
+          header: 'Formula',
+          sortKey: 'formula',
+          cell: ({ formula }) => <Formula id={formula} />,
+        },
+        {
+          id: 'cas',
+          header: 'CAS',
+          sortKey: 'cas',
+          cell: ({ cas }) => <span className="font-mono">{cas}</span>,
+        },
+        {
+          id: 'group',
+          header: 'Stands with',
+          sortKey: 'storageGroup',
+          cell: ({ storageGroup, restricted }) =>
+            `${storageGroup.replaceAll('_', ' ')}${restricted ? ', restricted' : ''}`,
+        },
         { id: 'stock', header: 'In stock', isNumeric: true, cell: ({ inStock }) => inStock },
         { id: 'state', header: 'State', cell: ({ isHeld }) => (isHeld ? <StateMark state="held" /> : null) },
       ]}
@@ -45,7 +61,11 @@ export function SolutionList() {
       endpoint={solutionEndpoints.list}
       label="Solutions"
       searchLabel="Name"
-      empty={<EmptyState title="No recipes yet">A recipe says what is dissolved, how strong, and how long it keeps.</EmptyState>}
+      empty={
+        <EmptyState title="No recipes yet">
+          A recipe says what is dissolved, how strong, and how long it keeps.
+        </EmptyState>
+      }
       columns={[
         {
           id: 'name',
@@ -63,12 +83,24 @@ export function SolutionList() {
           cell: ({ solutes }) =>
             solutes.map(({ substance, formula, molarity }) => (
               <span key={substance} className="mr-4 whitespace-nowrap">
-                <Formula id={formula} /> <span className="font-mono text-soft">{formatMolarity(molarity)}</span>
+                <Formula id={formula} />{' '}
+                <span className="font-mono text-soft">{formatMolarity(molarity)}</span>
               </span>
             )),
         },
-        { id: 'life', header: 'Keeps', isNumeric: true, sortKey: 'shelfLifeDays', cell: ({ shelfLifeDays }) => `${shelfLifeDays} days` },
-        { id: 'tolerance', header: 'Made to', cell: ({ toleranceClass }) => ({ bench: '5 %', ordinary: '1 %', analytical: '0.2 %' })[toleranceClass] },
+        {
+          id: 'life',
+          header: 'Keeps',
+          isNumeric: true,
+          sortKey: 'shelfLifeDays',
+          cell: ({ shelfLifeDays }) => `${shelfLifeDays} days`,
+        },
+        {
+          id: 'tolerance',
+          header: 'Made to',
+          cell: ({ toleranceClass }) =>
+            ({ bench: '5 %', ordinary: '1 %', analytical: '0.2 %' })[toleranceClass],
+        },
         { id: 'note', header: 'Storage', cell: ({ storageNote }) => storageNote ?? '' },
       ]}
     />
@@ -85,8 +117,18 @@ export function SpeciesList() {
       columns={[
         { id: 'id', header: 'Species', sortKey: 'id', cell: ({ id }) => <Formula id={id} /> },
         { id: 'name', header: 'Name', sortKey: 'name', cell: ({ name }) => name },
-        { id: 'from', header: 'Formed from', cell: ({ formedFrom }) => <span className="font-mono text-sm">{formedFrom}</span> },
-        { id: 'logK', header: 'log K', isNumeric: true, sortKey: 'logK', cell: ({ logK }) => logK?.toFixed(2) ?? '–' },
+        {
+          id: 'from',
+          header: 'Formed from',
+          cell: ({ formedFrom }) => <span className="font-mono text-sm">{formedFrom}</span>,
+        },
+        {
+          id: 'logK',
+          header: 'log K',
+          isNumeric: true,
+          sortKey: 'logK',
+          cell: ({ logK }) => logK?.toFixed(2) ?? '–',
+        },
         { id: 'source', header: 'Source', cell: ({ source }) => <span className="text-sm">{source}</span> },
       ]}
     />

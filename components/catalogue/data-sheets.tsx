@@ -11,7 +11,15 @@ import { Field } from '../ui/field';
 import { Moment } from '../ui/moment';
 
 /** The sheets kept for a substance, and a place to add one. */
-export function DataSheets({ substanceId, sheets, mayUpload }: { readonly substanceId: string; readonly sheets: readonly DataSheet[]; readonly mayUpload: boolean }) {
+export function DataSheets({
+  substanceId,
+  sheets,
+  mayUpload,
+}: {
+  readonly substanceId: string;
+  readonly sheets: readonly DataSheet[];
+  readonly mayUpload: boolean;
+}) {
   const router = useRouter();
   const input = useRef<HTMLInputElement>(null);
   const [error, setError] = useState<string>();
@@ -25,7 +33,10 @@ export function DataSheets({ substanceId, sheets, mayUpload }: { readonly substa
     setError(undefined);
     const form = new FormData();
     form.set('file', file);
-    const response = await fetch(addressOf(dataSheetEndpoints.upload.path, { id: substanceId }, undefined), { method: 'POST', body: form }).catch(() => null);
+    const response = await fetch(addressOf(dataSheetEndpoints.upload.path, { id: substanceId }, undefined), {
+      method: 'POST',
+      body: form,
+    }).catch(() => null);
     setBusy(false);
     if (!response) return setError('The server did not answer. Try again.');
     if (!response.ok) {
@@ -39,7 +50,9 @@ export function DataSheets({ substanceId, sheets, mayUpload }: { readonly substa
 
   return (
     <>
-      {sheets.length === 0 && <p className="mb-3 text-soft">None kept yet. Read the supplier’s before handling.</p>}
+      {sheets.length === 0 && (
+        <p className="mb-3 text-soft">None kept yet. Read the supplier’s before handling.</p>
+      )}
       <ul className="mb-4">
         {sheets.map(({ id, fileName, sizeBytes, uploadedBy, uploadedAt }) => (
           <li key={id} className="border-b py-2">
@@ -53,7 +66,14 @@ export function DataSheets({ substanceId, sheets, mayUpload }: { readonly substa
       {mayUpload && (
         <div className="grid gap-3">
           <Field id="data-sheet" label="Add a data sheet" hint="PDF, at most 8 MB." error={error}>
-            <input id="data-sheet" ref={input} type="file" accept="application/pdf,.pdf" aria-describedby="data-sheet-hint" className="block w-full py-2" />
+            <input
+              id="data-sheet"
+              ref={input}
+              type="file"
+              accept="application/pdf,.pdf"
+              aria-describedby="data-sheet-hint"
+              className="block w-full py-2"
+            />
           </Field>
           <p>
             <Button isBusy={isBusy} busyText="Uploading …" onClick={() => void upload()}>

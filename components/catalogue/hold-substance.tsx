@@ -21,7 +21,10 @@ export function HoldSubstance({ substance }: { readonly substance: SubstanceDeta
     setBusy(true);
     setError(undefined);
     try {
-      await callApi(substanceEndpoints.hold, { params: { id: substance.id }, body: { isHeld: !substance.isHeld, reason, version: substance.version } });
+      await callApi(substanceEndpoints.hold, {
+        params: { id: substance.id },
+        body: { isHeld: !substance.isHeld, reason, version: substance.version },
+      });
       toast(substance.isHeld ? 'The hold is lifted' : 'Use is stopped');
       setReason('');
       router.refresh();
@@ -34,7 +37,13 @@ export function HoldSubstance({ substance }: { readonly substance: SubstanceDeta
   };
   return (
     <form onSubmit={(event) => void save(event)} className="grid gap-3">
-      <TextInput id="hold-reason" label="Reason" value={reason} onChange={(event) => setReason(event.target.value)} error={error} />
+      <TextInput
+        id="hold-reason"
+        label="Reason"
+        value={reason}
+        onChange={(event) => setReason(event.target.value)}
+        error={error}
+      />
       <p>
         <Button type="submit" look={substance.isHeld ? 'quiet' : 'danger'} isBusy={isBusy}>
           {substance.isHeld ? 'Lift the hold' : 'Hold it now'}

@@ -7,8 +7,12 @@ export function LabelElements({ classification }: { readonly classification: Cla
   const { signalWord, pictograms, hazards, supplemental, incomplete } = classification;
   return (
     <div>
-      {incomplete.length > 0 && <Alert tone="attention" title={`Incomplete: no data for ${incomplete.join(', ')}`} />}
-      {hazards.length === 0 && incomplete.length === 0 && <p>Not classified as hazardous by calculation. The supplier’s sheet outranks it.</p>}
+      {incomplete.length > 0 && (
+        <Alert tone="attention" title={`Incomplete: no data for ${incomplete.join(', ')}`} />
+      )}
+      {hazards.length === 0 && incomplete.length === 0 && (
+        <p>Not classified as hazardous by calculation. The supplier’s sheet outranks it.</p>
+      )}
       {pictograms.length > 0 && (
         <div className="mb-2 flex flex-wrap gap-2">
           {pictograms.map((code) => (

@@ -10,7 +10,8 @@ export interface FormulaPart {
  */
 export function formulaParts(id: string): FormulaPart[] {
   const [, bodyAndCharge = id, phase = ''] = /^(.*?)(\((?:aq|s|l|g)\))?$/.exec(id) ?? [];
-  const [, body = bodyAndCharge, sign = '', magnitude = ''] = /^(.+?)(?:([+-])(\d*))?$/.exec(bodyAndCharge) ?? [];
+  const [, body = bodyAndCharge, sign = '', magnitude = ''] =
+    /^(.+?)(?:([+-])(\d*))?$/.exec(bodyAndCharge) ?? [];
   const parts: FormulaPart[] = [];
   for (const [text] of body.replaceAll(/[.·*](?=\d*[A-Z(])/g, '·').matchAll(/\d+|\D+/g)) {
     const before = parts.at(-1)?.text.at(-1);
@@ -30,7 +31,10 @@ export function formulaText(id: string): string {
     .map(({ text, place }) => {
       if (place === 'base') return text;
       const digits = place === 'sub' ? sub : sup;
-      return text.replaceAll(/\d/g, (digit) => digits[Number(digit)] ?? digit).replace('+', '⁺').replace('−', '⁻');
+      return text
+        .replaceAll(/\d/g, (digit) => digits[Number(digit)] ?? digit)
+        .replace('+', '⁺')
+        .replace('−', '⁻');
     })
     .join('');
 }

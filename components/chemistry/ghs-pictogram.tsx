@@ -20,7 +20,13 @@ const SYMBOLS: Readonly<Record<string, ReactNode>> = {
     <>
       <circle cx="47" cy="58" r="13" />
       <path d="M56 46l5-6 4 4-5 6z" />
-      <path d="M64 38l3-9M67 41l10-3M61 35l-3-9M70 45l8 5M54 74l2 8M36 70l-7 6M32 58l-9-1M37 47l-6-7" fill="none" stroke="#000" strokeWidth="3" strokeLinecap="round" />
+      <path
+        d="M64 38l3-9M67 41l10-3M61 35l-3-9M70 45l8 5M54 74l2 8M36 70l-7 6M32 58l-9-1M37 47l-6-7"
+        fill="none"
+        stroke="#000"
+        strokeWidth="3"
+        strokeLinecap="round"
+      />
     </>
   ),
   GHS02: (
@@ -36,11 +42,22 @@ const SYMBOLS: Readonly<Record<string, ReactNode>> = {
       <path d="M30 79h40v4H30z" />
     </>
   ),
-  GHS04: <path d="M24 62l37-21c4-2 8-1 11 1l5-3 2 4-5 3c1 4-1 8-4 10L33 77c-6 3-12-1-13-6-1-4 1-7 4-9z" transform="translate(0 -6)" />,
+  GHS04: (
+    <path
+      d="M24 62l37-21c4-2 8-1 11 1l5-3 2 4-5 3c1 4-1 8-4 10L33 77c-6 3-12-1-13-6-1-4 1-7 4-9z"
+      transform="translate(0 -6)"
+    />
+  ),
   GHS05: (
     <>
       <path d="M22 34l22-8 3 6-22 8zM52 28l22 6-2 6-21-6z" />
-      <path d="M40 42v8M45 42v12M62 44v6M67 45v11" stroke="#000" strokeWidth="3" strokeDasharray="3 3" fill="none" />
+      <path
+        d="M40 42v8M45 42v12M62 44v6M67 45v11"
+        stroke="#000"
+        strokeWidth="3"
+        strokeDasharray="3 3"
+        fill="none"
+      />
       <path d="M24 62h14l3 5 5-5h10v12H24z" />
       <path d="M56 66c4-5 10-6 14-4l8-2c3 0 3 4 0 5l-7 3c-2 5-8 7-15 6z" />
     </>
@@ -80,13 +97,33 @@ const SYMBOLS: Readonly<Record<string, ReactNode>> = {
 };
 
 /** A hazard pictogram: a square set on a point, red frame, black symbol on white. */
-export function GhsPictogram({ code, sizeMm, className }: { readonly code: string; readonly sizeMm?: number; readonly className?: string }) {
+export function GhsPictogram({
+  code,
+  sizeMm,
+  className,
+}: {
+  readonly code: string;
+  readonly sizeMm?: number;
+  readonly className?: string;
+}) {
   const symbol = SYMBOLS[code];
   if (!symbol) return null;
   const size = sizeMm === undefined ? {} : { width: `${sizeMm}mm`, height: `${sizeMm}mm` };
   return (
-    <svg viewBox="0 0 100 100" role="img" aria-label={PICTOGRAM_NAMES[code]} className={className} style={size}>
-      <path d="M50 3.500L96.500 50 50 96.500 3.500 50z" fill="#fff" stroke="#d5001c" strokeWidth="6" strokeLinejoin="miter" />
+    <svg
+      viewBox="0 0 100 100"
+      role="img"
+      aria-label={PICTOGRAM_NAMES[code]}
+      className={className}
+      style={size}
+    >
+      <path
+        d="M50 3.500L96.500 50 50 96.500 3.500 50z"
+        fill="#fff"
+        stroke="#d5001c"
+        strokeWidth="6"
+        strokeLinejoin="miter"
+      />
       <g transform="translate(50 50) scale(0.78) translate(-50 -50)">{symbol}</g>
     </svg>
   );

@@ -29,18 +29,29 @@ const LOWEST_LOG = -30;
 
 /** Every species on one logarithmic axis, the strongest at the top. */
 export function Ladder({ species, marks = [], most = 25 }: LadderProps) {
-  const drawn = [...species].filter(({ molarity }) => molarity > 10 ** LOWEST_LOG).sort((a, b) => b.molarity - a.molarity).slice(0, most);
+  const drawn = [...species]
+    .filter(({ molarity }) => molarity > 10 ** LOWEST_LOG)
+    .sort((a, b) => b.molarity - a.molarity)
+    .slice(0, most);
   const logs = drawn.map(({ molarity }) => Math.log10(molarity));
   const high = Math.max(0, Math.ceil(Math.max(...logs, 0)));
   const low = Math.min(-6, Math.floor(Math.min(...logs, -6)));
   const xOf = (log: number) => NAME_WIDTH + ((log - low) / (high - low)) * (WIDTH - NAME_WIDTH - RIGHT_PAD);
   const step = Math.max(1, Math.ceil((high - low) / 9));
-  const ticks = Array.from({ length: Math.floor((high - low) / step) + 1 }, (_, index) => high - index * step);
+  const ticks = Array.from(
+    { length: Math.floor((high - low) / step) + 1 },
+    (_, index) => high - index * step,
+  );
   const tall = HEAD + drawn.length * ROW + 8;
 
   return (
     <figure>
-      <svg viewBox={`0 0 ${WIDTH} ${tall}`} className="w-full" role="img" aria-label={`${drawn.length} species by concentration; the table below lists them`}>
+      <svg
+        viewBox={`0 0 ${WIDTH} ${tall}`}
+        className="w-full"
+        role="img"
+        aria-label={`${drawn.length} species by concentration; the table below lists them`}
+      >
         {ticks.map((tick) => (
           <g key={tick}>
             <path d={`M${xOf(tick)} ${HEAD - 6}V${tall - 6}`} stroke="var(--rule)" strokeWidth="1" />
@@ -53,7 +64,12 @@ export function Ladder({ species, marks = [], most = 25 }: LadderProps) {
           .filter(({ molarity }) => Math.log10(molarity) >= low && Math.log10(molarity) <= high)
           .map(({ label, molarity }) => (
             <g key={label}>
-              <path d={`M${xOf(Math.log10(molarity))} ${HEAD - 6}V${tall - 6}`} stroke="var(--signal)" strokeWidth="1.5" strokeDasharray="4 3" />
+              <path
+                d={`M${xOf(Math.log10(molarity))} ${HEAD - 6}V${tall - 6}`}
+                stroke="var(--signal)"
+                strokeWidth="1.5"
+                strokeDasharray="4 3"
+              />
               <title>{label}</title>
             </g>
           ))}
@@ -72,7 +88,9 @@ export function Ladder({ species, marks = [], most = 25 }: LadderProps) {
           );
         })}
       </svg>
-      <figcaption className="text-sm text-soft">mol/L, each line ten times the next{step > 1 ? ` (every ${step} powers marked)` : ''}</figcaption>
+      <figcaption className="text-sm text-soft">
+        mol/L, each line ten times the next{step > 1 ? ` (every ${step} powers marked)` : ''}
+      </figcaption>
       <Details summary="As a table">
         <table className="w-full text-sm">
           <thead>

@@ -31,7 +31,13 @@ export function Vessel({ capacityMl, volumeMl, hex, words, solids, gases = [], c
   const height = BOTTOM - TOP;
   const level = BOTTOM - height * Math.min(1, volumeMl / capacityMl);
   const solidGrams = solids.reduce((sum, { grams }) => sum + grams, 0);
-  const settled = solidGrams > 0 ? Math.min((BOTTOM - level) * 0.6, Math.max(4, (SETTLED_UNITS_PER_GRAM * solidGrams * 100) / Math.max(volumeMl, 1))) : 0;
+  const settled =
+    solidGrams > 0
+      ? Math.min(
+          (BOTTOM - level) * 0.6,
+          Math.max(4, (SETTLED_UNITS_PER_GRAM * solidGrams * 100) / Math.max(volumeMl, 1)),
+        )
+      : 0;
   const marks = [0.25, 0.5, 0.75, 1];
   const told = [
     `${formatVolume(volumeMl)} of ${words} liquid in a ${formatVolume(capacityMl)} beaker`,
@@ -49,17 +55,36 @@ export function Vessel({ capacityMl, volumeMl, hex, words, solids, gases = [], c
       {volumeMl > 0 && (
         <>
           <rect x={LEFT} y={level} width={RIGHT - LEFT} height={BOTTOM - level} fill={hex} />
-          <ellipse cx={(LEFT + RIGHT) / 2} cy={level} rx={(RIGHT - LEFT) / 2} ry="5" fill={hex} stroke="var(--line)" strokeWidth="0.8" />
+          <ellipse
+            cx={(LEFT + RIGHT) / 2}
+            cy={level}
+            rx={(RIGHT - LEFT) / 2}
+            ry="5"
+            fill={hex}
+            stroke="var(--line)"
+            strokeWidth="0.8"
+          />
         </>
       )}
       {settled > 0 &&
         stack(solids, settled, solidGrams).map(({ id, hex: colour, y, tall }) => (
           <g key={id}>
             <rect x={LEFT} y={y} width={RIGHT - LEFT} height={tall} fill={colour} />
-            <path d={`M${LEFT} ${y}h${RIGHT - LEFT}`} stroke="var(--line)" strokeWidth="0.8" strokeDasharray="3 2" />
+            <path
+              d={`M${LEFT} ${y}h${RIGHT - LEFT}`}
+              stroke="var(--line)"
+              strokeWidth="0.8"
+              strokeDasharray="3 2"
+            />
           </g>
         ))}
-      <path d={`M${LEFT - 8} ${TOP - 8}q8 2 8 10V${BOTTOM - 6}q0 8 8 8h${RIGHT - LEFT - 16}q8 0 8-8V${TOP + 2}q0-8 8-10`} fill="none" stroke="var(--ink)" strokeWidth="2.4" strokeLinejoin="round" />
+      <path
+        d={`M${LEFT - 8} ${TOP - 8}q8 2 8 10V${BOTTOM - 6}q0 8 8 8h${RIGHT - LEFT - 16}q8 0 8-8V${TOP + 2}q0-8 8-10`}
+        fill="none"
+        stroke="var(--ink)"
+        strokeWidth="2.4"
+        strokeLinejoin="round"
+      />
       {marks.map((mark) => {
         const y = BOTTOM - height * mark;
         return (

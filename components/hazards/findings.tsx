@@ -13,7 +13,13 @@ const EDGE: Readonly<Record<string, string>> = {
 };
 
 /** Findings in words, gravest first: why, what must not happen, what protects, where it comes from. */
-export function Findings({ findings, isCompact = false }: { readonly findings: readonly Finding[]; readonly isCompact?: boolean }) {
+export function Findings({
+  findings,
+  isCompact = false,
+}: {
+  readonly findings: readonly Finding[];
+  readonly isCompact?: boolean;
+}) {
   if (findings.length === 0) {
     return (
       <p className="flex items-center gap-2 font-semibold text-verdigris">
@@ -24,13 +30,18 @@ export function Findings({ findings, isCompact = false }: { readonly findings: r
   return (
     <ol className="space-y-4">
       {findings.map((finding, index) => (
-        <li key={`${finding.rule}-${index}`} className={classNames('border-l-4 pl-3', EDGE[finding.severity])}>
+        <li
+          key={`${finding.rule}-${index}`}
+          className={classNames('border-l-4 pl-3', EDGE[finding.severity])}
+        >
           <p className="flex flex-wrap items-center gap-x-3 gap-y-1">
             <StateMark state={finding.severity} />
             <strong>{finding.title}</strong>
           </p>
           <p className="mt-1">{finding.reason}</p>
-          {finding.concerns.length > 0 && <p className="text-sm text-soft">Concerns: {finding.concerns.join(' · ')}</p>}
+          {finding.concerns.length > 0 && (
+            <p className="text-sm text-soft">Concerns: {finding.concerns.join(' · ')}</p>
+          )}
           {finding.mustNot && <p className="mt-1 font-semibold">{finding.mustNot}</p>}
           {finding.gas && <GasFigures gas={finding.gas} />}
           {!isCompact && <Guidance finding={finding} />}
@@ -61,19 +72,26 @@ function Guidance({ finding }: { readonly finding: Finding }) {
           {finding.alternative}
         </p>
       )}
-      <p className="mt-1 text-sm text-soft">Source: {finding.source}. Local rules and a competent person decide.</p>
+      <p className="mt-1 text-sm text-soft">
+        Source: {finding.source}. Local rules and a competent person decide.
+      </p>
     </>
   );
 }
 
 function GasFigures({ gas }: { readonly gas: NonNullable<Finding['gas']> }) {
   const rows: (readonly [string, string])[] = [
-    ['Worst case', `${formatAmount(gas.worstCaseMoles * 1000, 'mmol')}, ${formatAmount(gas.mlAt25C, 'mL')} of gas at 25 °C`],
+    [
+      'Worst case',
+      `${formatAmount(gas.worstCaseMoles * 1000, 'mmol')}, ${formatAmount(gas.mlAt25C, 'mL')} of gas at 25 °C`,
+    ],
     ['In the room, well mixed', formatAmount(gas.ppmInRoom, 'ppm')],
     ['In a 0.1 m³ breathing zone', formatAmount(gas.ppmInBreathingZone, 'ppm')],
   ];
-  if (gas.predictedPpmInBreathingZone !== null) rows.push(['Predicted there at this pH', formatAmount(gas.predictedPpmInBreathingZone, 'ppm')]);
-  if (gas.ppmAboveLiquid !== null) rows.push(['Just above the liquid', formatAmount(gas.ppmAboveLiquid, 'ppm')]);
+  if (gas.predictedPpmInBreathingZone !== null)
+    rows.push(['Predicted there at this pH', formatAmount(gas.predictedPpmInBreathingZone, 'ppm')]);
+  if (gas.ppmAboveLiquid !== null)
+    rows.push(['Just above the liquid', formatAmount(gas.ppmAboveLiquid, 'ppm')]);
   return (
     <table className="mt-2 text-sm">
       <caption className="text-left font-semibold">{gas.species} gas</caption>

@@ -23,8 +23,16 @@ import { SaveDemonstration } from './save-demonstration';
 const PREVIEW_DELAY_MS = 120;
 
 /** The bench for trying: portions at the left, the vessel in the middle, the species at the right. */
-export function MixBench({ demonstration, maySave }: { readonly demonstration: Demonstration | null; readonly maySave: boolean }) {
-  const [portions, setPortions] = useState<readonly BenchPortion[]>(() => (demonstration?.portions ?? []).map((portion) => newPortion(portion)));
+export function MixBench({
+  demonstration,
+  maySave,
+}: {
+  readonly demonstration: Demonstration | null;
+  readonly maySave: boolean;
+}) {
+  const [portions, setPortions] = useState<readonly BenchPortion[]>(() =>
+    (demonstration?.portions ?? []).map((portion) => newPortion(portion)),
+  );
   const [vesselMl, setVesselMl] = useState(String(demonstration?.vesselMl ?? 250));
   const [rested, setRested] = useState(portions);
   useEffect(() => {
@@ -40,7 +48,8 @@ export function MixBench({ demonstration, maySave }: { readonly demonstration: D
     retry: false,
   });
 
-  const change = (key: string, volumeMl: number) => setPortions((all) => all.map((portion) => (portion.key === key ? { ...portion, volumeMl } : portion)));
+  const change = (key: string, volumeMl: number) =>
+    setPortions((all) => all.map((portion) => (portion.key === key ? { ...portion, volumeMl } : portion)));
   const shift = (index: number, by: number) =>
     setPortions((all) => {
       const next = [...all];
@@ -79,17 +88,37 @@ export function MixBench({ demonstration, maySave }: { readonly demonstration: D
             onChoose={({ value, label }) => {
               void findSolutions(label, new AbortController().signal).then((found) => {
                 const solution = found.find(({ id }) => id === value);
-                if (solution) setPortions((all) => [...all, newPortion({ label: solution.name, solutionId: solution.id, solutes: solution.solutes.map(({ substance, molarity }) => ({ substance, molarity })), volumeMl: 25 })]);
+                if (solution)
+                  setPortions((all) => [
+                    ...all,
+                    newPortion({
+                      label: solution.name,
+                      solutionId: solution.id,
+                      solutes: solution.solutes.map(({ substance, molarity }) => ({ substance, molarity })),
+                      volumeMl: 25,
+                    }),
+                  ]);
               });
             }}
-            find={async (text, signal) => (await findSolutions(text, signal)).map(({ id, name }) => ({ value: id, label: name }))}
+            find={async (text, signal) =>
+              (await findSolutions(text, signal)).map(({ id, name }) => ({ value: id, label: name }))
+            }
           />
-          <NumberInput id="vessel" label="Vessel" unit="mL" className="mt-4 w-40" value={vesselMl} onChange={(event) => setVesselMl(event.target.value)} />
+          <NumberInput
+            id="vessel"
+            label="Vessel"
+            unit="mL"
+            className="mt-4 w-40"
+            value={vesselMl}
+            onChange={(event) => setVesselMl(event.target.value)}
+          />
         </Section>
         {maySave && portions.length >= 2 && <SaveDemonstration portions={portions} vesselMl={capacity} />}
       </div>
       <div className="min-w-0" aria-live="polite">
-        {portions.length === 0 && <p className="text-soft">Pour two solutions together to see what they do.</p>}
+        {portions.length === 0 && (
+          <p className="text-soft">Pour two solutions together to see what they do.</p>
+        )}
         {preview.isFetching && !mix && portions.length > 0 && <Skeleton lines={6} />}
         {preview.error && <Alert tone="attention" title={preview.error.message} />}
         {mix && (
@@ -104,7 +133,9 @@ export function MixBench({ demonstration, maySave }: { readonly demonstration: D
             />
             <p className="mt-2 text-center text-lg">
               {mix.appearance.solution.words}
-              {mix.equilibrium.pH !== null && <span className="font-mono"> · pH {mix.equilibrium.pH.toFixed(2)}</span>}
+              {mix.equilibrium.pH !== null && (
+                <span className="font-mono"> · pH {mix.equilibrium.pH.toFixed(2)}</span>
+              )}
             </p>
             {mix.appearance.solids.map((solid) => (
               <p key={solid.id} className="text-center">

@@ -16,7 +16,16 @@ interface PortionRowProps {
 }
 
 /** A bottle whose fill is dragged; arrow keys move it by a step. */
-export function PortionRow({ portion, number, most, isFirst, isLast, onVolume, onShift, onRemove }: PortionRowProps) {
+export function PortionRow({
+  portion,
+  number,
+  most,
+  isFirst,
+  isLast,
+  onVolume,
+  onShift,
+  onRemove,
+}: PortionRowProps) {
   const id = `${portion.key}-volume`;
   return (
     <li className="border-l-4 border-copper bg-raised p-3">
@@ -39,10 +48,20 @@ export function PortionRow({ portion, number, most, isFirst, isLast, onVolume, o
         className="h-11 w-full accent-verdigris"
       />
       <div className="flex flex-wrap gap-1">
-        <Button look="plain" disabled={isFirst} onClick={() => onShift(-1)} aria-label={`Pour ${portion.label} earlier`}>
+        <Button
+          look="plain"
+          disabled={isFirst}
+          onClick={() => onShift(-1)}
+          aria-label={`Pour ${portion.label} earlier`}
+        >
           Earlier
         </Button>
-        <Button look="plain" disabled={isLast} onClick={() => onShift(1)} aria-label={`Pour ${portion.label} later`}>
+        <Button
+          look="plain"
+          disabled={isLast}
+          onClick={() => onShift(1)}
+          aria-label={`Pour ${portion.label} later`}
+        >
           Later
         </Button>
         <Button look="plain" onClick={onRemove} aria-label={`Take ${portion.label} away`}>

@@ -17,5 +17,11 @@ export function newPortion(part: Omit<BenchPortion, 'key'>): BenchPortion {
 }
 
 export function previewBody(portions: readonly BenchPortion[]): Pick<MixPreviewBody, 'portions'> {
-  return { portions: portions.map(({ label, solutes, volumeMl }) => ({ label, solutes: solutes.map((solute) => ({ ...solute })), volumeMl })) };
+  return {
+    portions: portions.map(({ label, solutes, volumeMl }) => ({
+      label,
+      solutes: solutes.map((solute) => ({ ...solute })),
+      volumeMl,
+    })),
+  };
 }

@@ -12,7 +12,13 @@ import { Section } from '../ui/section';
 import type { BenchPortion } from './portion';
 
 /** Keeps what stands on the bench as a demonstration that requests can ask for. */
-export function SaveDemonstration({ portions, vesselMl }: { readonly portions: readonly BenchPortion[]; readonly vesselMl: number }) {
+export function SaveDemonstration({
+  portions,
+  vesselMl,
+}: {
+  readonly portions: readonly BenchPortion[];
+  readonly vesselMl: number;
+}) {
   const [name, setName] = useState('');
   const [outcomeWanted, setOutcome] = useState('');
   const [problem, setProblem] = useState<ApiProblem | null>(null);
@@ -25,7 +31,12 @@ export function SaveDemonstration({ portions, vesselMl }: { readonly portions: r
     setProblem(null);
     try {
       await callApi(demonstrationEndpoints.create, {
-        body: { name, outcomeWanted: outcomeWanted || null, vesselMl, portions: portions.map(({ solutionId, volumeMl }) => ({ solutionId: solutionId ?? '', volumeMl })) },
+        body: {
+          name,
+          outcomeWanted: outcomeWanted || null,
+          vesselMl,
+          portions: portions.map(({ solutionId, volumeMl }) => ({ solutionId: solutionId ?? '', volumeMl })),
+        },
         idempotencyKey: key,
       });
       toast(`“${name}” can be asked for in a request now`);
@@ -43,9 +54,23 @@ export function SaveDemonstration({ portions, vesselMl }: { readonly portions: r
   return (
     <Section title="Keep it as a demonstration">
       <form onSubmit={(event) => void save(event)} noValidate className="grid gap-3">
-        {problem && problem.errors.every(({ pointer }) => pointer !== '#/name') && <Alert tone="stop" title={problem.errors[0]?.detail ?? problem.message} />}
-        <TextInput id="demonstration-name" label="Name" value={name} onChange={(event) => setName(event.target.value)} error={problem?.errors.find(({ pointer }) => pointer === '#/name')?.detail} />
-        <TextArea id="demonstration-outcome" label="What should be seen" rows={2} value={outcomeWanted} onChange={(event) => setOutcome(event.target.value)} />
+        {problem && problem.errors.every(({ pointer }) => pointer !== '#/name') && (
+          <Alert tone="stop" title={problem.errors[0]?.detail ?? problem.message} />
+        )}
+        <TextInput
+          id="demonstration-name"
+          label="Name"
+          value={name}
+          onChange={(event) => setName(event.target.value)}
+          error={problem?.errors.find(({ pointer }) => pointer === '#/name')?.detail}
+        />
+        <TextArea
+          id="demonstration-outcome"
+          label="What should be seen"
+          rows={2}
+          value={outcomeWanted}
+          onChange={(event) => setOutcome(event.target.value)}
+        />
         <p>
           <Button type="submit" look="primary" isBusy={isBusy} busyText="Saving …">
             Save as demonstration

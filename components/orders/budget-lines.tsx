@@ -22,7 +22,8 @@ export function BudgetLines({ budgets }: { readonly budgets: readonly BudgetRow[
               <span className="bg-amber" style={{ width: share(committedMinor) }} />
             </div>
             <p className="text-sm text-soft">
-              {money(spentMinor)} paid, {money(committedMinor)} promised, {left < 0 ? `${money(-left)} over` : `${money(left)} left`}
+              {money(spentMinor)} paid, {money(committedMinor)} promised,{' '}
+              {left < 0 ? `${money(-left)} over` : `${money(left)} left`}
             </p>
           </li>
         );

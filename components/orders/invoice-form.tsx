@@ -25,8 +25,14 @@ export function InvoiceForm({ order }: { readonly order: OrderDetail }) {
     setProblem(null);
     const amountMinor = amount.trim() === '' ? NaN : Math.round(Number(amount.replace(',', '.')) * 100);
     try {
-      await callApi(orderEndpoints.invoice, { params: { id: order.id }, body: { number, amountMinor, version: order.version }, idempotencyKey: key });
-      toast(amountMinor === order.totalMinor ? 'It matches the order' : 'It differs from the order: disputed');
+      await callApi(orderEndpoints.invoice, {
+        params: { id: order.id },
+        body: { number, amountMinor, version: order.version },
+        idempotencyKey: key,
+      });
+      toast(
+        amountMinor === order.totalMinor ? 'It matches the order' : 'It differs from the order: disputed',
+      );
       setNumber('');
       setAmount('');
       setKey(newIdempotencyKey());
@@ -40,8 +46,23 @@ export function InvoiceForm({ order }: { readonly order: OrderDetail }) {
   };
   return (
     <form onSubmit={(event) => void enter(event)} noValidate className="grid gap-4 sm:grid-cols-2">
-      <TextInput id="invoice-number" label="Invoice number" value={number} onChange={(event) => setNumber(event.target.value)} error={errorOf('number')} />
-      <NumberInput id="invoice-amount" label="Amount" unit={order.currency} value={amount} onChange={(event) => setAmount(event.target.value)} error={errorOf('amountMinor') ?? (problem && problem.errors.length === 0 ? problem.message : undefined)} />
+      <TextInput
+        id="invoice-number"
+        label="Invoice number"
+        value={number}
+        onChange={(event) => setNumber(event.target.value)}
+        error={errorOf('number')}
+      />
+      <NumberInput
+        id="invoice-amount"
+        label="Amount"
+        unit={order.currency}
+        value={amount}
+        onChange={(event) => setAmount(event.target.value)}
+        error={
+          errorOf('amountMinor') ?? (problem && problem.errors.length === 0 ? problem.message : undefined)
+        }
+      />
       <p>
         <Button type="submit" isBusy={isBusy} busyText="Entering …">
           Enter the invoice

@@ -14,11 +14,25 @@ import { TextArea } from '../ui/inputs';
 
 type Verb = 'submit' | 'approve' | 'send' | 'pay' | 'cancel';
 
-const DONE: Readonly<Record<Verb, string>> = { submit: 'It waits for approval', approve: 'Approved', send: 'On its way to the supplier', pay: 'Paid', cancel: 'Cancelled' };
+const DONE: Readonly<Record<Verb, string>> = {
+  submit: 'It waits for approval',
+  approve: 'Approved',
+  send: 'On its way to the supplier',
+  pay: 'Paid',
+  cancel: 'Cancelled',
+};
 const LOOK_AGAIN_MS = 2000;
 
 /** What can be done with an order now, and by whom. */
-export function OrderActions({ order, mayDraft, mayApprove }: { readonly order: OrderDetail; readonly mayDraft: boolean; readonly mayApprove: boolean }) {
+export function OrderActions({
+  order,
+  mayDraft,
+  mayApprove,
+}: {
+  readonly order: OrderDetail;
+  readonly mayDraft: boolean;
+  readonly mayApprove: boolean;
+}) {
   const router = useRouter();
   const [busy, setBusy] = useState<Verb | 'refuse' | null>(null);
   const [failure, setFailure] = useState<string | null>(null);
@@ -37,8 +51,14 @@ export function OrderActions({ order, mayDraft, mayApprove }: { readonly order: 
     setFailure(null);
     try {
       const body = { version: order.version, reason };
-      const after = await callApi(orderEndpoints[verb], { params: { id: order.id }, body, idempotencyKey: newIdempotencyKey() });
-      toast(verb === 'refuse' ? 'Refused' : verb === 'pay' && !after.isPaid ? 'The payment failed' : DONE[verb]);
+      const after = await callApi(orderEndpoints[verb], {
+        params: { id: order.id },
+        body,
+        idempotencyKey: newIdempotencyKey(),
+      });
+      toast(
+        verb === 'refuse' ? 'Refused' : verb === 'pay' && !after.isPaid ? 'The payment failed' : DONE[verb],
+      );
       setRefusing(false);
       router.refresh();
     } catch (error) {
@@ -54,7 +74,8 @@ export function OrderActions({ order, mayDraft, mayApprove }: { readonly order: 
     </Button>
   );
   const blocked = order.whyNotApprove;
-  const isPayable = !order.isPaid && ['approved', 'sent', 'acknowledged', 'part-received', 'received'].includes(order.state);
+  const isPayable =
+    !order.isPaid && ['approved', 'sent', 'acknowledged', 'part-received', 'received'].includes(order.state);
 
   return (
     <div className="no-print mb-8">
@@ -79,12 +100,28 @@ export function OrderActions({ order, mayDraft, mayApprove }: { readonly order: 
           </>
         )}
         {mayApprove && !blocked && order.state === 'approved' && button('send', 'Send to the supplier')}
-        {mayApprove && !blocked && isPayable && button('pay', `Pay ${formatMoney(order.totalMinor, order.currency, 'en-GB')}`, order.state === 'approved' ? 'quiet' : 'primary')}
-        {mayDraft && !order.isPaid && ['draft', 'for-approval', 'approved'].includes(order.state) && button('cancel', 'Cancel the order', 'danger')}
+        {mayApprove &&
+          !blocked &&
+          isPayable &&
+          button(
+            'pay',
+            `Pay ${formatMoney(order.totalMinor, order.currency, 'en-GB')}`,
+            order.state === 'approved' ? 'quiet' : 'primary',
+          )}
+        {mayDraft &&
+          !order.isPaid &&
+          ['draft', 'for-approval', 'approved'].includes(order.state) &&
+          button('cancel', 'Cancel the order', 'danger')}
       </div>
       <Dialog title={`Refuse ${order.code}`} isOpen={isRefusing} onOpenChange={setRefusing}>
         <div className="grid gap-4">
-          <TextArea id="refuse-reason" label="Reason" value={reason} onChange={(event) => setReason(event.target.value)} error={isRefusing && failure ? failure : undefined} />
+          <TextArea
+            id="refuse-reason"
+            label="Reason"
+            value={reason}
+            onChange={(event) => setReason(event.target.value)}
+            error={isRefusing && failure ? failure : undefined}
+          />
           <Button look="danger" isBusy={busy === 'refuse'} onClick={() => void act('refuse')}>
             Refuse the order
           </Button>

@@ -33,9 +33,16 @@ export function OrderForm({ budgets }: { readonly budgets: readonly { id: string
   const total = lines.reduce((sum, { offer, packs }) => sum + offer.priceMinor * (Number(packs) || 0), 0);
 
   const find = async (text: string, signal: AbortSignal) => {
-    const { items } = await callApi(orderEndpoints.offers, { query: { search: text, pageSize: 15, ...(supplier ? { supplierId: supplier.supplierId } : {}) }, signal });
+    const { items } = await callApi(orderEndpoints.offers, {
+      query: { search: text, pageSize: 15, ...(supplier ? { supplierId: supplier.supplierId } : {}) },
+      signal,
+    });
     found.current = items;
-    return items.map((offer) => ({ value: offer.id, label: `${offer.packSize} ${offer.substanceName}`, detail: `${offer.supplierName}, ${formatMoney(offer.priceMinor, 'GBP', 'en-GB')}` }));
+    return items.map((offer) => ({
+      value: offer.id,
+      label: `${offer.packSize} ${offer.substanceName}`,
+      detail: `${offer.supplierName}, ${formatMoney(offer.priceMinor, 'GBP', 'en-GB')}`,
+    }));
   };
   const [found] = useState<{ current: readonly OfferRow[] }>({ current: [] });
 
@@ -45,7 +52,15 @@ export function OrderForm({ budgets }: { readonly budgets: readonly { id: string
     setProblem(null);
     try {
       const order = await callApi(orderEndpoints.create, {
-        body: { supplierId: supplier?.supplierId ?? '', budgetId, note: note.trim() || null, lines: lines.map(({ offer, packs }) => ({ offerId: offer.id, packs: packs.trim() === '' ? NaN : Number(packs) })) },
+        body: {
+          supplierId: supplier?.supplierId ?? '',
+          budgetId,
+          note: note.trim() || null,
+          lines: lines.map(({ offer, packs }) => ({
+            offerId: offer.id,
+            packs: packs.trim() === '' ? NaN : Number(packs),
+          })),
+        },
         idempotencyKey: key,
       });
       toast(`${order.code} is drafted`);
@@ -59,10 +74,21 @@ export function OrderForm({ budgets }: { readonly budgets: readonly { id: string
 
   return (
     <form onSubmit={(event) => void save(event)} noValidate className="grid max-w-3xl gap-4">
-      {problem && <Alert tone="stop" title={problem.errors.find(({ pointer }) => !/^#\/lines\/\d/.test(pointer))?.detail ?? 'Some lines need attention'} />}
+      {problem && (
+        <Alert
+          tone="stop"
+          title={
+            problem.errors.find(({ pointer }) => !/^#\/lines\/\d/.test(pointer))?.detail ??
+            'Some lines need attention'
+          }
+        />
+      )}
       <ul className="space-y-3">
         {lines.map(({ key: lineKey, offer, packs }, index) => (
-          <li key={lineKey} className="grid gap-3 border-l-4 border-verdigris bg-raised p-3 sm:grid-cols-[1fr_9rem_auto] sm:items-end">
+          <li
+            key={lineKey}
+            className="grid gap-3 border-l-4 border-verdigris bg-raised p-3 sm:grid-cols-[1fr_9rem_auto] sm:items-end"
+          >
             <p>
               {offer.packSize} {offer.substanceName}
               <span className="block text-sm text-soft">
@@ -73,10 +99,18 @@ export function OrderForm({ budgets }: { readonly budgets: readonly { id: string
               id={`packs-${lineKey}`}
               label="Packs"
               value={packs}
-              onChange={(event) => setLines((all) => all.map((line) => (line.key === lineKey ? { ...line, packs: event.target.value } : line)))}
+              onChange={(event) =>
+                setLines((all) =>
+                  all.map((line) => (line.key === lineKey ? { ...line, packs: event.target.value } : line)),
+                )
+              }
               error={problem?.errors.find(({ pointer }) => pointer.startsWith(`#/lines/${index}/`))?.detail}
             />
-            <Button look="plain" onClick={() => setLines((all) => all.filter((line) => line.key !== lineKey))} aria-label={`Remove ${offer.substanceName}`}>
+            <Button
+              look="plain"
+              onClick={() => setLines((all) => all.filter((line) => line.key !== lineKey))}
+              aria-label={`Remove ${offer.substanceName}`}
+            >
               Remove
             </Button>
           </li>
@@ -89,11 +123,20 @@ export function OrderForm({ budgets }: { readonly budgets: readonly { id: string
         chosen={null}
         onChoose={({ value }) => {
           const offer = found.current.find(({ id }) => id === value);
-          if (offer) setLines((all) => [...all, { key: Math.max(0, ...all.map((line) => line.key)) + 1, offer, packs: '1' }]);
+          if (offer)
+            setLines((all) => [
+              ...all,
+              { key: Math.max(0, ...all.map((line) => line.key)) + 1, offer, packs: '1' },
+            ]);
         }}
         find={find}
       />
-      <Select id="budget" label="Budget" value={budgetId} onChange={(event) => setBudgetId(event.target.value)}>
+      <Select
+        id="budget"
+        label="Budget"
+        value={budgetId}
+        onChange={(event) => setBudgetId(event.target.value)}
+      >
         {budgets.map(({ id, words }) => (
           <option key={id} value={id}>
             {words}
@@ -103,10 +146,18 @@ export function OrderForm({ budgets }: { readonly budgets: readonly { id: string
       <TextArea id="order-note" label="Note" value={note} onChange={(event) => setNote(event.target.value)} />
       <p className="text-lg">
         Goods: <span className="font-mono">{formatMoney(total, 'GBP', 'en-GB')}</span>
-        <span className="block text-sm text-soft">Carriage and surcharges are added by the supplier’s terms.</span>
+        <span className="block text-sm text-soft">
+          Carriage and surcharges are added by the supplier’s terms.
+        </span>
       </p>
       <p>
-        <Button type="submit" look="primary" isBusy={isBusy} busyText="Drafting …" disabled={lines.length === 0}>
+        <Button
+          type="submit"
+          look="primary"
+          isBusy={isBusy}
+          busyText="Drafting …"
+          disabled={lines.length === 0}
+        >
           Keep the draft
         </Button>
       </p>

@@ -38,8 +38,12 @@ export function OrderLines({ order }: { readonly order: OrderDetail }) {
               <td className="text-right font-mono">
                 {line.packs} × {line.packSize}
               </td>
-              <td className="text-right font-mono">{formatMoney(line.priceMinor, order.currency, 'en-GB')}</td>
-              <td className="text-right font-mono">{formatMoney(line.lineTotalMinor, order.currency, 'en-GB')}</td>
+              <td className="text-right font-mono">
+                {formatMoney(line.priceMinor, order.currency, 'en-GB')}
+              </td>
+              <td className="text-right font-mono">
+                {formatMoney(line.lineTotalMinor, order.currency, 'en-GB')}
+              </td>
               <td className="pl-4">{line.supplierStatus?.replaceAll('-', ' ') ?? 'nothing yet'}</td>
               <td className="text-right font-mono">
                 {line.receivedPacks} of {line.packs}

@@ -19,12 +19,21 @@ export function OrderList() {
       label="Orders"
       searchLabel="Order code"
       empty={
-        <EmptyState title="No orders yet" action={<LinkButton href="/orders/shortages">Look at what is short</LinkButton>}>
+        <EmptyState
+          title="No orders yet"
+          action={<LinkButton href="/orders/shortages">Look at what is short</LinkButton>}
+        >
           An order begins with a shortage: what planned use needs and the shelves lack.
         </EmptyState>
       }
       filters={(state, change) => (
-        <Select id="order-state" label="State" value={state.state ?? ''} onChange={(event) => change({ state: event.target.value })} className="w-48">
+        <Select
+          id="order-state"
+          label="State"
+          value={state.state ?? ''}
+          onChange={(event) => change({ state: event.target.value })}
+          className="w-48"
+        >
           <option value="">all</option>
           {ORDER_STATES.map((name) => (
             <option key={name} value={name}>
@@ -45,25 +54,57 @@ export function OrderList() {
           ),
         },
         { id: 'supplier', header: 'Supplier', cell: ({ supplierName }) => supplierName },
-        { id: 'state', header: 'State', sortKey: 'state', cell: ({ state, isPaid }) => <StateMark state={state} words={`${stateWords(state)}${isPaid ? ', paid' : ''}`} /> },
-        { id: 'total', header: 'Total', isNumeric: true, sortKey: 'totalMinor', cell: ({ totalMinor, currency }) => formatMoney(totalMinor, currency, 'en-GB') },
+        {
+          id: 'state',
+          header: 'State',
+          sortKey: 'state',
+          cell: ({ state, isPaid }) => (
+            <StateMark state={state} words={`${stateWords(state)}${isPaid ? ', paid' : ''}`} />
+          ),
+        },
+        {
+          id: 'total',
+          header: 'Total',
+          isNumeric: true,
+          sortKey: 'totalMinor',
+          cell: ({ totalMinor, currency }) => formatMoney(totalMinor, currency, 'en-GB'),
+        },
         { id: 'by', header: 'Drafted by', cell: ({ draftedByName }) => draftedByName },
-        { id: 'at', header: 'Drafted', sortKey: 'createdAt', cell: ({ createdAt }) => <Moment at={createdAt} /> },
+        {
+          id: 'at',
+          header: 'Drafted',
+          sortKey: 'createdAt',
+          cell: ({ createdAt }) => <Moment at={createdAt} />,
+        },
       ]}
     />
   );
 }
 
-const STATE_WORDS: Readonly<Record<ShortageRow['state'], string>> = { open: 'not ordered', 'on-order': 'on order', covered: 'covered' };
+const STATE_WORDS: Readonly<Record<ShortageRow['state'], string>> = {
+  open: 'not ordered',
+  'on-order': 'on order',
+  covered: 'covered',
+};
 
 export function ShortageList() {
   return (
     <ListTable<ShortageRow>
       endpoint={orderEndpoints.shortages}
       label="Shortages"
-      empty={<EmptyState title="Nothing is short">A shortage opens when a batch is planned and the shelves don’t hold enough for it.</EmptyState>}
+      empty={
+        <EmptyState title="Nothing is short">
+          A shortage opens when a batch is planned and the shelves don’t hold enough for it.
+        </EmptyState>
+      }
       filters={(state, change) => (
-        <Select id="shortage-state" label="State" value={state.state ?? ''} onChange={(event) => change({ state: event.target.value })} className="w-44">
+        <Select
+          id="shortage-state"
+          label="State"
+          value={state.state ?? ''}
+          onChange={(event) => change({ state: event.target.value })}
+          className="w-44"
+        >
           <option value="">all</option>
           {Object.entries(STATE_WORDS).map(([name, words]) => (
             <option key={name} value={name}>
@@ -73,13 +114,49 @@ export function ShortageList() {
         </Select>
       )}
       columns={[
-        { id: 'substance', header: 'Substance', cell: ({ substanceId, substanceName }) => <Link href={`/catalogue/substances/${substanceId}`}>{substanceName}</Link> },
-        { id: 'amount', header: 'Short', isNumeric: true, cell: ({ amount, unit }) => `${formatNumber(amount)} ${unit}` },
-        { id: 'needed', header: 'Needed on', sortKey: 'neededOn', cell: ({ neededOn }) => <Moment at={neededOn} style="short-day" /> },
-        { id: 'order-by', header: 'Order by', sortKey: 'orderBy', cell: ({ orderBy }) => <Moment at={orderBy} style="short-day" /> },
-        { id: 'for', header: 'For', cell: ({ requestId, requestCode }) => (requestId ? <Link href={`/requests/${requestId}`}>{requestCode}</Link> : null) },
-        { id: 'state', header: 'State', sortKey: 'state', cell: ({ state }) => <StateMark state={state} words={STATE_WORDS[state]} /> },
-        { id: 'order', header: 'Order', cell: ({ orderId, orderCode }) => (orderId ? <Link href={`/orders/${orderId}`}>{orderCode}</Link> : null) },
+        {
+          id: 'substance',
+          header: 'Substance',
+          cell: ({ substanceId, substanceName }) => (
+            <Link href={`/catalogue/substances/${substanceId}`}>{substanceName}</Link>
+          ),
+        },
+        {
+          id: 'amount',
+          header: 'Short',
+          isNumeric: true,
+          cell: ({ amount, unit }) => `${formatNumber(amount)} ${unit}`,
+        },
+        {
+          id: 'needed',
+          header: 'Needed on',
+          sortKey: 'neededOn',
+          cell: ({ neededOn }) => <Moment at={neededOn} style="short-day" />,
+        },
+        {
+          id: 'order-by',
+          header: 'Order by',
+          sortKey: 'orderBy',
+          cell: ({ orderBy }) => <Moment at={orderBy} style="short-day" />,
+        },
+        {
+          id: 'for',
+          header: 'For',
+          cell: ({ requestId, requestCode }) =>
+            requestId ? <Link href={`/requests/${requestId}`}>{requestCode}</Link> : null,
+        },
+        {
+          id: 'state',
+          header: 'State',
+          sortKey: 'state',
+          cell: ({ state }) => <StateMark state={state} words={STATE_WORDS[state]} />,
+        },
+        {
+          id: 'order',
+          header: 'Order',
+          cell: ({ orderId, orderCode }) =>
+            orderId ? <Link href={`/orders/${orderId}`}>{orderCode}</Link> : null,
+        },
       ]}
     />
   );

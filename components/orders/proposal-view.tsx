@@ -15,13 +15,23 @@ import { Select } from '../ui/inputs';
 import { Skeleton } from '../ui/skeleton';
 
 /** The plan of least cost by supplier, each line with its reason; one draft a supplier. */
-export function ProposalView({ budgets, mayDraft }: { readonly budgets: readonly { id: string; words: string }[]; readonly mayDraft: boolean }) {
+export function ProposalView({
+  budgets,
+  mayDraft,
+}: {
+  readonly budgets: readonly { id: string; words: string }[];
+  readonly mayDraft: boolean;
+}) {
   const router = useRouter();
   const [budgetId, setBudgetId] = useState(budgets[0]?.id ?? '');
   const [failure, setFailure] = useState<string | null>(null);
   const [busy, setBusy] = useState<string | null>(null);
   const [keys] = useState(() => new Map<string, string>());
-  const { data, error, isPending } = useQuery({ queryKey: ['order-proposal'], queryFn: ({ signal }) => callApi(orderEndpoints.proposal, { signal }), staleTime: 0 });
+  const { data, error, isPending } = useQuery({
+    queryKey: ['order-proposal'],
+    queryFn: ({ signal }) => callApi(orderEndpoints.proposal, { signal }),
+    staleTime: 0,
+  });
 
   const draft = async (supplier: Proposal['suppliers'][number]) => {
     setBusy(supplier.supplierId);
@@ -30,7 +40,11 @@ export function ProposalView({ budgets, mayDraft }: { readonly budgets: readonly
     keys.set(supplier.supplierId, key);
     try {
       const order = await callApi(orderEndpoints.create, {
-        body: { supplierId: supplier.supplierId, budgetId, lines: supplier.lines.map(({ offerId, packs }) => ({ offerId, packs })) },
+        body: {
+          supplierId: supplier.supplierId,
+          budgetId,
+          lines: supplier.lines.map(({ offerId, packs }) => ({ offerId, packs })),
+        },
         idempotencyKey: key,
       });
       toast(`${order.code} is drafted`);
@@ -50,12 +64,20 @@ export function ProposalView({ budgets, mayDraft }: { readonly budgets: readonly
       {failure && <Alert tone="stop" title={failure} />}
       <p className="mb-2">
         <span className="text-2xl font-bold">{money(data.totalMinor)}</span> in all. {data.message}
-        {data.savedMinor !== null && data.naiveMinor !== null && ` Buying each thing at its best unit price would cost ${money(data.naiveMinor)}: ${money(data.savedMinor)} more.`}
+        {data.savedMinor !== null &&
+          data.naiveMinor !== null &&
+          ` Buying each thing at its best unit price would cost ${money(data.naiveMinor)}: ${money(data.savedMinor)} more.`}
       </p>
       {data.uncovered.map((line) => (
         <Alert key={line} tone="attention" title={line} />
       ))}
-      <Select id="proposal-budget" label="Budget" value={budgetId} onChange={(event) => setBudgetId(event.target.value)} className="mb-4 w-72">
+      <Select
+        id="proposal-budget"
+        label="Budget"
+        value={budgetId}
+        onChange={(event) => setBudgetId(event.target.value)}
+        className="mb-4 w-72"
+      >
         {budgets.map(({ id, words }) => (
           <option key={id} value={id}>
             {words}
@@ -63,7 +85,11 @@ export function ProposalView({ budgets, mayDraft }: { readonly budgets: readonly
         ))}
       </Select>
       {data.suppliers.map((supplier) => (
-        <section key={supplier.supplierId} aria-label={supplier.supplierName} className="mb-6 border-l-4 border-verdigris bg-raised p-4">
+        <section
+          key={supplier.supplierId}
+          aria-label={supplier.supplierName}
+          className="mb-6 border-l-4 border-verdigris bg-raised p-4"
+        >
           <div className="flex flex-wrap items-end justify-between gap-3">
             <h3 className="font-semibold">
               {supplier.supplierName}: {money(supplier.totalMinor)}
@@ -72,7 +98,13 @@ export function ProposalView({ budgets, mayDraft }: { readonly budgets: readonly
               </span>
             </h3>
             {mayDraft && (
-              <Button look="primary" isBusy={busy === supplier.supplierId} busyText="Drafting …" disabled={busy !== null || budgetId === ''} onClick={() => void draft(supplier)}>
+              <Button
+                look="primary"
+                isBusy={busy === supplier.supplierId}
+                busyText="Drafting …"
+                disabled={busy !== null || budgetId === ''}
+                onClick={() => void draft(supplier)}
+              >
                 Draft this order
               </Button>
             )}

@@ -12,7 +12,13 @@ import { Button } from '../ui/button';
 import { NumberInput, Select, TextInput } from '../ui/inputs';
 
 /** Packs that came, as one lot on its place. */
-export function ReceiveForm({ order, places }: { readonly order: OrderDetail; readonly places: readonly { id: string; words: string }[] }) {
+export function ReceiveForm({
+  order,
+  places,
+}: {
+  readonly order: OrderDetail;
+  readonly places: readonly { id: string; words: string }[];
+}) {
   const router = useRouter();
   const open = order.lines.filter(({ packs, receivedPacks }) => receivedPacks < packs);
   const [lineId, setLineId] = useState(open[0]?.id ?? '');
@@ -63,18 +69,58 @@ export function ReceiveForm({ order, places }: { readonly order: OrderDetail; re
           <Alert tone="stop" title={problem.message} />
         </div>
       )}
-      <Select id="receive-line" label="Which line" className="sm:col-span-2" value={lineId} onChange={(event) => setLineId(event.target.value)} error={errorOf('lineId')}>
+      <Select
+        id="receive-line"
+        label="Which line"
+        className="sm:col-span-2"
+        value={lineId}
+        onChange={(event) => setLineId(event.target.value)}
+        error={errorOf('lineId')}
+      >
         {open.map((line) => (
           <option key={line.id} value={line.id}>
             {line.packSize} {line.substanceName} ({line.packs - line.receivedPacks} to come)
           </option>
         ))}
       </Select>
-      <NumberInput id="receive-packs" label="Packs" value={packs} onChange={(event) => setPacks(event.target.value)} error={errorOf('packs')} />
-      <TextInput id="receive-lot" label="Lot number" value={lotNumber} onChange={(event) => setLotNumber(event.target.value)} error={errorOf('lotNumber')} />
-      <NumberInput id="receive-assay" label="Assay on the certificate" unit="%" value={assay} onChange={(event) => setAssay(event.target.value)} error={errorOf('assayPercent')} />
-      <TextInput id="receive-expiry" label="Use by" type="date" value={expiresOn} onChange={(event) => setExpiresOn(event.target.value)} error={errorOf('expiresOn')} />
-      <Select id="receive-place" label="Place" className="sm:col-span-2" value={placeId} onChange={(event) => setPlaceId(event.target.value)} error={errorOf('placeId')}>
+      <NumberInput
+        id="receive-packs"
+        label="Packs"
+        value={packs}
+        onChange={(event) => setPacks(event.target.value)}
+        error={errorOf('packs')}
+      />
+      <TextInput
+        id="receive-lot"
+        label="Lot number"
+        value={lotNumber}
+        onChange={(event) => setLotNumber(event.target.value)}
+        error={errorOf('lotNumber')}
+      />
+      <NumberInput
+        id="receive-assay"
+        label="Assay on the certificate"
+        unit="%"
+        value={assay}
+        onChange={(event) => setAssay(event.target.value)}
+        error={errorOf('assayPercent')}
+      />
+      <TextInput
+        id="receive-expiry"
+        label="Use by"
+        type="date"
+        value={expiresOn}
+        onChange={(event) => setExpiresOn(event.target.value)}
+        error={errorOf('expiresOn')}
+      />
+      <Select
+        id="receive-place"
+        label="Place"
+        className="sm:col-span-2"
+        value={placeId}
+        onChange={(event) => setPlaceId(event.target.value)}
+        error={errorOf('placeId')}
+      >
         <option value="">Choose a place</option>
         {places.map(({ id, words }) => (
           <option key={id} value={id}>

@@ -30,7 +30,13 @@ export function OutgoingList() {
       label="Outgoing messages"
       empty="Nothing has been sent yet."
       filters={(state, change) => (
-        <Select id="outgoing-state" label="State" value={state.state ?? ''} onChange={(event) => change({ state: event.target.value })} className="w-40">
+        <Select
+          id="outgoing-state"
+          label="State"
+          value={state.state ?? ''}
+          onChange={(event) => change({ state: event.target.value })}
+          className="w-40"
+        >
           <option value="">all</option>
           {OUTBOX_STATES.map((name) => (
             <option key={name} value={name}>
@@ -41,10 +47,32 @@ export function OutgoingList() {
       )}
       columns={[
         { id: 'what', header: 'What', cell: ({ summary }) => summary },
-        { id: 'channel', header: 'By', sortKey: 'channel', cell: ({ channel }) => (channel === 'mail' ? 'e-mail' : 'ordering service') },
-        { id: 'state', header: 'State', sortKey: 'state', cell: ({ state }) => <StateMark state={state} words={WORDS[state]} /> },
-        { id: 'attempts', header: 'Attempts', isNumeric: true, sortKey: 'attempts', cell: ({ attempts }) => attempts },
-        { id: 'next', header: 'Sent, or next try', sortKey: 'nextAttemptAt', cell: ({ sentAt, nextAttemptAt, state }) => (state === 'dead' ? 'no more tries' : <Moment at={sentAt ?? nextAttemptAt} />) },
+        {
+          id: 'channel',
+          header: 'By',
+          sortKey: 'channel',
+          cell: ({ channel }) => (channel === 'mail' ? 'e-mail' : 'ordering service'),
+        },
+        {
+          id: 'state',
+          header: 'State',
+          sortKey: 'state',
+          cell: ({ state }) => <StateMark state={state} words={WORDS[state]} />,
+        },
+        {
+          id: 'attempts',
+          header: 'Attempts',
+          isNumeric: true,
+          sortKey: 'attempts',
+          cell: ({ attempts }) => attempts,
+        },
+        {
+          id: 'next',
+          header: 'Sent, or next try',
+          sortKey: 'nextAttemptAt',
+          cell: ({ sentAt, nextAttemptAt, state }) =>
+            state === 'dead' ? 'no more tries' : <Moment at={sentAt ?? nextAttemptAt} />,
+        },
         { id: 'failure', header: 'Last failure', cell: ({ lastError }) => lastError ?? '' },
         {
           id: 'again',

@@ -20,7 +20,12 @@ export function ChainState() {
       </Button>
       {error && <Alert tone="stop" title={error.message} />}
       {data?.firstBrokenLine === null && <Alert tone="done" title={`All ${data.lines} lines fit`} />}
-      {typeof data?.firstBrokenLine === 'number' && <Alert tone="stop" title={`Line ${data.firstBrokenLine} does not fit the chain: it or one before it was altered`} />}
+      {typeof data?.firstBrokenLine === 'number' && (
+        <Alert
+          tone="stop"
+          title={`Line ${data.firstBrokenLine} does not fit the chain: it or one before it was altered`}
+        />
+      )}
     </div>
   );
 }

@@ -17,7 +17,8 @@ interface LineRowProps {
   readonly onRemove: () => void;
 }
 
-const ROW = 'grid gap-3 border-l-4 border-verdigris bg-raised p-3 sm:grid-cols-[minmax(14rem,1fr)_8.5rem_7rem_auto] sm:items-start';
+const ROW =
+  'grid gap-3 border-l-4 border-verdigris bg-raised p-3 sm:grid-cols-[minmax(14rem,1fr)_8.5rem_7rem_auto] sm:items-start';
 
 /** One bottle on the tray: what, how much a bench, how many to spare, and what that comes to. */
 export function SolutionRow({ line, number, benches, errors, onChange, onRemove }: LineRowProps) {
@@ -30,11 +31,31 @@ export function SolutionRow({ line, number, benches, errors, onChange, onRemove 
         placeholder="Type a name"
         chosen={line.id ? { value: line.id, label: line.name } : null}
         onChoose={({ value, label }) => onChange({ id: value, name: label })}
-        find={async (text, signal) => (await findSolutions(text, signal)).map(({ id, name, storageNote }) => ({ value: id, label: name, detail: storageNote ?? undefined }))}
+        find={async (text, signal) =>
+          (await findSolutions(text, signal)).map(({ id, name, storageNote }) => ({
+            value: id,
+            label: name,
+            detail: storageNote ?? undefined,
+          }))
+        }
         error={errors.solutionId}
       />
-      <NumberInput id={`${line.key}-volume`} label="Per bench" unit="mL" value={line.volumePerBenchMl} onChange={(event) => onChange({ volumePerBenchMl: event.target.value })} error={errors.volumePerBenchMl} />
-      <NumberInput id={`${line.key}-spare`} label="Spare" unit="benches" value={line.spareBenches} onChange={(event) => onChange({ spareBenches: event.target.value })} error={errors.spareBenches} />
+      <NumberInput
+        id={`${line.key}-volume`}
+        label="Per bench"
+        unit="mL"
+        value={line.volumePerBenchMl}
+        onChange={(event) => onChange({ volumePerBenchMl: event.target.value })}
+        error={errors.volumePerBenchMl}
+      />
+      <NumberInput
+        id={`${line.key}-spare`}
+        label="Spare"
+        unit="benches"
+        value={line.spareBenches}
+        onChange={(event) => onChange({ spareBenches: event.target.value })}
+        error={errors.spareBenches}
+      />
       <div className="flex items-end justify-between gap-3 sm:flex-col">
         <p className="font-mono text-sm whitespace-nowrap" aria-label={`Total of solution ${number}`}>
           {Number.isFinite(total) ? `= ${formatVolume(total)}` : '= –'}
@@ -57,10 +78,23 @@ export function DemonstrationRow({ line, number, errors, onChange, onRemove }: L
         placeholder="Type a name"
         chosen={line.id ? { value: line.id, label: line.name } : null}
         onChoose={({ value, label }) => onChange({ id: value, name: label })}
-        find={async (text, signal) => (await findDemonstrations(text, signal)).map(({ id, name, portions }) => ({ value: id, label: name, detail: `${portions.length} portions` }))}
+        find={async (text, signal) =>
+          (await findDemonstrations(text, signal)).map(({ id, name, portions }) => ({
+            value: id,
+            label: name,
+            detail: `${portions.length} portions`,
+          }))
+        }
         error={errors.demonstrationId}
       />
-      <NumberInput id={`${line.key}-times`} label="Shown" unit="times" value={line.performances} onChange={(event) => onChange({ performances: event.target.value })} error={errors.performances} />
+      <NumberInput
+        id={`${line.key}-times`}
+        label="Shown"
+        unit="times"
+        value={line.performances}
+        onChange={(event) => onChange({ performances: event.target.value })}
+        error={errors.performances}
+      />
       <span className="max-sm:hidden" />
       <div className="flex items-end justify-end sm:flex-col">
         <Button look="plain" onClick={onRemove} aria-label={`Remove demonstration ${number}`}>

@@ -7,13 +7,20 @@ import { Findings } from '../hazards/findings';
 import { Alert } from '../ui/alert';
 import { Details } from '../ui/details';
 
-const NEXT: Readonly<Record<RequestPlan['decision'], { tone: 'done' | 'attention' | 'stop'; text: string }>> = {
-  clear: { tone: 'done', text: 'Agreed at once when you submit' },
-  caution: { tone: 'done', text: 'Agreed at once when you submit, with cautions printed on the sheet' },
-  controlled: { tone: 'done', text: 'Agreed at once when you submit, with controls to be ticked on the sheet' },
-  review: { tone: 'attention', text: 'Goes to the safety officer when you submit' },
-  stop: { tone: 'stop', text: 'Must not be made here: nobody can agree it. Change it, or submit it to ask safety' },
-};
+const NEXT: Readonly<Record<RequestPlan['decision'], { tone: 'done' | 'attention' | 'stop'; text: string }>> =
+  {
+    clear: { tone: 'done', text: 'Agreed at once when you submit' },
+    caution: { tone: 'done', text: 'Agreed at once when you submit, with cautions printed on the sheet' },
+    controlled: {
+      tone: 'done',
+      text: 'Agreed at once when you submit, with controls to be ticked on the sheet',
+    },
+    review: { tone: 'attention', text: 'Goes to the safety officer when you submit' },
+    stop: {
+      tone: 'stop',
+      text: 'Must not be made here: nobody can agree it. Change it, or submit it to ask safety',
+    },
+  };
 const TELLING = 5;
 
 /** What submitting will lead to, in one sentence. */
@@ -42,10 +49,14 @@ export function PlannedDemonstrations({ plan }: { readonly plan: RequestPlan }) 
                 gases={[...new Set(mix.findings.flatMap(({ gas }) => (gas ? [gas.species] : [])))]}
               />
               <div className="min-w-0">
-                <p className="text-sm text-soft">{portions.map(({ label, volumeMl }) => `${formatVolume(volumeMl)} ${label}`).join(' → ')}</p>
+                <p className="text-sm text-soft">
+                  {portions.map(({ label, volumeMl }) => `${formatVolume(volumeMl)} ${label}`).join(' → ')}
+                </p>
                 <p className="mt-2 text-lg">
                   {mix.appearance.solution.words}
-                  {mix.equilibrium.pH !== null && <span className="font-mono"> · pH {mix.equilibrium.pH.toFixed(2)}</span>}
+                  {mix.equilibrium.pH !== null && (
+                    <span className="font-mono"> · pH {mix.equilibrium.pH.toFixed(2)}</span>
+                  )}
                 </p>
                 {mix.appearance.solids.map((solid) => (
                   <p key={solid.id}>
@@ -98,6 +109,12 @@ export function PlannedAmounts({ plan }: { readonly plan: RequestPlan }) {
   );
 }
 
-export function PlannedFindings({ plan, isCompact }: { readonly plan: RequestPlan; readonly isCompact?: boolean }) {
+export function PlannedFindings({
+  plan,
+  isCompact,
+}: {
+  readonly plan: RequestPlan;
+  readonly isCompact?: boolean;
+}) {
   return <Findings findings={plan.findings} isCompact={isCompact} />;
 }

@@ -23,12 +23,23 @@ export function RequestActions({ request }: { readonly request: RequestDetail })
   const [busy, setBusy] = useState(false);
   if (!request.mayChange) return null;
 
-  const move = async (endpoint: typeof requestEndpoints.submit | typeof requestEndpoints.withdraw, said: string) => {
+  const move = async (
+    endpoint: typeof requestEndpoints.submit | typeof requestEndpoints.withdraw,
+    said: string,
+  ) => {
     setBusy(true);
     setFailure(null);
     try {
-      const done = await callApi(endpoint, { params: { id: request.id }, body: { version: request.version, reason } });
-      toast(said.replace('{state}', done.state === 'in-review' ? 'went to safety' : `is ${done.state.replaceAll('-', ' ')}`));
+      const done = await callApi(endpoint, {
+        params: { id: request.id },
+        body: { version: request.version, reason },
+      });
+      toast(
+        said.replace(
+          '{state}',
+          done.state === 'in-review' ? 'went to safety' : `is ${done.state.replaceAll('-', ' ')}`,
+        ),
+      );
       setLeaving(false);
       router.refresh();
     } catch (error) {
@@ -43,7 +54,11 @@ export function RequestActions({ request }: { readonly request: RequestDetail })
     <div className="no-print mb-8 flex flex-wrap items-center gap-3">
       {failure && <Alert tone="stop" title={failure} />}
       {(request.state === 'draft' || request.state === 'returned') && (
-        <Button look="primary" isBusy={busy} onClick={() => void move(requestEndpoints.submit, `${request.code} {state}`)}>
+        <Button
+          look="primary"
+          isBusy={busy}
+          onClick={() => void move(requestEndpoints.submit, `${request.code} {state}`)}
+        >
           {request.state === 'returned' ? 'Submit again' : 'Submit the request'}
         </Button>
       )}
@@ -53,10 +68,24 @@ export function RequestActions({ request }: { readonly request: RequestDetail })
           Withdraw
         </Button>
       )}
-      <Dialog title={`Withdraw ${request.code}`} description="Nothing more is made for it. What was made already stays with the prep room." isOpen={isLeaving} onOpenChange={setLeaving}>
+      <Dialog
+        title={`Withdraw ${request.code}`}
+        description="Nothing more is made for it. What was made already stays with the prep room."
+        isOpen={isLeaving}
+        onOpenChange={setLeaving}
+      >
         <div className="grid gap-4">
-          <TextArea id="withdraw-reason" label="Why (may stay empty)" value={reason} onChange={(event) => setReason(event.target.value)} />
-          <Button look="danger" isBusy={busy} onClick={() => void move(requestEndpoints.withdraw, `${request.code} {state}`)}>
+          <TextArea
+            id="withdraw-reason"
+            label="Why (may stay empty)"
+            value={reason}
+            onChange={(event) => setReason(event.target.value)}
+          />
+          <Button
+            look="danger"
+            isBusy={busy}
+            onClick={() => void move(requestEndpoints.withdraw, `${request.code} {state}`)}
+          >
             Withdraw it
           </Button>
         </div>

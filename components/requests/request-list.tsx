@@ -11,7 +11,13 @@ import { ListTable } from '../ui/list-table';
 import { Moment } from '../ui/moment';
 import { StateMark } from '../ui/state-mark';
 
-export function RequestList({ startsWithMine, mayAsk }: { readonly startsWithMine: boolean; readonly mayAsk: boolean }) {
+export function RequestList({
+  startsWithMine,
+  mayAsk,
+}: {
+  readonly startsWithMine: boolean;
+  readonly mayAsk: boolean;
+}) {
   const whose = startsWithMine ? 'mine' : 'all';
   return (
     <ListTable<RequestRow>
@@ -20,17 +26,32 @@ export function RequestList({ startsWithMine, mayAsk }: { readonly startsWithMin
       searchLabel="Request code"
       defaults={{ whose }}
       empty={
-        <EmptyState title="No requests yet" action={mayAsk ? <LinkButton href="/requests/new">Ask for a session</LinkButton> : null}>
+        <EmptyState
+          title="No requests yet"
+          action={mayAsk ? <LinkButton href="/requests/new">Ask for a session</LinkButton> : null}
+        >
           A request says what one session needs: solutions for the benches, and demonstrations.
         </EmptyState>
       }
       filters={(state, change) => (
         <>
-          <Select id="request-whose" label="Whose" value={state.whose ?? whose} onChange={(event) => change({ whose: event.target.value })} className="w-36">
+          <Select
+            id="request-whose"
+            label="Whose"
+            value={state.whose ?? whose}
+            onChange={(event) => change({ whose: event.target.value })}
+            className="w-36"
+          >
             <option value="mine">mine</option>
             <option value="all">everybody’s</option>
           </Select>
-          <Select id="request-state" label="State" value={state.state ?? ''} onChange={(event) => change({ state: event.target.value })} className="w-44">
+          <Select
+            id="request-state"
+            label="State"
+            value={state.state ?? ''}
+            onChange={(event) => change({ state: event.target.value })}
+            className="w-44"
+          >
             <option value="">all</option>
             {REQUEST_STATES.map((name) => (
               <option key={name} value={name}>

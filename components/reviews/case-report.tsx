@@ -19,7 +19,10 @@ export function CaseReport({ review }: { readonly review: ReviewCase }) {
     <>
       {review.decisionText !== null && review.reviewerName && (
         <div className="mb-6">
-          <Alert tone={review.state === 'refused' || review.state === 'returned' ? 'attention' : 'done'} title={`${stateWords(review.state)} by ${review.reviewerName}`}>
+          <Alert
+            tone={review.state === 'refused' || review.state === 'returned' ? 'attention' : 'done'}
+            title={`${stateWords(review.state)} by ${review.reviewerName}`}
+          >
             {review.decisionText}
             {review.conditions.length > 0 && (
               <ul className="list-disc pl-5">
@@ -34,10 +37,23 @@ export function CaseReport({ review }: { readonly review: ReviewCase }) {
       <Section title="What is asked">
         <DefinitionList
           items={[
-            ['Room', `${plan.session.roomName}, ${plan.session.room.volumeM3} m³, ${plan.session.room.airChangesPerHour} air changes an hour, ${plan.session.room.fumeCupboard ? 'with' : 'no'} fume cupboard`],
+            [
+              'Room',
+              `${plan.session.roomName}, ${plan.session.room.volumeM3} m³, ${plan.session.room.airChangesPerHour} air changes an hour, ${plan.session.room.fumeCupboard ? 'with' : 'no'} fume cupboard`,
+            ],
             ['Benches', String(plan.session.benches)],
-            ['Request', <Link key="request" href={`/requests/${review.requestId}`}>{review.requestCode}</Link>],
-            ['Plan', <code key="hash" className="font-mono text-sm break-all">{review.planHash}</code>],
+            [
+              'Request',
+              <Link key="request" href={`/requests/${review.requestId}`}>
+                {review.requestCode}
+              </Link>,
+            ],
+            [
+              'Plan',
+              <code key="hash" className="font-mono text-sm break-all">
+                {review.planHash}
+              </code>,
+            ],
           ]}
         />
         <table className="mt-4 w-full max-w-3xl">
@@ -115,8 +131,11 @@ function WhatHappens({ demonstration }: { readonly demonstration: PlannedDemonst
           ))}
         </ol>
         <p className="mb-3">
-          Final pH {equilibrium.pH === null ? 'not computed' : equilibrium.pH.toFixed(2)}; {appearance.solution.words}
-          {appearance.solids.length > 0 && `, with ${appearance.solids.map(({ name }) => name).join(' and ')} settled`}.
+          Final pH {equilibrium.pH === null ? 'not computed' : equilibrium.pH.toFixed(2)};{' '}
+          {appearance.solution.words}
+          {appearance.solids.length > 0 &&
+            `, with ${appearance.solids.map(({ name }) => name).join(' and ')} settled`}
+          .
         </p>
         <Details summary="Every species">
           <Ladder species={equilibrium.species} />

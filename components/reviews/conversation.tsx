@@ -50,7 +50,13 @@ export function Conversation({ review }: { readonly review: ReviewCase }) {
         ))}
       </ol>
       <form onSubmit={(event) => void send(event)} className="no-print grid max-w-[75ch] gap-3">
-        <TextArea id="message" label="Your message" value={body} onChange={(event) => setBody(event.target.value)} error={failure ?? undefined} />
+        <TextArea
+          id="message"
+          label="Your message"
+          value={body}
+          onChange={(event) => setBody(event.target.value)}
+          error={failure ?? undefined}
+        />
         <p>
           <Button type="submit" isBusy={isBusy} busyText="Sending …">
             Send

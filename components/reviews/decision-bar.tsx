@@ -14,10 +14,22 @@ import { TextArea, TextInput } from '../ui/inputs';
 
 type Verdict = 'agreed' | 'agreed-with-conditions' | 'returned' | 'refused';
 
-const WORDS: Readonly<Record<Verdict, { button: string; title: string; text: string; look: 'primary' | 'quiet' | 'danger' }>> = {
+const WORDS: Readonly<
+  Record<Verdict, { button: string; title: string; text: string; look: 'primary' | 'quiet' | 'danger' }>
+> = {
   agreed: { button: 'Agree', title: 'Agree to this plan', text: 'Remark (may stay empty)', look: 'primary' },
-  'agreed-with-conditions': { button: 'Agree with conditions', title: 'Agree with conditions', text: 'Remark (may stay empty)', look: 'quiet' },
-  returned: { button: 'Return with a question', title: 'Return with a question', text: 'The question', look: 'quiet' },
+  'agreed-with-conditions': {
+    button: 'Agree with conditions',
+    title: 'Agree with conditions',
+    text: 'Remark (may stay empty)',
+    look: 'quiet',
+  },
+  returned: {
+    button: 'Return with a question',
+    title: 'Return with a question',
+    text: 'The question',
+    look: 'quiet',
+  },
   refused: { button: 'Refuse', title: 'Refuse this plan', text: 'The reason', look: 'danger' },
 };
 
@@ -44,29 +56,48 @@ export function DecisionBar({ review }: { readonly review: ReviewCase }) {
             ))}
         </div>
       )}
-      <Dialog title={verdict ? WORDS[verdict].title : ''} isOpen={verdict !== null} onOpenChange={() => setVerdict(null)}>
+      <Dialog
+        title={verdict ? WORDS[verdict].title : ''}
+        isOpen={verdict !== null}
+        onOpenChange={() => setVerdict(null)}
+      >
         {verdict && <DecisionForm review={review} verdict={verdict} onDone={() => setVerdict(null)} />}
       </Dialog>
     </div>
   );
 }
 
-function DecisionForm({ review, verdict, onDone }: { readonly review: ReviewCase; readonly verdict: Verdict; readonly onDone: () => void }) {
+function DecisionForm({
+  review,
+  verdict,
+  onDone,
+}: {
+  readonly review: ReviewCase;
+  readonly verdict: Verdict;
+  readonly onDone: () => void;
+}) {
   const router = useRouter();
   const [text, setText] = useState('');
   const [conditions, setConditions] = useState('');
   const [password, setPassword] = useState('');
   const [problem, setProblem] = useState<ApiProblem | null>(null);
   const [isBusy, setBusy] = useState(false);
-  const errorOf = (field: string) => problem?.errors.find(({ pointer }) => pointer.startsWith(`#/${field}`))?.detail;
+  const errorOf = (field: string) =>
+    problem?.errors.find(({ pointer }) => pointer.startsWith(`#/${field}`))?.detail;
 
   const sign = async (event: FormEvent) => {
     event.preventDefault();
     setBusy(true);
     setProblem(null);
     const signature = { version: review.version, password };
-    const lines = conditions.split('\n').map((line) => line.trim()).filter(Boolean);
-    const body = verdict === 'agreed-with-conditions' ? { verdict, text, conditions: lines, ...signature } : { verdict, text, ...signature };
+    const lines = conditions
+      .split('\n')
+      .map((line) => line.trim())
+      .filter(Boolean);
+    const body =
+      verdict === 'agreed-with-conditions'
+        ? { verdict, text, conditions: lines, ...signature }
+        : { verdict, text, ...signature };
     try {
       await callApi(reviewEndpoints.decide, { params: { id: review.id }, body });
       toast('Signed and recorded');
@@ -94,7 +125,13 @@ function DecisionForm({ review, verdict, onDone }: { readonly review: ReviewCase
           error={errorOf('conditions')}
         />
       )}
-      <TextArea id="decision-text" label={WORDS[verdict].text} value={text} onChange={(event) => setText(event.target.value)} error={errorOf('text')} />
+      <TextArea
+        id="decision-text"
+        label={WORDS[verdict].text}
+        value={text}
+        onChange={(event) => setText(event.target.value)}
+        error={errorOf('text')}
+      />
       <TextInput
         id="decision-password"
         label="Your password, as signature"
@@ -104,7 +141,12 @@ function DecisionForm({ review, verdict, onDone }: { readonly review: ReviewCase
         onChange={(event) => setPassword(event.target.value)}
         error={errorOf('password')}
       />
-      <Button type="submit" look={verdict === 'refused' ? 'danger' : 'primary'} isBusy={isBusy} busyText="Signing …">
+      <Button
+        type="submit"
+        look={verdict === 'refused' ? 'danger' : 'primary'}
+        isBusy={isBusy}
+        busyText="Signing …"
+      >
         Sign
       </Button>
     </form>

@@ -19,9 +19,17 @@ export function ReviewQueue() {
       label="Reviews"
       searchLabel="Request code"
       defaults={WAITING}
-      empty={<EmptyState title="Nothing waits">A plan comes here when a finding says review or stop.</EmptyState>}
+      empty={
+        <EmptyState title="Nothing waits">A plan comes here when a finding says review or stop.</EmptyState>
+      }
       filters={(state, change) => (
-        <Select id="review-state" label="State" value={state.state ?? 'waiting'} onChange={(event) => change({ state: event.target.value })} className="w-56">
+        <Select
+          id="review-state"
+          label="State"
+          value={state.state ?? 'waiting'}
+          onChange={(event) => change({ state: event.target.value })}
+          className="w-56"
+        >
           {REVIEW_STATES.map((name) => (
             <option key={name} value={name}>
               {stateWords(name)}
@@ -39,12 +47,28 @@ export function ReviewQueue() {
             </Link>
           ),
         },
-        { id: 'found', header: 'Found', sortKey: 'gravity', cell: ({ decision }) => <StateMark state={decision} /> },
+        {
+          id: 'found',
+          header: 'Found',
+          sortKey: 'gravity',
+          cell: ({ decision }) => <StateMark state={decision} />,
+        },
         { id: 'asked', header: 'Asked by', cell: ({ requesterName }) => requesterName },
         { id: 'session', header: 'Session', cell: ({ session }) => session },
         { id: 'starts', header: 'Starts', cell: ({ startsAt }) => <Moment at={startsAt} /> },
-        { id: 'opened', header: 'Waiting since', sortKey: 'openedAt', cell: ({ openedAt }) => <Moment at={openedAt} /> },
-        { id: 'state', header: 'State', sortKey: 'state', cell: ({ state, reviewerName }) => (reviewerName ? `${stateWords(state)} by ${reviewerName}` : <StateMark state={state} />) },
+        {
+          id: 'opened',
+          header: 'Waiting since',
+          sortKey: 'openedAt',
+          cell: ({ openedAt }) => <Moment at={openedAt} />,
+        },
+        {
+          id: 'state',
+          header: 'State',
+          sortKey: 'state',
+          cell: ({ state, reviewerName }) =>
+            reviewerName ? `${stateWords(state)} by ${reviewerName}` : <StateMark state={state} />,
+        },
       ]}
     />
   );

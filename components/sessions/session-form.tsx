@@ -21,7 +21,13 @@ function momentOf(text: string): string {
 }
 
 /** Makes a session, or changes one. */
-export function SessionForm({ rooms, session }: { readonly rooms: readonly RoomRow[]; readonly session: LabSession | null }) {
+export function SessionForm({
+  rooms,
+  session,
+}: {
+  readonly rooms: readonly RoomRow[];
+  readonly session: LabSession | null;
+}) {
   const router = useRouter();
   const [course, setCourse] = useState(session?.course ?? '');
   const [title, setTitle] = useState(session?.title ?? '');
@@ -39,10 +45,20 @@ export function SessionForm({ rooms, session }: { readonly rooms: readonly RoomR
     event.preventDefault();
     setBusy(true);
     setProblem(null);
-    const body = { course, title, startsAt: momentOf(startsAt), endsAt: momentOf(endsAt), roomId, benches: benches.trim() === '' ? NaN : Number(benches) };
+    const body = {
+      course,
+      title,
+      startsAt: momentOf(startsAt),
+      endsAt: momentOf(endsAt),
+      roomId,
+      benches: benches.trim() === '' ? NaN : Number(benches),
+    };
     try {
       const saved = session
-        ? await callApi(labSessionEndpoints.update, { params: { id: session.id }, body: { ...body, isCancelled, version: session.version } })
+        ? await callApi(labSessionEndpoints.update, {
+            params: { id: session.id },
+            body: { ...body, isCancelled, version: session.version },
+          })
         : await callApi(labSessionEndpoints.create, { body, idempotencyKey: key });
       toast(session ? 'The session is changed' : 'The session is made');
       router.push(`/sessions/${saved.id}` as Route);
@@ -61,11 +77,43 @@ export function SessionForm({ rooms, session }: { readonly rooms: readonly RoomR
           <Alert tone="stop" title={problem.message} />
         </div>
       )}
-      <TextInput id="course" label="Course" value={course} onChange={(event) => setCourse(event.target.value)} error={errorOf('course')} />
-      <TextInput id="title" label="Title" value={title} onChange={(event) => setTitle(event.target.value)} error={errorOf('title')} />
-      <TextInput id="starts" label="Starts" type="datetime-local" value={startsAt} onChange={(event) => setStartsAt(event.target.value)} error={errorOf('startsAt')} />
-      <TextInput id="ends" label="Ends" type="datetime-local" value={endsAt} onChange={(event) => setEndsAt(event.target.value)} error={errorOf('endsAt')} />
-      <Select id="room" label="Room" value={roomId} onChange={(event) => setRoomId(event.target.value)} error={errorOf('roomId')}>
+      <TextInput
+        id="course"
+        label="Course"
+        value={course}
+        onChange={(event) => setCourse(event.target.value)}
+        error={errorOf('course')}
+      />
+      <TextInput
+        id="title"
+        label="Title"
+        value={title}
+        onChange={(event) => setTitle(event.target.value)}
+        error={errorOf('title')}
+      />
+      <TextInput
+        id="starts"
+        label="Starts"
+        type="datetime-local"
+        value={startsAt}
+        onChange={(event) => setStartsAt(event.target.value)}
+        error={errorOf('startsAt')}
+      />
+      <TextInput
+        id="ends"
+        label="Ends"
+        type="datetime-local"
+        value={endsAt}
+        onChange={(event) => setEndsAt(event.target.value)}
+        error={errorOf('endsAt')}
+      />
+      <Select
+        id="room"
+        label="Room"
+        value={roomId}
+        onChange={(event) => setRoomId(event.target.value)}
+        error={errorOf('roomId')}
+      >
         <option value="">Choose a room</option>
         {rooms.map((room) => (
           <option key={room.id} value={room.id}>
@@ -73,8 +121,22 @@ export function SessionForm({ rooms, session }: { readonly rooms: readonly RoomR
           </option>
         ))}
       </Select>
-      <NumberInput id="benches" label="Benches" value={benches} onChange={(event) => setBenches(event.target.value)} error={errorOf('benches')} />
-      {session && <Checkbox id="cancelled" label="Cancelled" hint="Nothing more is made for it." checked={isCancelled} onChange={(event) => setCancelled(event.target.checked)} />}
+      <NumberInput
+        id="benches"
+        label="Benches"
+        value={benches}
+        onChange={(event) => setBenches(event.target.value)}
+        error={errorOf('benches')}
+      />
+      {session && (
+        <Checkbox
+          id="cancelled"
+          label="Cancelled"
+          hint="Nothing more is made for it."
+          checked={isCancelled}
+          onChange={(event) => setCancelled(event.target.checked)}
+        />
+      )}
       <div className="sm:col-span-2">
         <Button type="submit" look="primary" isBusy={isBusy} busyText="Saving …">
           {session ? 'Save the session' : 'Make the session'}

@@ -9,7 +9,13 @@ import { ListTable } from '../ui/list-table';
 import { Moment } from '../ui/moment';
 import { StateMark } from '../ui/state-mark';
 
-export function SessionList({ today, startsWithMine }: { readonly today: string; readonly startsWithMine: boolean }) {
+export function SessionList({
+  today,
+  startsWithMine,
+}: {
+  readonly today: string;
+  readonly startsWithMine: boolean;
+}) {
   const whose = startsWithMine ? 'mine' : 'all';
   return (
     <ListTable<LabSession>
@@ -17,18 +23,40 @@ export function SessionList({ today, startsWithMine }: { readonly today: string;
       label="Sessions"
       searchLabel="Course or title"
       defaults={{ from: today, whose }}
-      empty={<EmptyState title="No sessions here">Sessions are the bench hours of a course. Make one, or look at earlier days.</EmptyState>}
+      empty={
+        <EmptyState title="No sessions here">
+          Sessions are the bench hours of a course. Make one, or look at earlier days.
+        </EmptyState>
+      }
       filters={(state, change) => (
         <>
-          <Select id="session-whose" label="Whose" value={state.whose ?? whose} onChange={(event) => change({ whose: event.target.value })} className="w-36">
+          <Select
+            id="session-whose"
+            label="Whose"
+            value={state.whose ?? whose}
+            onChange={(event) => change({ whose: event.target.value })}
+            className="w-36"
+          >
             <option value="mine">mine</option>
             <option value="all">everybody’s</option>
           </Select>
-          <TextInput id="session-from" label="From" type="date" value={state.from ?? today} onChange={(event) => change({ from: event.target.value })} className="w-44" />
+          <TextInput
+            id="session-from"
+            label="From"
+            type="date"
+            value={state.from ?? today}
+            onChange={(event) => change({ from: event.target.value })}
+            className="w-44"
+          />
         </>
       )}
       columns={[
-        { id: 'starts', header: 'When', sortKey: 'startsAt', cell: ({ startsAt }) => <Moment at={startsAt} /> },
+        {
+          id: 'starts',
+          header: 'When',
+          sortKey: 'startsAt',
+          cell: ({ startsAt }) => <Moment at={startsAt} />,
+        },
         {
           id: 'title',
           header: 'Session',
@@ -57,7 +85,10 @@ export function SessionList({ today, startsWithMine }: { readonly today: string;
               <span className="flex flex-wrap gap-2">
                 {requests.map((request) => (
                   <Link key={request.id} href={`/requests/${request.id}`} className="no-underline">
-                    <StateMark state={request.state} words={`${request.code} ${request.state.replaceAll('-', ' ')}`} />
+                    <StateMark
+                      state={request.state}
+                      words={`${request.code} ${request.state.replaceAll('-', ' ')}`}
+                    />
                   </Link>
                 ))}
               </span>

@@ -24,7 +24,9 @@ export function Palette() {
 
   useEffect(() => {
     const handleKey = (event: KeyboardEvent) => {
-      const isTyping = event.target instanceof HTMLElement && event.target.closest('input, textarea, select, [contenteditable]') !== null;
+      const isTyping =
+        event.target instanceof HTMLElement &&
+        event.target.closest('input, textarea, select, [contenteditable]') !== null;
       if ((event.key === 'k' && (event.ctrlKey || event.metaKey)) || (event.key === '/' && !isTyping)) {
         event.preventDefault();
         setOpen(true);
@@ -37,7 +39,11 @@ export function Palette() {
   const hits = wanted ? (data?.hits ?? []) : [];
   return (
     <>
-      <button type="button" onClick={() => setOpen(true)} className="flex min-h-11 items-center gap-2 rounded border border-line bg-raised px-3 text-left text-soft hover:bg-sunken lg:w-52">
+      <button
+        type="button"
+        onClick={() => setOpen(true)}
+        className="flex min-h-11 items-center gap-2 rounded border border-line bg-raised px-3 text-left text-soft hover:bg-sunken lg:w-52"
+      >
         <span>Find</span>
         <kbd className="ml-auto rounded-sm border px-1.5 font-mono text-xs max-lg:hidden">/</kbd>
       </button>
@@ -50,7 +56,9 @@ export function Palette() {
             className="min-h-12 w-full rounded border border-line bg-raised px-3 text-lg placeholder:text-soft"
           />
           <Command.List className="mt-3">
-            {wanted && !isFetching && hits.length === 0 && <Command.Empty className="py-3">Nothing is called that.</Command.Empty>}
+            {wanted && !isFetching && hits.length === 0 && (
+              <Command.Empty className="py-3">Nothing is called that.</Command.Empty>
+            )}
             {hits.map(({ kind, id, label, detail, href }) => (
               <Command.Item
                 key={`${kind}:${id}`}
@@ -63,7 +71,9 @@ export function Palette() {
               >
                 <span className="w-20 shrink-0 text-sm text-soft">{kind}</span>
                 <span className="font-semibold">{label}</span>
-                <span className="ml-auto truncate text-sm text-soft">{kind === 'session' ? detail.slice(0, 10) : detail}</span>
+                <span className="ml-auto truncate text-sm text-soft">
+                  {kind === 'session' ? detail.slice(0, 10) : detail}
+                </span>
               </Command.Item>
             ))}
           </Command.List>

@@ -13,7 +13,9 @@ const IN_VIEW = 6;
 /** The notebook's head, the page, and the caution at its foot. */
 export function Shell({ viewer, children }: { readonly viewer: Viewer; readonly children: ReactNode }) {
   const seen = PARTS.filter(({ action }) => mayByRole(viewer, action));
-  const daily = seen.filter((part) => part.daily.some((role) => viewer.roles.includes(role))).slice(0, IN_VIEW);
+  const daily = seen
+    .filter((part) => part.daily.some((role) => viewer.roles.includes(role)))
+    .slice(0, IN_VIEW);
   const more = seen.filter((part) => !daily.includes(part));
   const link = ({ name, href }: (typeof PARTS)[number]) => ({ name, href });
 
@@ -39,7 +41,8 @@ export function Shell({ viewer, children }: { readonly viewer: Viewer; readonly 
         {children}
       </main>
       <footer className="mx-auto max-w-[88rem] border-t px-4 py-4 text-sm text-soft max-md:pb-24 print:hidden">
-        Predictions are at equilibrium from published constants. They replace no risk assessment, data sheet or local rule; a competent person decides.
+        Predictions are at equilibrium from published constants. They replace no risk assessment, data sheet
+        or local rule; a competent person decides.
       </footer>
     </>
   );
@@ -49,8 +52,16 @@ export function Shell({ viewer, children }: { readonly viewer: Viewer; readonly 
 function Mark() {
   return (
     <svg viewBox="0 0 28 28" aria-hidden className="size-7">
-      <path d="M5 4h18M7 4v16a4 4 0 0 0 4 4h6a4 4 0 0 0 4-4V4" fill="none" stroke="var(--ink)" strokeWidth="2.2" />
-      <path d="M8.200 13h11.600v7a2.800 2.800 0 0 1-2.800 2.800h-6a2.800 2.800 0 0 1-2.800-2.800z" fill="var(--verdigris)" />
+      <path
+        d="M5 4h18M7 4v16a4 4 0 0 0 4 4h6a4 4 0 0 0 4-4V4"
+        fill="none"
+        stroke="var(--ink)"
+        strokeWidth="2.2"
+      />
+      <path
+        d="M8.200 13h11.600v7a2.800 2.800 0 0 1-2.800 2.800h-6a2.800 2.800 0 0 1-2.800-2.800z"
+        fill="var(--verdigris)"
+      />
       <path d="M16 8.500h3.500M17 11h2.500" stroke="var(--ink)" strokeWidth="1.400" />
     </svg>
   );

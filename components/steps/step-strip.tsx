@@ -29,7 +29,9 @@ export function StepStrip({ done, now, isStopped = false, hrefs = [] }: StepStri
                 <span aria-hidden>{isDone ? '✓' : isCurrent && isStopped ? '▲' : isCurrent ? '▸' : '○'}</span>
                 {step}
               </span>
-              <span className="block min-h-5 text-sm leading-tight">{isDone ? <span className="sr-only">done</span> : isCurrent ? now : null}</span>
+              <span className="block min-h-5 text-sm leading-tight">
+                {isDone ? <span className="sr-only">done</span> : isCurrent ? now : null}
+              </span>
             </>
           );
           const look = classNames(
@@ -39,7 +41,11 @@ export function StepStrip({ done, now, isStopped = false, hrefs = [] }: StepStri
             !isDone && !isCurrent && 'text-soft',
           );
           return (
-            <li key={step} aria-current={isCurrent ? 'step' : undefined} className={classNames(index > 0 && 'border-l border-line')}>
+            <li
+              key={step}
+              aria-current={isCurrent ? 'step' : undefined}
+              className={classNames(index > 0 && 'border-l border-line')}
+            >
               {href ? (
                 <Link href={href} className={classNames(look, 'no-underline')}>
                   {content}

@@ -34,7 +34,10 @@ export function DayPage({ day, today, week, lines, margin, empty }: DayPageProps
               <Link
                 href={(other === today ? '/' : `/?day=${other}`) as Route}
                 aria-current={other === day ? 'date' : undefined}
-                className={classNames('block min-h-11 px-3 py-2 text-center whitespace-nowrap no-underline', other === day ? 'bg-ink font-bold text-paper' : 'text-ink hover:bg-sunken')}
+                className={classNames(
+                  'block min-h-11 px-3 py-2 text-center whitespace-nowrap no-underline',
+                  other === day ? 'bg-ink font-bold text-paper' : 'text-ink hover:bg-sunken',
+                )}
               >
                 {other === today ? 'Today' : shortDay(other)}
               </Link>
@@ -47,11 +50,21 @@ export function DayPage({ day, today, week, lines, margin, empty }: DayPageProps
           {lines.length === 0 && empty}
           <ol>
             {lines.map((line) => (
-              <li key={`${line.kind}${line.href}${line.at}`} className="grid grid-cols-[4.5rem_1fr] gap-x-4 border-b py-1">
-                <span className="py-2.5 font-mono text-soft">{line.at && <Moment at={line.at} style="time" />}</span>
-                <Link href={line.href as Route} className="flex min-h-11 flex-wrap items-center gap-x-3 gap-y-1 py-2 text-ink no-underline hover:bg-raised">
+              <li
+                key={`${line.kind}${line.href}${line.at}`}
+                className="grid grid-cols-[4.5rem_1fr] gap-x-4 border-b py-1"
+              >
+                <span className="py-2.5 font-mono text-soft">
+                  {line.at && <Moment at={line.at} style="time" />}
+                </span>
+                <Link
+                  href={line.href as Route}
+                  className="flex min-h-11 flex-wrap items-center gap-x-3 gap-y-1 py-2 text-ink no-underline hover:bg-raised"
+                >
                   <span className="w-28 shrink-0 text-sm text-soft">{line.kind}</span>
-                  <span className="min-w-0 font-semibold underline decoration-rule underline-offset-4">{line.text}</span>
+                  <span className="min-w-0 font-semibold underline decoration-rule underline-offset-4">
+                    {line.text}
+                  </span>
                   {line.state && <StateMark state={line.state} />}
                 </Link>
               </li>
@@ -80,5 +93,10 @@ export function DayPage({ day, today, week, lines, margin, empty }: DayPageProps
 }
 
 function shortDay(day: string): string {
-  return new Intl.DateTimeFormat('en-GB', { weekday: 'short', day: 'numeric', month: 'short', timeZone: 'UTC' }).format(new Date(day));
+  return new Intl.DateTimeFormat('en-GB', {
+    weekday: 'short',
+    day: 'numeric',
+    month: 'short',
+    timeZone: 'UTC',
+  }).format(new Date(day));
 }

@@ -11,10 +11,21 @@ const TONES: Readonly<Record<AlertTone, { look: string; mark: string; word: stri
 };
 
 /** Says something about the whole page or form: word, shape and colour together. */
-export function Alert({ tone, title, children }: { readonly tone: AlertTone; readonly title?: string; readonly children?: ReactNode }) {
+export function Alert({
+  tone,
+  title,
+  children,
+}: {
+  readonly tone: AlertTone;
+  readonly title?: string;
+  readonly children?: ReactNode;
+}) {
   const { look, mark, word } = TONES[tone];
   return (
-    <div role={tone === 'stop' || tone === 'attention' ? 'alert' : 'status'} className={classNames('rounded border-l-4 px-4 py-3', look)}>
+    <div
+      role={tone === 'stop' || tone === 'attention' ? 'alert' : 'status'}
+      className={classNames('rounded border-l-4 px-4 py-3', look)}
+    >
       <p className="font-semibold">
         <span aria-hidden>{mark} </span>
         {title ?? word}

@@ -3,7 +3,15 @@ import { formatMass, formatMolarity, formatNumber, formatVolume } from '@/lib/cl
 type Kind = 'mol/L' | 'mL' | 'g';
 
 /** An amount with its unit, in figures that line up. */
-export function Amount({ value, unit, significant = 3 }: { readonly value: number; readonly unit: Kind | (string & {}); readonly significant?: number }) {
+export function Amount({
+  value,
+  unit,
+  significant = 3,
+}: {
+  readonly value: number;
+  readonly unit: Kind | (string & {});
+  readonly significant?: number;
+}) {
   const text =
     unit === 'mol/L'
       ? formatMolarity(value, significant)

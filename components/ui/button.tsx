@@ -21,10 +21,30 @@ interface ButtonProps extends ButtonHTMLAttributes<HTMLButtonElement> {
   readonly busyText?: string;
 }
 
-export function Button({ look = 'quiet', isBusy = false, busyText, disabled, children, className, type = 'button', ...rest }: ButtonProps) {
+export function Button({
+  look = 'quiet',
+  isBusy = false,
+  busyText,
+  disabled,
+  children,
+  className,
+  type = 'button',
+  ...rest
+}: ButtonProps) {
   return (
-    <button {...rest} type={type} disabled={disabled || isBusy} aria-busy={isBusy || undefined} className={classNames(SHAPE, LOOKS[look], className)}>
-      {isBusy && <span aria-hidden className="size-4 animate-spin rounded-full border-2 border-current border-t-transparent" />}
+    <button
+      {...rest}
+      type={type}
+      disabled={disabled || isBusy}
+      aria-busy={isBusy || undefined}
+      className={classNames(SHAPE, LOOKS[look], className)}
+    >
+      {isBusy && (
+        <span
+          aria-hidden
+          className="size-4 animate-spin rounded-full border-2 border-current border-t-transparent"
+        />
+      )}
       {isBusy && busyText ? busyText : children}
     </button>
   );
@@ -38,7 +58,12 @@ interface LinkButtonProps<T extends string> {
 }
 
 /** A link that looks like a button; for going somewhere, never for doing something. */
-export function LinkButton<T extends string>({ href, look = 'quiet', children, className }: LinkButtonProps<T>) {
+export function LinkButton<T extends string>({
+  href,
+  look = 'quiet',
+  children,
+  className,
+}: LinkButtonProps<T>) {
   return (
     <Link href={href} className={classNames(SHAPE, LOOKS[look], 'no-underline', className)}>
       {children}

@@ -29,7 +29,18 @@ interface ComboboxProps {
 const FIND_DELAY_MS = 150;
 
 /** A field that finds what is typed among many choices. Arrow keys, Enter and Escape work as in any list box. */
-export function Combobox({ id, label, chosen, onChoose, find, error, hint, placeholder, isLabelHidden, className }: ComboboxProps) {
+export function Combobox({
+  id,
+  label,
+  chosen,
+  onChoose,
+  find,
+  error,
+  hint,
+  placeholder,
+  isLabelHidden,
+  className,
+}: ComboboxProps) {
   const listId = useId();
   const [text, setText] = useState<string | null>(null);
   const [choices, setChoices] = useState<readonly Choice[]>([]);
@@ -67,7 +78,10 @@ export function Combobox({ id, label, chosen, onChoose, find, error, hint, place
     if (event.key === 'ArrowDown' || event.key === 'ArrowUp') {
       event.preventDefault();
       if (!isOpen) setText('');
-      else setActive((index) => Math.max(0, Math.min(choices.length - 1, index + (event.key === 'ArrowDown' ? 1 : -1))));
+      else
+        setActive((index) =>
+          Math.max(0, Math.min(choices.length - 1, index + (event.key === 'ArrowDown' ? 1 : -1))),
+        );
     } else if (event.key === 'Enter' && isOpen) {
       event.preventDefault();
       choose(choices[active]);
@@ -79,7 +93,14 @@ export function Combobox({ id, label, chosen, onChoose, find, error, hint, place
   const described = [hint ? `${id}-hint` : null, error ? `${id}-error` : null].filter(Boolean).join(' ');
 
   return (
-    <Field id={id} label={label} error={error} hint={hint} isLabelHidden={isLabelHidden} className={classNames('relative', className)}>
+    <Field
+      id={id}
+      label={label}
+      error={error}
+      hint={hint}
+      isLabelHidden={isLabelHidden}
+      className={classNames('relative', className)}
+    >
       <input
         id={id}
         type="text"
@@ -104,9 +125,14 @@ export function Combobox({ id, label, chosen, onChoose, find, error, hint, place
         id={listId}
         role="listbox"
         aria-label={label}
-        className={classNames('absolute inset-x-0 z-20 mt-1 max-h-72 overflow-y-auto rounded border border-line bg-raised py-1 shadow-md', !isOpen && 'hidden')}
+        className={classNames(
+          'absolute inset-x-0 z-20 mt-1 max-h-72 overflow-y-auto rounded border border-line bg-raised py-1 shadow-md',
+          !isOpen && 'hidden',
+        )}
       >
-        {isOpen && choices.length === 0 && <li className="px-3 py-2 text-soft">{text ? 'Nothing is called that.' : 'Loading …'}</li>}
+        {isOpen && choices.length === 0 && (
+          <li className="px-3 py-2 text-soft">{text ? 'Nothing is called that.' : 'Loading …'}</li>
+        )}
         {choices.map((choice, index) => (
           <li
             key={choice.value}
@@ -117,7 +143,10 @@ export function Combobox({ id, label, chosen, onChoose, find, error, hint, place
               event.preventDefault();
               choose(choice);
             }}
-            className={classNames('flex min-h-11 cursor-pointer items-baseline justify-between gap-3 px-3 py-2', index === active && 'bg-copper-wash')}
+            className={classNames(
+              'flex min-h-11 cursor-pointer items-baseline justify-between gap-3 px-3 py-2',
+              index === active && 'bg-copper-wash',
+            )}
           >
             <span>{choice.label}</span>
             {choice.detail && <span className="text-right text-sm text-soft">{choice.detail}</span>}

@@ -23,7 +23,10 @@ export function Dialog({ title, description, isOpen, onOpenChange, children }: D
         >
           <div className="rule-double mb-4 flex items-start justify-between gap-4 pb-2">
             <Radix.Title className="text-xl font-bold">{title}</Radix.Title>
-            <Radix.Close aria-label="Close" className="-mt-1 -mr-1 grid size-11 shrink-0 place-items-center rounded text-2xl hover:bg-sunken">
+            <Radix.Close
+              aria-label="Close"
+              className="-mt-1 -mr-1 grid size-11 shrink-0 place-items-center rounded text-2xl hover:bg-sunken"
+            >
               ×
             </Radix.Close>
           </div>

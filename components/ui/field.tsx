@@ -16,11 +16,23 @@ export interface FieldProps {
 /** What ties a control to its label, hint and error. */
 export function controlProps({ id, hint, error }: FieldProps) {
   const described = [hint ? `${id}-hint` : null, error ? `${id}-error` : null].filter(Boolean).join(' ');
-  return { id, 'aria-invalid': error ? true : undefined, 'aria-describedby': described || undefined } as const;
+  return {
+    id,
+    'aria-invalid': error ? true : undefined,
+    'aria-describedby': described || undefined,
+  } as const;
 }
 
 /** A label above its control, with the hint and the error where the eye is. */
-export function Field({ id, label, hint, error, isLabelHidden = false, className, children }: FieldProps & { readonly children: ReactNode }) {
+export function Field({
+  id,
+  label,
+  hint,
+  error,
+  isLabelHidden = false,
+  className,
+  children,
+}: FieldProps & { readonly children: ReactNode }) {
   return (
     <div className={classNames('min-w-0', className)}>
       <label htmlFor={id} className={isLabelHidden ? 'sr-only' : 'mb-1 block text-[0.95rem] font-semibold'}>

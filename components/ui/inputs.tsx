@@ -3,7 +3,8 @@ import { classNames } from './class-names';
 import { CONTROL, controlProps, Field } from './field';
 import type { FieldProps } from './field';
 
-type Control<E extends 'input' | 'select' | 'textarea'> = FieldProps & Omit<ComponentPropsWithRef<E>, 'id' | 'className'>;
+type Control<E extends 'input' | 'select' | 'textarea'> = FieldProps &
+  Omit<ComponentPropsWithRef<E>, 'id' | 'className'>;
 
 function split<P extends FieldProps>({ id, label, hint, error, isLabelHidden, className, ...rest }: P) {
   return { field: { id, label, hint, error, isLabelHidden, className }, rest };
@@ -33,7 +34,10 @@ export function NumberInput({ unit, ...props }: Control<'input'> & { readonly un
           className={classNames(CONTROL, 'text-right font-mono', unit && 'rounded-r-none border-r-0')}
         />
         {unit && (
-          <span aria-hidden className="flex items-center rounded-r border border-line bg-sunken px-2.5 text-sm text-soft">
+          <span
+            aria-hidden
+            className="flex items-center rounded-r border border-line bg-sunken px-2.5 text-sm text-soft"
+          >
             {unit}
           </span>
         )}
@@ -62,10 +66,24 @@ export function TextArea(props: Control<'textarea'>) {
   );
 }
 
-export function Checkbox({ label, id, hint, ...rest }: { readonly id: string; readonly label: string; readonly hint?: string } & Omit<ComponentPropsWithRef<'input'>, 'id' | 'type' | 'className'>) {
+export function Checkbox({
+  label,
+  id,
+  hint,
+  ...rest
+}: { readonly id: string; readonly label: string; readonly hint?: string } & Omit<
+  ComponentPropsWithRef<'input'>,
+  'id' | 'type' | 'className'
+>) {
   return (
     <div className="flex items-start gap-3 py-1.5">
-      <input {...rest} id={id} type="checkbox" aria-describedby={hint ? `${id}-hint` : undefined} className="mt-0.5 size-6 shrink-0 accent-verdigris" />
+      <input
+        {...rest}
+        id={id}
+        type="checkbox"
+        aria-describedby={hint ? `${id}-hint` : undefined}
+        className="mt-0.5 size-6 shrink-0 accent-verdigris"
+      />
       <label htmlFor={id} className="text-base">
         {label}
         {hint && (

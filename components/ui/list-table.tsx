@@ -27,7 +27,10 @@ interface ListTableProps<Row> {
   readonly columns: readonly ListColumnView<Row>[];
   readonly searchLabel?: string;
   /** Filters; they read and change the same state. */
-  readonly filters?: (state: Readonly<Record<string, string>>, change: (next: Readonly<Record<string, string>>) => void) => ReactNode;
+  readonly filters?: (
+    state: Readonly<Record<string, string>>,
+    change: (next: Readonly<Record<string, string>>) => void,
+  ) => ReactNode;
   /** State that holds until the reader chooses otherwise. */
   readonly defaults?: Readonly<Record<string, string>>;
   readonly empty: ReactNode;
@@ -37,26 +40,50 @@ const features = tableFeatures({});
 const SEARCH_DELAY_MS = 250;
 
 /** A list that is searched, sorted, filtered and paged on the server. On a phone each row becomes a block. */
-export function ListTable<Row extends { id: string | number }>({ endpoint, label, columns, searchLabel, filters, defaults, empty }: ListTableProps<Row>) {
+export function ListTable<Row extends { id: string | number }>({
+  endpoint,
+  label,
+  columns,
+  searchLabel,
+  filters,
+  defaults,
+  empty,
+}: ListTableProps<Row>) {
   const [chosen, change] = useListState();
   const state = useMemo(() => ({ ...defaults, ...chosen }), [defaults, chosen]);
   const { data, error, isPending, isFetching, refetch } = useList<Row>(endpoint, state);
   const rows = useMemo(() => data?.items ?? [], [data]);
   const tableColumns = useMemo(() => {
     const helper = createColumnHelper<typeof features, Row>();
-    return helper.columns(columns.map(({ id, header, cell }) => helper.display({ id, header, cell: ({ row }) => cell(row.original) })));
+    return helper.columns(
+      columns.map(({ id, header, cell }) =>
+        helper.display({ id, header, cell: ({ row }) => cell(row.original) }),
+      ),
+    );
   }, [columns]);
   const table = useTable({ features, columns: tableColumns, data: rows });
   const byId = new Map(columns.map((column) => [column.id, column]));
-  const isNarrowed = Object.entries(chosen).some(([key, value]) => key !== 'page' && key !== 'sort' && value !== '');
+  const isNarrowed = Object.entries(chosen).some(
+    ([key, value]) => key !== 'page' && key !== 'sort' && value !== '',
+  );
 
   return (
     <div>
       <div className="no-print mb-3 flex flex-wrap items-end gap-3">
-        {searchLabel && <SearchBox label={searchLabel} value={state.search ?? ''} onSearch={(search) => change({ search })} />}
+        {searchLabel && (
+          <SearchBox
+            label={searchLabel}
+            value={state.search ?? ''}
+            onSearch={(search) => change({ search })}
+          />
+        )}
         {filters?.(state, change)}
         {endpoint.columns && (
-          <a href={exportAddress(endpoint, state)} className="ml-auto inline-flex min-h-11 items-center px-2" download>
+          <a
+            href={exportAddress(endpoint, state)}
+            className="ml-auto inline-flex min-h-11 items-center px-2"
+            download
+          >
             Save as spreadsheet
           </a>
         )}
@@ -67,14 +94,29 @@ export function ListTable<Row extends { id: string | number }>({ endpoint, label
         </Alert>
       )}
       {isPending && !error && <Skeleton lines={6} />}
-      {data && data.total === 0 && (isNarrowed ? <p className="py-6">Nothing matches. Search for less, or take a filter off.</p> : empty)}
+      {data &&
+        data.total === 0 &&
+        (isNarrowed ? (
+          <p className="py-6">Nothing matches. Search for less, or take a filter off.</p>
+        ) : (
+          empty
+        ))}
       {data && data.total > 0 && (
-        <table aria-label={label} aria-busy={isFetching} className={classNames('w-full border-collapse max-md:block', isFetching && 'opacity-70')}>
+        <table
+          aria-label={label}
+          aria-busy={isFetching}
+          className={classNames('w-full border-collapse max-md:block', isFetching && 'opacity-70')}
+        >
           <thead className="max-md:sr-only">
             {table.getHeaderGroups().map((group) => (
               <tr key={group.id} className="border-b-2 border-line text-left">
                 {group.headers.map((header) => (
-                  <HeaderCell key={header.id} column={byId.get(header.column.id)} sort={state.sort} onSort={(sort) => change({ sort })} />
+                  <HeaderCell
+                    key={header.id}
+                    column={byId.get(header.column.id)}
+                    sort={state.sort}
+                    onSort={(sort) => change({ sort })}
+                  />
                 ))}
               </tr>
             ))}
@@ -85,7 +127,13 @@ export function ListTable<Row extends { id: string | number }>({ endpoint, label
                 {row.getAllCells().map((cell) => {
                   const column = byId.get(cell.column.id);
                   return (
-                    <td key={cell.id} className={classNames('py-2.5 pr-4 align-top max-md:flex max-md:gap-3 max-md:py-0.5', column?.isNumeric && 'md:text-right md:font-mono')}>
+                    <td
+                      key={cell.id}
+                      className={classNames(
+                        'py-2.5 pr-4 align-top max-md:flex max-md:gap-3 max-md:py-0.5',
+                        column?.isNumeric && 'md:text-right md:font-mono',
+                      )}
+                    >
                       <span aria-hidden className="hidden w-28 shrink-0 text-sm text-soft max-md:block">
                         {column?.header}
                       </span>
@@ -100,19 +148,49 @@ export function ListTable<Row extends { id: string | number }>({ endpoint, label
           </tbody>
         </table>
       )}
-      {data && data.total > 0 && <Pager page={data.page} pageSize={data.pageSize} total={data.total} onPage={(page) => change({ page: String(page) })} />}
+      {data && data.total > 0 && (
+        <Pager
+          page={data.page}
+          pageSize={data.pageSize}
+          total={data.total}
+          onPage={(page) => change({ page: String(page) })}
+        />
+      )}
     </div>
   );
 }
 
-function HeaderCell<Row>({ column, sort, onSort }: { readonly column: ListColumnView<Row> | undefined; readonly sort: string | undefined; readonly onSort: (sort: string) => void }) {
+function HeaderCell<Row>({
+  column,
+  sort,
+  onSort,
+}: {
+  readonly column: ListColumnView<Row> | undefined;
+  readonly sort: string | undefined;
+  readonly onSort: (sort: string) => void;
+}) {
   if (!column) return null;
   const { header, sortKey, isNumeric } = column;
-  const direction = sortKey === undefined ? undefined : sort === sortKey ? 'ascending' : sort === `-${sortKey}` ? 'descending' : 'none';
+  const direction =
+    sortKey === undefined
+      ? undefined
+      : sort === sortKey
+        ? 'ascending'
+        : sort === `-${sortKey}`
+          ? 'descending'
+          : 'none';
   return (
-    <th scope="col" aria-sort={direction} className={classNames('py-1 pr-4 text-sm font-semibold', isNumeric && 'text-right')}>
+    <th
+      scope="col"
+      aria-sort={direction}
+      className={classNames('py-1 pr-4 text-sm font-semibold', isNumeric && 'text-right')}
+    >
       {sortKey ? (
-        <button type="button" className="inline-flex min-h-9 items-center gap-1 underline-offset-4 hover:underline" onClick={() => onSort(direction === 'ascending' ? `-${sortKey}` : sortKey)}>
+        <button
+          type="button"
+          className="inline-flex min-h-9 items-center gap-1 underline-offset-4 hover:underline"
+          onClick={() => onSort(direction === 'ascending' ? `-${sortKey}` : sortKey)}
+        >
           {header}
           <span aria-hidden>{direction === 'ascending' ? '↑' : direction === 'descending' ? '↓' : '↕'}</span>
         </button>
@@ -124,7 +202,15 @@ function HeaderCell<Row>({ column, sort, onSort }: { readonly column: ListColumn
 }
 
 /** Waits until typing rests before it asks the server. */
-function SearchBox({ label, value, onSearch }: { readonly label: string; readonly value: string; readonly onSearch: (text: string) => void }) {
+function SearchBox({
+  label,
+  value,
+  onSearch,
+}: {
+  readonly label: string;
+  readonly value: string;
+  readonly onSearch: (text: string) => void;
+}) {
   const id = useId();
   const [text, setText] = useState(value);
   const settled = useDeferredValue(text);
@@ -133,14 +219,36 @@ function SearchBox({ label, value, onSearch }: { readonly label: string; readonl
     const timer = setTimeout(() => onSearch(settled), SEARCH_DELAY_MS);
     return () => clearTimeout(timer);
   }, [settled, value, onSearch]);
-  return <TextInput id={id} label={label} type="search" value={text} onChange={(event) => setText(event.target.value)} className="w-full sm:w-80" />;
+  return (
+    <TextInput
+      id={id}
+      label={label}
+      type="search"
+      value={text}
+      onChange={(event) => setText(event.target.value)}
+      className="w-full sm:w-80"
+    />
+  );
 }
 
-function Pager({ page, pageSize, total, onPage }: { readonly page: number; readonly pageSize: number; readonly total: number; readonly onPage: (page: number) => void }) {
+function Pager({
+  page,
+  pageSize,
+  total,
+  onPage,
+}: {
+  readonly page: number;
+  readonly pageSize: number;
+  readonly total: number;
+  readonly onPage: (page: number) => void;
+}) {
   const last = Math.max(1, Math.ceil(total / pageSize));
   const from = (page - 1) * pageSize + 1;
   return (
-    <nav aria-label="Pages" className="no-print mt-3 flex flex-wrap items-center justify-between gap-3 text-sm">
+    <nav
+      aria-label="Pages"
+      className="no-print mt-3 flex flex-wrap items-center justify-between gap-3 text-sm"
+    >
       <span>
         {from} to {Math.min(page * pageSize, total)} of {total}
       </span>

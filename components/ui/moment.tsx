@@ -15,9 +15,16 @@ const never = () => () => undefined;
 
 /** A moment in the reader's language and time zone; the server, which knows neither, writes it in English and UTC. */
 export function Moment({ at, style = 'day-time' }: { readonly at: string; readonly style?: Style }) {
-  const isBrowser = useSyncExternalStore(never, () => true, () => false);
+  const isBrowser = useSyncExternalStore(
+    never,
+    () => true,
+    () => false,
+  );
   const isWholeDay = at.length === 10;
   const zone = isWholeDay || !isBrowser ? { timeZone: 'UTC' } : {};
-  const text = new Intl.DateTimeFormat(isBrowser ? undefined : 'en-GB', { ...OPTIONS[style], ...zone }).format(new Date(at));
+  const text = new Intl.DateTimeFormat(isBrowser ? undefined : 'en-GB', {
+    ...OPTIONS[style],
+    ...zone,
+  }).format(new Date(at));
   return <time dateTime={at}>{text}</time>;
 }

@@ -1,5 +1,13 @@
 /** How far something has come, with what is being done. */
-export function Progress({ label, done, total }: { readonly label: string; readonly done: number; readonly total: number }) {
+export function Progress({
+  label,
+  done,
+  total,
+}: {
+  readonly label: string;
+  readonly done: number;
+  readonly total: number;
+}) {
   return (
     <div>
       <div className="mb-1 flex justify-between text-sm">

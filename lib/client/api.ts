@@ -25,7 +25,9 @@ export class ApiProblem extends Error {
   }
 }
 
-type Part<Name extends string, T> = [T] extends [undefined] ? { readonly [K in Name]?: undefined } : { readonly [K in Name]: T };
+type Part<Name extends string, T> = [T] extends [undefined]
+  ? { readonly [K in Name]?: undefined }
+  : { readonly [K in Name]: T };
 export type CallInput<E extends Endpoint> = Part<'params', ParamsOf<E>> &
   Part<'body', BodyInputOf<E>> & {
     readonly query?: QueryInputOf<E>;
@@ -66,20 +68,41 @@ export async function callApi<E extends Endpoint>(endpoint: E, input: CallInput<
     });
   } catch (cause) {
     if (signal?.aborted) throw cause;
-    throw new ApiProblem(0, 'no-connection', 'No connection', 'The server did not answer. What you typed is kept; try again.', [], {});
+    throw new ApiProblem(
+      0,
+      'no-connection',
+      'No connection',
+      'The server did not answer. What you typed is kept; try again.',
+      [],
+      {},
+    );
   }
   if (!response.ok) throw await problemOf(response);
   if (endpoint.response === 'none' || endpoint.response === 'file') return undefined as ResponseOf<E>;
   const answer = endpoint.response.safeParse(await response.json().catch(() => undefined));
   if (answer.success) return answer.data as ResponseOf<E>;
-  throw new ApiProblem(response.status, 'unreadable', 'An answer that can’t be read', 'The server did it, but its answer could not be read. Reload the page.', [], {});
+  throw new ApiProblem(
+    response.status,
+    'unreadable',
+    'An answer that can’t be read',
+    'The server did it, but its answer could not be read. Reload the page.',
+    [],
+    {},
+  );
 }
 
 /** Reads a failed answer; an answer that is no problem document still becomes one. */
 export async function problemOf(response: Response): Promise<ApiProblem> {
   const parsed = problemSchema.safeParse(await response.json().catch(() => null));
   if (!parsed.success) {
-    return new ApiProblem(response.status, 'unexpected', 'Something went wrong', `The server answered ${response.status}.`, [], {});
+    return new ApiProblem(
+      response.status,
+      'unexpected',
+      'Something went wrong',
+      `The server answered ${response.status}.`,
+      [],
+      {},
+    );
   }
   const { type, title, status, detail = '', errors = [] } = parsed.data;
   return new ApiProblem(status, type.split('/').at(-1) ?? type, title, detail, errors, parsed.data);

@@ -5,7 +5,9 @@ const THIN = '\u202f';
 
 /** An integer as superscript digits, with a true minus sign. */
 export function superscript(value: number): string {
-  return String(value).replaceAll(/\d/g, (digit) => SUPERSCRIPTS[Number(digit)] ?? digit).replace('-', '⁻');
+  return String(value)
+    .replaceAll(/\d/g, (digit) => SUPERSCRIPTS[Number(digit)] ?? digit)
+    .replace('-', '⁻');
 }
 
 /**
@@ -17,7 +19,8 @@ export function formatNumber(value: number, significant = 3): string {
   if (value === 0) return '0';
   const [mantissa = '', exponentText = '0'] = value.toExponential(significant - 1).split('e');
   const exponent = Number(exponentText);
-  if (exponent < -3 || exponent >= 6) return `${mantissa.replace('-', '−')}${THIN}×${THIN}10${superscript(exponent)}`;
+  if (exponent < -3 || exponent >= 6)
+    return `${mantissa.replace('-', '−')}${THIN}×${THIN}10${superscript(exponent)}`;
   const decimals = Math.max(0, significant - 1 - exponent);
   const rounded = Number(`${mantissa}e${exponent}`);
   return formatFixed(rounded, decimals);
@@ -42,14 +45,18 @@ export function formatMass(grams: number, significant = 3): string {
   const size = Math.abs(grams);
   if (size >= 1000) return formatAmount(grams / 1000, 'kg', significant);
   if (size >= 0.1 || size === 0) return formatAmount(grams, 'g', significant);
-  return size >= 1e-4 ? formatAmount(grams * 1000, 'mg', significant) : formatAmount(grams * 1e6, 'µg', significant);
+  return size >= 1e-4
+    ? formatAmount(grams * 1000, 'mg', significant)
+    : formatAmount(grams * 1e6, 'µg', significant);
 }
 
 /** A volume given in mL, in mL or L. */
 export function formatVolume(volumeMl: number, significant = 3): string {
   const size = Math.abs(volumeMl);
   if (size >= 1000) return formatAmount(volumeMl / 1000, 'L', significant);
-  return size >= 0.1 || size === 0 ? formatAmount(volumeMl, 'mL', significant) : formatAmount(volumeMl * 1000, 'µL', significant);
+  return size >= 0.1 || size === 0
+    ? formatAmount(volumeMl, 'mL', significant)
+    : formatAmount(volumeMl * 1000, 'µL', significant);
 }
 
 /** A strength; small ones in powers of ten, since prefixes hide how small they are. */

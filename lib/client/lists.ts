@@ -24,7 +24,9 @@ export function useListState(): [ListState, (change: ListState) => void] {
         if (value === '') merged.delete(key);
         else merged.set(key, value);
       }
-      router.replace(`${pathname}${merged.size > 0 ? `?${merged.toString()}` : ''}` as Route, { scroll: false });
+      router.replace(`${pathname}${merged.size > 0 ? `?${merged.toString()}` : ''}` as Route, {
+        scroll: false,
+      });
     },
     [params, pathname, router],
   );
@@ -35,7 +37,11 @@ export function useListState(): [ListState, (change: ListState) => void] {
 export function useList<Row>(endpoint: Endpoint, state: ListState) {
   return useQuery({
     queryKey: [endpoint.path, 'list', state],
-    queryFn: ({ signal }) => callApi(endpoint, { query: state, signal } as unknown as CallInput<Endpoint>) as Promise<unknown> as Promise<Page<Row>>,
+    queryFn: ({ signal }) =>
+      callApi(endpoint, {
+        query: state,
+        signal,
+      } as unknown as CallInput<Endpoint>) as Promise<unknown> as Promise<Page<Row>>,
     placeholderData: keepPreviousData,
   });
 }

@@ -10,7 +10,8 @@ function makeClient(): QueryClient {
     defaultOptions: {
       queries: {
         staleTime: 10_000,
-        retry: (count, error) => !(error instanceof ApiProblem && error.status >= 400 && error.status < 500) && count < 2,
+        retry: (count, error) =>
+          !(error instanceof ApiProblem && error.status >= 400 && error.status < 500) && count < 2,
       },
     },
   });

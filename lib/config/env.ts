@@ -39,8 +39,10 @@ export function parseEnvironment(source: Readonly<Record<string, string | undefi
   if (env.APP_MODE === 'production') {
     const faults: string[] = [];
     const secret = env.SESSION_SECRET;
-    if (!secret || KNOWN_SECRETS.some((known) => secret.startsWith(known))) faults.push('SESSION_SECRET must be your own');
-    if (env.DEMO_PASSWORD === 'larkmoor-demo' && source.DEMO_PASSWORD) faults.push('DEMO_PASSWORD must not be the demo one');
+    if (!secret || KNOWN_SECRETS.some((known) => secret.startsWith(known)))
+      faults.push('SESSION_SECRET must be your own');
+    if (env.DEMO_PASSWORD === 'larkmoor-demo' && source.DEMO_PASSWORD)
+      faults.push('DEMO_PASSWORD must not be the demo one');
     if (!env.SMTP_URL) faults.push('SMTP_URL is missing');
     if (faults.length > 0) throw new Error(`Environment: ${faults.join('; ')}`);
   }

@@ -71,7 +71,8 @@ export const POLICY = {
   'review:decide': { roles: ['safety'], when: isAnothers },
   'batch:read': {
     roles: 'everyone',
-    when: (viewer: Viewer, record: Served) => has(viewer, ...staff) || record.requesterIds.includes(viewer.id),
+    when: (viewer: Viewer, record: Served) =>
+      has(viewer, ...staff) || record.requesterIds.includes(viewer.id),
   },
   'batch:list': { roles: 'everyone' },
   'batch:write': { roles: ['prep'] },
@@ -100,7 +101,9 @@ export const POLICY = {
 } as const satisfies Record<string, Rule<never>>;
 
 export type Action = keyof typeof POLICY;
-type RecordOf<A extends Action> = (typeof POLICY)[A] extends { when: (viewer: Viewer, record: infer R) => boolean }
+type RecordOf<A extends Action> = (typeof POLICY)[A] extends {
+  when: (viewer: Viewer, record: infer R) => boolean;
+}
   ? R
   : undefined;
 
@@ -122,7 +125,12 @@ export function may<A extends Action>(viewer: Viewer, action: A, record: RecordO
 }
 
 /** @throws DomainError `forbidden` unless the viewer may do it to this record */
-export function authorise<A extends Action>(viewer: Viewer, action: A, record: RecordOf<A>, why?: string): void {
+export function authorise<A extends Action>(
+  viewer: Viewer,
+  action: A,
+  record: RecordOf<A>,
+  why?: string,
+): void {
   if (!may(viewer, action, record)) {
     throw new DomainError('forbidden', why ?? 'Your role does not allow this here.');
   }

@@ -1,15 +1,44 @@
 /** States of the things that move through the house, and which change may follow which. */
 
-export const REQUEST_STATES = ['draft', 'asked', 'in-review', 'agreed', 'in-work', 'ready', 'handed-over', 'closed', 'returned', 'withdrawn'] as const;
+export const REQUEST_STATES = [
+  'draft',
+  'asked',
+  'in-review',
+  'agreed',
+  'in-work',
+  'ready',
+  'handed-over',
+  'closed',
+  'returned',
+  'withdrawn',
+] as const;
 export type RequestState = (typeof REQUEST_STATES)[number];
 
-export const REVIEW_STATES = ['waiting', 'agreed', 'agreed-with-conditions', 'returned', 'refused', 'lapsed'] as const;
+export const REVIEW_STATES = [
+  'waiting',
+  'agreed',
+  'agreed-with-conditions',
+  'returned',
+  'refused',
+  'lapsed',
+] as const;
 export type ReviewState = (typeof REVIEW_STATES)[number];
 
 export const BATCH_STATES = ['planned', 'making', 'checked', 'bottled', 'spent', 'discarded'] as const;
 export type BatchState = (typeof BATCH_STATES)[number];
 
-export const ORDER_STATES = ['draft', 'for-approval', 'approved', 'sent', 'acknowledged', 'part-received', 'received', 'closed', 'refused', 'cancelled'] as const;
+export const ORDER_STATES = [
+  'draft',
+  'for-approval',
+  'approved',
+  'sent',
+  'acknowledged',
+  'part-received',
+  'received',
+  'closed',
+  'refused',
+  'cancelled',
+] as const;
 export type OrderState = (typeof ORDER_STATES)[number];
 
 export const BOTTLE_STATES = ['filled', 'handed-over', 'returned', 'discarded'] as const;
@@ -38,7 +67,15 @@ export type RequestLineKind = (typeof REQUEST_LINE_KINDS)[number];
 export const BATCH_STEP_KINDS = ['protection', 'condition', 'work', 'check'] as const;
 export type BatchStepKind = (typeof BATCH_STEP_KINDS)[number];
 
-export const EQUIPMENT_KINDS = ['balance', 'flask', 'cylinder', 'pipette', 'burette', 'beaker', 'bottle'] as const;
+export const EQUIPMENT_KINDS = [
+  'balance',
+  'flask',
+  'cylinder',
+  'pipette',
+  'burette',
+  'beaker',
+  'bottle',
+] as const;
 export type EquipmentKind = (typeof EQUIPMENT_KINDS)[number];
 
 export const REQUEST_MOVES: Readonly<Record<RequestState, readonly RequestState[]>> = {

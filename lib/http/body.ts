@@ -25,7 +25,8 @@ export async function readBytes(request: Request, limitBytes = DEFAULT_LIMIT_BYT
 /** @throws DomainError `unsupported-type`, `too-large`, `malformed`, or `invalid` where a number is not one */
 export async function readJson(request: Request, limitBytes?: number): Promise<unknown> {
   const type = request.headers.get('content-type') ?? '';
-  if (!/^application\/json\b/i.test(type)) throw new DomainError('unsupported-type', 'Send application/json.');
+  if (!/^application\/json\b/i.test(type))
+    throw new DomainError('unsupported-type', 'Send application/json.');
   const text = (await readBytes(request, limitBytes)).toString('utf8');
   try {
     return JSON.parse(text) as unknown;
@@ -52,7 +53,8 @@ function pointersOfNonNumbers(text: string): string[] {
   const visit = (node: unknown, path: PropertyKey[]) => {
     if (node === marker) found.push(pointerOf(path));
     else if (Array.isArray(node)) node.forEach((child, index) => visit(child, [...path, index]));
-    else if (node && typeof node === 'object') Object.entries(node).forEach(([key, child]) => visit(child, [...path, key]));
+    else if (node && typeof node === 'object')
+      Object.entries(node).forEach(([key, child]) => visit(child, [...path, key]));
   };
   visit(value, []);
   return found;

@@ -14,7 +14,10 @@ function schemaOf(schema: z.ZodType, io: 'input' | 'output'): Json {
 
 function parametersOf(schema: z.ZodType | undefined, place: 'path' | 'query'): Json[] {
   if (!schema) return [];
-  const { properties = {}, required = [] } = schemaOf(schema, 'input') as { properties?: Json; required?: string[] };
+  const { properties = {}, required = [] } = schemaOf(schema, 'input') as {
+    properties?: Json;
+    required?: string[];
+  };
   return Object.entries(properties).map(([name, property]) => ({
     name,
     in: place,
@@ -43,14 +46,19 @@ function operationOf(endpoint: Endpoint): Json {
           requestBody: {
             required: true,
             content: {
-              [endpoint.takes === 'form' ? 'multipart/form-data' : 'application/json']: { schema: schemaOf(endpoint.body, 'input') },
+              [endpoint.takes === 'form' ? 'multipart/form-data' : 'application/json']: {
+                schema: schemaOf(endpoint.body, 'input'),
+              },
             },
           },
         }
       : {}),
     responses: {
       [status]: { description: 'Done', ...content },
-      default: { description: 'A problem', content: { 'application/problem+json': { schema: { $ref: '#/components/schemas/Problem' } } } },
+      default: {
+        description: 'A problem',
+        content: { 'application/problem+json': { schema: { $ref: '#/components/schemas/Problem' } } },
+      },
     },
   };
 }
@@ -63,7 +71,11 @@ export function openApiDocument(): Json {
   }
   return {
     openapi: '3.1.0',
-    info: { title: 'Benchwright', version: '1', description: 'Amounts in mol, volumes in mL or L as the name says, temperatures in °C.' },
+    info: {
+      title: 'Benchwright',
+      version: '1',
+      description: 'Amounts in mol, volumes in mL or L as the name says, temperatures in °C.',
+    },
     security: [{ session: [] }],
     paths,
     components: {
@@ -79,7 +91,10 @@ export function openApiDocument(): Json {
             detail: { type: 'string' },
             errors: {
               type: 'array',
-              items: { type: 'object', properties: { pointer: { type: 'string' }, detail: { type: 'string' } } },
+              items: {
+                type: 'object',
+                properties: { pointer: { type: 'string' }, detail: { type: 'string' } },
+              },
             },
           },
         },

@@ -9,7 +9,9 @@ import type { Viewer } from '@/lib/domain/roles';
 import { SESSION_COOKIE, viewerOfCookie } from './session-cookie';
 
 /** Who looks at this page; asked once per page however often it is called. */
-export const findPageViewer = cache(async (): Promise<Viewer | null> => viewerOfCookie((await cookies()).get(SESSION_COOKIE)?.value));
+export const findPageViewer = cache(async (): Promise<Viewer | null> =>
+  viewerOfCookie((await cookies()).get(SESSION_COOKIE)?.value),
+);
 
 /** The viewer of a page that needs one; others are sent to sign in, or told that it is not theirs. */
 export async function pageViewer(action: Action): Promise<Viewer> {

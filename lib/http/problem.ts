@@ -15,7 +15,10 @@ export function fieldErrorsOf(error: z.ZodError, prefix: readonly PropertyKey[] 
   return error.issues.flatMap((issue) => {
     const path = [...prefix, ...issue.path];
     if (issue.code === 'unrecognized_keys') {
-      return issue.keys.map((key) => ({ pointer: pointerOf([...path, key]), detail: 'This field is not known here.' }));
+      return issue.keys.map((key) => ({
+        pointer: pointerOf([...path, key]),
+        detail: 'This field is not known here.',
+      }));
     }
     return [{ pointer: pointerOf(path), detail: issue.message }];
   });
@@ -35,7 +38,14 @@ export function toProblem(error: unknown, requestId: string = randomUUID()): Res
     const { errors, data, retryAfterSeconds } = error.extra;
     return answer(
       status,
-      { type: `/problems/${error.code}`, title, status, detail: error.message, ...(errors ? { errors } : {}), ...data },
+      {
+        type: `/problems/${error.code}`,
+        title,
+        status,
+        detail: error.message,
+        ...(errors ? { errors } : {}),
+        ...data,
+      },
       retryAfterSeconds === undefined ? {} : { 'retry-after': String(retryAfterSeconds) },
     );
   }

@@ -7,7 +7,9 @@ import { DomainError } from '@/lib/domain/errors';
 const PER_MINUTE = { light: 1200, heavy: 600, guess: 20 } as const;
 export type Cost = keyof typeof PER_MINUTE;
 
-const shared = globalThis as typeof globalThis & { benchwrightLimits?: Partial<Record<Cost, RateLimiterMemory>> };
+const shared = globalThis as typeof globalThis & {
+  benchwrightLimits?: Partial<Record<Cost, RateLimiterMemory>>;
+};
 
 function limiter(cost: Cost): RateLimiterMemory {
   const limits = (shared.benchwrightLimits ??= {});

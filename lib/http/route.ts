@@ -21,7 +21,14 @@ export interface Call<E extends Endpoint> {
   readonly body: BodyOf<E>;
   readonly idempotencyKey: string | null;
 }
-type PublicAction = 'session:sign-in' | 'session:read' | 'session:sign-out' | 'password:reset' | 'bottle:public' | 'health:read' | 'webhook:receive';
+type PublicAction =
+  | 'session:sign-in'
+  | 'session:read'
+  | 'session:sign-out'
+  | 'password:reset'
+  | 'bottle:public'
+  | 'health:read'
+  | 'webhook:receive';
 
 type Handle<E extends Endpoint> = (call: Call<E>) => Promise<ResponseOf<E> | Response>;
 interface Context {
@@ -42,7 +49,12 @@ export function route<E extends Endpoint>(endpoint: E, handle: Handle<E>) {
   };
 }
 
-async function answerCall<E extends Endpoint>(endpoint: E, handle: Handle<E>, request: Request, context: Context): Promise<Response> {
+async function answerCall<E extends Endpoint>(
+  endpoint: E,
+  handle: Handle<E>,
+  request: Request,
+  context: Context,
+): Promise<Response> {
   const isMutation = endpoint.method !== 'GET';
   const isWebhook = endpoint.action === 'webhook:receive';
   if (isMutation && !isWebhook) refuseForeignOrigin(request);
@@ -65,7 +77,9 @@ async function answerCall<E extends Endpoint>(endpoint: E, handle: Handle<E>, re
   const call = { request, viewer, params, query, body, idempotencyKey: key } as unknown as Call<E>;
 
   if (isMutation && viewer && key && !endpoint.ownTransaction && takesJson) {
-    const requestHash = createHash('sha256').update(JSON.stringify([params, raw])).digest('hex');
+    const requestHash = createHash('sha256')
+      .update(JSON.stringify([params, raw]))
+      .digest('hex');
     const name = `${endpoint.method} ${endpoint.path}`;
     const result = await once({ userId: viewer.id, endpoint: name, key, requestHash }, async () => {
       const value = await handle(call);

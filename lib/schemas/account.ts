@@ -2,14 +2,25 @@ import { z } from 'zod';
 import { endpoint } from './endpoint';
 import { emailField, newPasswordField, roleField } from './fields';
 
-const signedInUser = z.object({ id: z.uuid(), name: z.string(), email: z.string(), roles: z.array(roleField) });
+const signedInUser = z.object({
+  id: z.uuid(),
+  name: z.string(),
+  email: z.string(),
+  roles: z.array(roleField),
+});
 /** Any password that may ever have been set; length is bounded because hashing costs time. */
 const passwordField = z.string().min(1, 'Type your password.').max(200);
 
 export const signInSchema = z.strictObject({ email: emailField, password: passwordField });
 export const forgotPasswordSchema = z.strictObject({ email: emailField });
-export const resetPasswordSchema = z.strictObject({ token: z.string().min(20).max(80), password: newPasswordField });
-export const changePasswordSchema = z.strictObject({ currentPassword: passwordField, newPassword: newPasswordField });
+export const resetPasswordSchema = z.strictObject({
+  token: z.string().min(20).max(80),
+  password: newPasswordField,
+});
+export const changePasswordSchema = z.strictObject({
+  currentPassword: passwordField,
+  newPassword: newPasswordField,
+});
 
 export const accountEndpoints = {
   signIn: endpoint({

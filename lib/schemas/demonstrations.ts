@@ -33,7 +33,11 @@ const shape = {
 };
 export const demonstrationCreateSchema = z.strictObject(shape);
 export type DemonstrationCreate = z.output<typeof demonstrationCreateSchema>;
-export const demonstrationPatchSchema = z.strictObject({ ...shape, isArchived: z.boolean(), version: versionField });
+export const demonstrationPatchSchema = z.strictObject({
+  ...shape,
+  isArchived: z.boolean(),
+  version: versionField,
+});
 export type DemonstrationPatch = z.output<typeof demonstrationPatchSchema>;
 export const demonstrationListQuerySchema = listQuery(['name'], 'name', {});
 export type DemonstrationListQuery = z.output<typeof demonstrationListQuerySchema>;
@@ -51,7 +55,30 @@ export const demonstrationEndpoints = {
       { key: 'outcomeWanted', header: 'Outcome wanted' },
     ],
   }),
-  create: endpoint({ method: 'POST', path: '/api/demonstrations', action: 'recipe:create', summary: 'Save a demonstration', body: demonstrationCreateSchema, response: demonstrationSchema, status: 201 }),
-  read: endpoint({ method: 'GET', path: '/api/demonstrations/{id}', action: 'catalogue:read', summary: 'One demonstration', params: idParams, response: demonstrationSchema }),
-  update: endpoint({ method: 'PATCH', path: '/api/demonstrations/{id}', action: 'recipe:update', summary: 'Change or archive a demonstration', params: idParams, body: demonstrationPatchSchema, response: demonstrationSchema }),
+  create: endpoint({
+    method: 'POST',
+    path: '/api/demonstrations',
+    action: 'recipe:create',
+    summary: 'Save a demonstration',
+    body: demonstrationCreateSchema,
+    response: demonstrationSchema,
+    status: 201,
+  }),
+  read: endpoint({
+    method: 'GET',
+    path: '/api/demonstrations/{id}',
+    action: 'catalogue:read',
+    summary: 'One demonstration',
+    params: idParams,
+    response: demonstrationSchema,
+  }),
+  update: endpoint({
+    method: 'PATCH',
+    path: '/api/demonstrations/{id}',
+    action: 'recipe:update',
+    summary: 'Change or archive a demonstration',
+    params: idParams,
+    body: demonstrationPatchSchema,
+    response: demonstrationSchema,
+  }),
 };

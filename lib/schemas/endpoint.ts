@@ -41,7 +41,11 @@ export function endpoint<const E extends Endpoint>(declaration: E): E {
 
 export type ParamsOf<E> = E extends { readonly params: infer S extends z.ZodType } ? z.output<S> : undefined;
 export type QueryOf<E> = E extends { readonly query: infer S extends z.ZodType } ? z.output<S> : undefined;
-export type QueryInputOf<E> = E extends { readonly query: infer S extends z.ZodType } ? z.input<S> : undefined;
+export type QueryInputOf<E> = E extends { readonly query: infer S extends z.ZodType }
+  ? z.input<S>
+  : undefined;
 export type BodyOf<E> = E extends { readonly body: infer S extends z.ZodType } ? z.output<S> : undefined;
 export type BodyInputOf<E> = E extends { readonly body: infer S extends z.ZodType } ? z.input<S> : undefined;
-export type ResponseOf<E> = E extends { readonly response: infer S extends z.ZodType } ? z.output<S> : undefined;
+export type ResponseOf<E> = E extends { readonly response: infer S extends z.ZodType }
+  ? z.output<S>
+  : undefined;

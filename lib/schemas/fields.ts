@@ -20,9 +20,15 @@ export const newPasswordField = z
   .refine((value) => new TextEncoder().encode(value).length <= 72, 'At most 72 bytes.');
 
 /** Strength in mol/L. Nothing dissolves to more than 40; the strongest stocks sold are below 30. */
-export const molarityField = z.number().positive('Must be more than 0.').max(40, 'No solution is stronger than 40 mol/L.');
+export const molarityField = z
+  .number()
+  .positive('Must be more than 0.')
+  .max(40, 'No solution is stronger than 40 mol/L.');
 /** Volume in mL, from a droplet to a carboy. */
-export const volumeMlField = z.number().min(0.001, 'Must be at least 0.001 mL.').max(100_000, 'At most 100 000 mL.');
+export const volumeMlField = z
+  .number()
+  .min(0.001, 'Must be at least 0.001 mL.')
+  .max(100_000, 'At most 100 000 mL.');
 
 /** What was typed as a number: blank is absent, never zero; a comma counts as the decimal sign. */
 function typedNumber(value: unknown): unknown {

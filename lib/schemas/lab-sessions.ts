@@ -29,12 +29,15 @@ const shape = {
   roomId: idField,
   benches: z.number().int('Whole benches.').min(1, 'At least one bench.').max(60, 'At most 60 benches.'),
 };
-const endsAfterStart = ({ startsAt, endsAt }: { startsAt: string; endsAt: string }) => new Date(endsAt) > new Date(startsAt);
+const endsAfterStart = ({ startsAt, endsAt }: { startsAt: string; endsAt: string }) =>
+  new Date(endsAt) > new Date(startsAt);
 const endRule = { path: ['endsAt'], message: 'It must end after it starts.' };
 
 export const labSessionCreateSchema = z.strictObject(shape).refine(endsAfterStart, endRule);
 export type LabSessionCreate = z.output<typeof labSessionCreateSchema>;
-export const labSessionPatchSchema = z.strictObject({ ...shape, isCancelled: z.boolean(), version: versionField }).refine(endsAfterStart, endRule);
+export const labSessionPatchSchema = z
+  .strictObject({ ...shape, isCancelled: z.boolean(), version: versionField })
+  .refine(endsAfterStart, endRule);
 export type LabSessionPatch = z.output<typeof labSessionPatchSchema>;
 
 export const labSessionListQuerySchema = listQuery(['startsAt', 'course', 'title'], 'startsAt', {
@@ -44,7 +47,14 @@ export const labSessionListQuerySchema = listQuery(['startsAt', 'course', 'title
 });
 export type LabSessionListQuery = z.output<typeof labSessionListQuerySchema>;
 
-export const roomRowSchema = z.object({ id: z.uuid(), name: z.string(), volumeM3: z.number(), airChangesPerHour: z.number(), fumeCupboards: z.number().int(), benches: z.number().int() });
+export const roomRowSchema = z.object({
+  id: z.uuid(),
+  name: z.string(),
+  volumeM3: z.number(),
+  airChangesPerHour: z.number(),
+  fumeCupboards: z.number().int(),
+  benches: z.number().int(),
+});
 export type RoomRow = z.infer<typeof roomRowSchema>;
 
 export const labSessionEndpoints = {
@@ -64,8 +74,37 @@ export const labSessionEndpoints = {
       { key: 'instructorName', header: 'Instructor' },
     ],
   }),
-  create: endpoint({ method: 'POST', path: '/api/lab-sessions', action: 'lab-session:create', summary: 'Make a session', body: labSessionCreateSchema, response: labSessionSchema, status: 201 }),
-  read: endpoint({ method: 'GET', path: '/api/lab-sessions/{id}', action: 'lab-session:read', summary: 'One session', params: idParams, response: labSessionSchema }),
-  update: endpoint({ method: 'PATCH', path: '/api/lab-sessions/{id}', action: 'lab-session:update', summary: 'Change or cancel a session', params: idParams, body: labSessionPatchSchema, response: labSessionSchema }),
-  rooms: endpoint({ method: 'GET', path: '/api/rooms', action: 'place:read', summary: 'Rooms with their air', response: z.object({ items: z.array(roomRowSchema) }) }),
+  create: endpoint({
+    method: 'POST',
+    path: '/api/lab-sessions',
+    action: 'lab-session:create',
+    summary: 'Make a session',
+    body: labSessionCreateSchema,
+    response: labSessionSchema,
+    status: 201,
+  }),
+  read: endpoint({
+    method: 'GET',
+    path: '/api/lab-sessions/{id}',
+    action: 'lab-session:read',
+    summary: 'One session',
+    params: idParams,
+    response: labSessionSchema,
+  }),
+  update: endpoint({
+    method: 'PATCH',
+    path: '/api/lab-sessions/{id}',
+    action: 'lab-session:update',
+    summary: 'Change or cancel a session',
+    params: idParams,
+    body: labSessionPatchSchema,
+    response: labSessionSchema,
+  }),
+  rooms: endpoint({
+    method: 'GET',
+    path: '/api/rooms',
+    action: 'place:read',
+    summary: 'Rooms with their air',
+    response: z.object({ items: z.array(roomRowSchema) }),
+  }),
 };

@@ -18,7 +18,12 @@ export function listQuery<F extends z.ZodRawShape>(
 }
 
 export function pageOf<T extends z.ZodType>(item: T) {
-  return z.object({ items: z.array(item), total: z.number().int(), page: z.number().int(), pageSize: z.number().int() });
+  return z.object({
+    items: z.array(item),
+    total: z.number().int(),
+    page: z.number().int(),
+    pageSize: z.number().int(),
+  });
 }
 
 export interface Page<T> {

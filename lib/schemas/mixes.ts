@@ -16,18 +16,26 @@ const coefficientField = finite.min(-40).max(40);
 const reactionSchema = z.strictObject({
   species: speciesIdField,
   phase: z.enum(['aq', 's', 'g']),
-  stoich: z.record(speciesIdField, coefficientField).refine((stoich) => Object.keys(stoich).length > 0, 'Say what it is formed from.'),
+  stoich: z
+    .record(speciesIdField, coefficientField)
+    .refine((stoich) => Object.keys(stoich).length > 0, 'Say what it is formed from.'),
   logK: finite.min(-200, 'Beyond any constant.').max(200, 'Beyond any constant.'),
 });
 
 export const speciationSchema = z
   .strictObject({
-    volumeL: finite.positive('Must be more than 0.').min(1e-9, 'Less than a nanolitre.').max(10_000, 'At most 10 000 L.').default(1),
+    volumeL: finite
+      .positive('Must be more than 0.')
+      .min(1e-9, 'Less than a nanolitre.')
+      .max(10_000, 'At most 10 000 L.')
+      .default(1),
     amounts: z
       .record(speciesIdField, amountField)
       .refine((amounts) => Object.keys(amounts).length > 0, 'Give at least one amount.')
       .refine((amounts) => Object.keys(amounts).length <= 60, 'At most 60 components.'),
-    reactions: z.union([z.literal('catalogue'), z.array(reactionSchema).max(400, 'At most 400 reactions.')]).default('catalogue'),
+    reactions: z
+      .union([z.literal('catalogue'), z.array(reactionSchema).max(400, 'At most 400 reactions.')])
+      .default('catalogue'),
     pH: finite.min(-2).max(16).nullable().default(null),
     suppress: z.array(speciesIdField).max(200).default([]),
     activity: activityField,
@@ -36,13 +44,17 @@ export const speciationSchema = z
       .discriminatedUnion('kind', [
         z.strictObject({ kind: z.literal('none') }),
         z.strictObject({ kind: z.literal('sealed'), volumeL: finite.positive().max(10_000) }),
-        z.strictObject({ kind: z.literal('open'), partialPressuresBar: z.record(speciesIdField, finite.positive().max(100)) }),
+        z.strictObject({
+          kind: z.literal('open'),
+          partialPressuresBar: z.record(speciesIdField, finite.positive().max(100)),
+        }),
       ])
       .default({ kind: 'none' }),
   })
   .superRefine(({ amounts }, context) => {
     for (const [id, amount] of Object.entries(amounts)) {
-      if (amount < 0 && id !== 'H+') context.addIssue({ code: 'custom', path: ['amounts', id], message: 'Only H+ may be negative.' });
+      if (amount < 0 && id !== 'H+')
+        context.addIssue({ code: 'custom', path: ['amounts', id], message: 'Only H+ may be negative.' });
     }
   });
 export type SpeciationBody = z.output<typeof speciationSchema>;
@@ -55,8 +67,23 @@ export const equilibriumSchema = z.object({
   temperatureC: z.number(),
   pH: z.number().nullable(),
   ionicStrength: z.number(),
-  species: listOf(z.object({ id: z.string(), phase: z.literal('aq'), molarity: z.number(), gamma: z.number(), activity: z.number() })),
-  solids: listOf(z.object({ id: z.string(), moles: z.number(), grams: z.number().nullable(), saturationIndex: z.number() })),
+  species: listOf(
+    z.object({
+      id: z.string(),
+      phase: z.literal('aq'),
+      molarity: z.number(),
+      gamma: z.number(),
+      activity: z.number(),
+    }),
+  ),
+  solids: listOf(
+    z.object({
+      id: z.string(),
+      moles: z.number(),
+      grams: z.number().nullable(),
+      saturationIndex: z.number(),
+    }),
+  ),
   gases: listOf(z.object({ id: z.string(), partialPressureBar: z.number(), moles: z.number() })),
   balances: listOf(z.object({ component: z.string(), total: z.number(), relativeResidual: z.number() })),
   chargeImbalance: z.number(),
@@ -76,7 +103,10 @@ const soluteSchema = z.strictObject({
 export const portionSchema = z.strictObject({
   label: z.string().trim().min(1, 'Give it a label.').max(120),
   solutes: z.array(soluteSchema).max(20, 'At most 20 solutes.'),
-  volumeMl: finite.positive('Must be more than 0 mL.').min(0.001, 'At least 0.001 mL.').max(100_000, 'At most 100 000 mL.'),
+  volumeMl: finite
+    .positive('Must be more than 0 mL.')
+    .min(0.001, 'At least 0.001 mL.')
+    .max(100_000, 'At most 100 000 mL.'),
 });
 
 export const mixPreviewSchema = z.strictObject({
@@ -125,7 +155,17 @@ export const classificationSchema = z.object({
 export const decisionSchema = z.enum(['stop', 'review', 'controlled', 'caution', 'clear']);
 
 const slipSchema = z.object({
-  kind: z.enum(['too-strong', 'doubled', 'swapped', 'reversed', 'left-out', 'wrong-substance', 'wrong-bottle', 'overnight', 'wrong-jar']),
+  kind: z.enum([
+    'too-strong',
+    'doubled',
+    'swapped',
+    'reversed',
+    'left-out',
+    'wrong-substance',
+    'wrong-bottle',
+    'overnight',
+    'wrong-jar',
+  ]),
   sentence: z.string(),
   decision: decisionSchema,
   finding: findingSchema,
@@ -144,7 +184,12 @@ export const mixAnswerSchema = z.object({
   finalVolumeMl: z.number(),
   diluted: listOf(z.object({ substance: z.string(), name: z.string(), molarity: z.number() })),
   steps: listOf(
-    z.object({ afterPortion: z.string(), volumeMl: z.number(), amounts: z.record(z.string(), z.number()), equilibrium: equilibriumSchema }),
+    z.object({
+      afterPortion: z.string(),
+      volumeMl: z.number(),
+      amounts: z.record(z.string(), z.number()),
+      equilibrium: equilibriumSchema,
+    }),
   ),
   equilibrium: equilibriumSchema,
   appearance: z.object({

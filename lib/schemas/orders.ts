@@ -23,7 +23,9 @@ export const shortageRowSchema = z.object({
   orderCode: z.string().nullable(),
 });
 export type ShortageRow = z.infer<typeof shortageRowSchema>;
-export const shortageListQuerySchema = listQuery(['orderBy', 'neededOn', 'state'], 'orderBy', { state: z.enum(SHORTAGE_STATES).optional() });
+export const shortageListQuerySchema = listQuery(['orderBy', 'neededOn', 'state'], 'orderBy', {
+  state: z.enum(SHORTAGE_STATES).optional(),
+});
 export type ShortageListQuery = z.output<typeof shortageListQuerySchema>;
 
 export const proposalSchema = z.object({
@@ -41,7 +43,17 @@ export const proposalSchema = z.object({
       goodsMinor: money,
       extrasMinor: money,
       totalMinor: money,
-      lines: z.array(z.object({ offerId: z.uuid(), substanceName: z.string(), stockNumber: z.string(), packs: z.number().int(), packSize: z.string(), lineTotalMinor: money, reason: z.string() })),
+      lines: z.array(
+        z.object({
+          offerId: z.uuid(),
+          substanceName: z.string(),
+          stockNumber: z.string(),
+          packs: z.number().int(),
+          packSize: z.string(),
+          lineTotalMinor: money,
+          reason: z.string(),
+        }),
+      ),
     }),
   ),
   uncovered: z.array(z.string()),
@@ -87,9 +99,19 @@ export const orderSchema = orderRowSchema.extend({
       reason: z.string().nullable(),
     }),
   ),
-  payment: z.object({ state: z.enum(PAYMENT_STATES), failure: z.string().nullable(), reference: z.string().nullable() }).nullable(),
-  invoices: z.array(z.object({ id: z.uuid(), number: z.string(), amountMinor: money, state: z.enum(INVOICE_STATES) })),
-  sending: z.object({ state: z.string(), attempts: z.number().int(), lastError: z.string().nullable() }).nullable(),
+  payment: z
+    .object({
+      state: z.enum(PAYMENT_STATES),
+      failure: z.string().nullable(),
+      reference: z.string().nullable(),
+    })
+    .nullable(),
+  invoices: z.array(
+    z.object({ id: z.uuid(), number: z.string(), amountMinor: money, state: z.enum(INVOICE_STATES) }),
+  ),
+  sending: z
+    .object({ state: z.string(), attempts: z.number().int(), lastError: z.string().nullable() })
+    .nullable(),
   story: z.array(recordEntrySchema),
   /** Why this person can't approve, send or pay it; null where they can. */
   whyNotApprove: z.string().nullable(),
@@ -97,17 +119,38 @@ export const orderSchema = orderRowSchema.extend({
 export type OrderDetail = z.infer<typeof orderSchema>;
 
 const linesField = z
-  .array(z.strictObject({ offerId: idField, packs: z.number().int('Whole packs.').min(1, 'At least one pack.').max(500, 'At most 500 packs.') }))
+  .array(
+    z.strictObject({
+      offerId: idField,
+      packs: z.number().int('Whole packs.').min(1, 'At least one pack.').max(500, 'At most 500 packs.'),
+    }),
+  )
   .min(1, 'An order needs at least one line.')
   .max(60, 'At most 60 lines.');
 
-export const orderCreateSchema = z.strictObject({ supplierId: idField, budgetId: idField, note: noteField.nullable().default(null), lines: linesField });
+export const orderCreateSchema = z.strictObject({
+  supplierId: idField,
+  budgetId: idField,
+  note: noteField.nullable().default(null),
+  lines: linesField,
+});
 export type OrderCreate = z.output<typeof orderCreateSchema>;
-export const orderPatchSchema = z.strictObject({ budgetId: idField, note: noteField.nullable(), lines: linesField, version: versionField });
+export const orderPatchSchema = z.strictObject({
+  budgetId: idField,
+  note: noteField.nullable(),
+  lines: linesField,
+  version: versionField,
+});
 export type OrderPatch = z.output<typeof orderPatchSchema>;
-export const orderMoveSchema = z.strictObject({ version: versionField, reason: z.string().trim().max(500).default('') });
+export const orderMoveSchema = z.strictObject({
+  version: versionField,
+  reason: z.string().trim().max(500).default(''),
+});
 export type OrderMove = z.output<typeof orderMoveSchema>;
-export const orderRefuseSchema = z.strictObject({ version: versionField, reason: z.string().trim().min(3, 'Say why, in a few words.').max(500) });
+export const orderRefuseSchema = z.strictObject({
+  version: versionField,
+  reason: z.string().trim().min(3, 'Say why, in a few words.').max(500),
+});
 export type OrderRefuse = z.output<typeof orderRefuseSchema>;
 
 export const receiptSchema = z.strictObject({
@@ -121,22 +164,63 @@ export const receiptSchema = z.strictObject({
 });
 export type ReceiptInput = z.output<typeof receiptSchema>;
 
-export const invoiceSchema = z.strictObject({ number: z.string().trim().min(1, 'The number on the invoice.').max(60), amountMinor: z.number().int().min(1).max(100_000_00), version: versionField });
+export const invoiceSchema = z.strictObject({
+  number: z.string().trim().min(1, 'The number on the invoice.').max(60),
+  amountMinor: z.number().int().min(1).max(100_000_00),
+  version: versionField,
+});
 export type InvoiceInput = z.output<typeof invoiceSchema>;
 
-export const orderListQuerySchema = listQuery(['code', 'state', 'totalMinor', 'createdAt'], '-createdAt', { state: z.enum(ORDER_STATES).optional() });
+export const orderListQuerySchema = listQuery(['code', 'state', 'totalMinor', 'createdAt'], '-createdAt', {
+  state: z.enum(ORDER_STATES).optional(),
+});
 export type OrderListQuery = z.output<typeof orderListQuerySchema>;
 
-export const offerRowSchema = z.object({ id: z.uuid(), supplierId: z.uuid(), supplierName: z.string(), substanceId: z.string(), substanceName: z.string(), stockNumber: z.string(), packSize: z.string(), priceMinor: money, leadDays: z.number().int() });
+export const offerRowSchema = z.object({
+  id: z.uuid(),
+  supplierId: z.uuid(),
+  supplierName: z.string(),
+  substanceId: z.string(),
+  substanceName: z.string(),
+  stockNumber: z.string(),
+  packSize: z.string(),
+  priceMinor: money,
+  leadDays: z.number().int(),
+});
 export type OfferRow = z.infer<typeof offerRowSchema>;
-export const offerListQuerySchema = listQuery(['priceMinor', 'stockNumber'], 'priceMinor', { supplierId: idField.optional(), substanceId: z.string().max(80).optional() });
+export const offerListQuerySchema = listQuery(['priceMinor', 'stockNumber'], 'priceMinor', {
+  supplierId: idField.optional(),
+  substanceId: z.string().max(80).optional(),
+});
 export type OfferListQuery = z.output<typeof offerListQuerySchema>;
 
-export const budgetSchema = z.object({ id: z.uuid(), name: z.string(), year: z.number().int(), amountMinor: money, committedMinor: money, spentMinor: money, currency: z.string() });
+export const budgetSchema = z.object({
+  id: z.uuid(),
+  name: z.string(),
+  year: z.number().int(),
+  amountMinor: money,
+  committedMinor: money,
+  spentMinor: money,
+  currency: z.string(),
+});
 export type BudgetRow = z.infer<typeof budgetSchema>;
 
-const move = (verb: string, summary: string, action: 'order:update' | 'order:approve' | 'order:send' | 'order:pay', ownTransaction = false) =>
-  endpoint({ method: 'POST', path: `/api/orders/{id}/${verb}` as const, action, summary, params: idParams, body: orderMoveSchema, response: orderSchema, ownTransaction });
+const move = (
+  verb: string,
+  summary: string,
+  action: 'order:update' | 'order:approve' | 'order:send' | 'order:pay',
+  ownTransaction = false,
+) =>
+  endpoint({
+    method: 'POST',
+    path: `/api/orders/{id}/${verb}` as const,
+    action,
+    summary,
+    params: idParams,
+    body: orderMoveSchema,
+    response: orderSchema,
+    ownTransaction,
+  });
 
 export const orderEndpoints = {
   shortages: endpoint({
@@ -156,7 +240,14 @@ export const orderEndpoints = {
       { key: 'state', header: 'State' },
     ],
   }),
-  proposal: endpoint({ method: 'GET', path: '/api/order-proposal', action: 'order:read', summary: 'The order of least cost for all open shortages', response: proposalSchema, cost: 'heavy' }),
+  proposal: endpoint({
+    method: 'GET',
+    path: '/api/order-proposal',
+    action: 'order:read',
+    summary: 'The order of least cost for all open shortages',
+    response: proposalSchema,
+    cost: 'heavy',
+  }),
   offers: endpoint({
     method: 'GET',
     path: '/api/offers',
@@ -172,7 +263,13 @@ export const orderEndpoints = {
       { key: 'priceMinor', header: 'Price, minor units' },
     ],
   }),
-  budgets: endpoint({ method: 'GET', path: '/api/budgets', action: 'order:read', summary: 'Budgets with what is committed and spent', response: z.object({ items: z.array(budgetSchema) }) }),
+  budgets: endpoint({
+    method: 'GET',
+    path: '/api/budgets',
+    action: 'order:read',
+    summary: 'Budgets with what is committed and spent',
+    response: z.object({ items: z.array(budgetSchema) }),
+  }),
   list: endpoint({
     method: 'GET',
     path: '/api/orders',
@@ -190,16 +287,72 @@ export const orderEndpoints = {
       { key: 'createdAt', header: 'Drafted' },
     ],
   }),
-  create: endpoint({ method: 'POST', path: '/api/orders', action: 'order:draft', summary: 'Draft an order to one supplier', body: orderCreateSchema, response: orderSchema, status: 201 }),
-  read: endpoint({ method: 'GET', path: '/api/orders/{id}', action: 'order:read', summary: 'One order', params: idParams, response: orderSchema }),
-  update: endpoint({ method: 'PATCH', path: '/api/orders/{id}', action: 'order:update', summary: 'Change a draft', params: idParams, body: orderPatchSchema, response: orderSchema }),
+  create: endpoint({
+    method: 'POST',
+    path: '/api/orders',
+    action: 'order:draft',
+    summary: 'Draft an order to one supplier',
+    body: orderCreateSchema,
+    response: orderSchema,
+    status: 201,
+  }),
+  read: endpoint({
+    method: 'GET',
+    path: '/api/orders/{id}',
+    action: 'order:read',
+    summary: 'One order',
+    params: idParams,
+    response: orderSchema,
+  }),
+  update: endpoint({
+    method: 'PATCH',
+    path: '/api/orders/{id}',
+    action: 'order:update',
+    summary: 'Change a draft',
+    params: idParams,
+    body: orderPatchSchema,
+    response: orderSchema,
+  }),
   submit: move('submit', 'Put it up for approval', 'order:update'),
   cancel: move('cancel', 'Cancel it', 'order:update'),
   approve: move('approve', 'Approve it', 'order:approve'),
-  refuse: endpoint({ method: 'POST', path: '/api/orders/{id}/refuse', action: 'order:refuse', summary: 'Refuse it, with a reason', params: idParams, body: orderRefuseSchema, response: orderSchema }),
+  refuse: endpoint({
+    method: 'POST',
+    path: '/api/orders/{id}/refuse',
+    action: 'order:refuse',
+    summary: 'Refuse it, with a reason',
+    params: idParams,
+    body: orderRefuseSchema,
+    response: orderSchema,
+  }),
   send: move('send', 'Send it to the supplier', 'order:send'),
   pay: move('pay', 'Pay it', 'order:pay', true),
-  receive: endpoint({ method: 'POST', path: '/api/orders/{id}/receipts', action: 'order:receive', summary: 'Take packs of a line in as a lot', params: idParams, body: receiptSchema, response: orderSchema, status: 201 }),
-  invoice: endpoint({ method: 'POST', path: '/api/orders/{id}/invoices', action: 'order:receive', summary: 'Enter the invoice and match it', params: idParams, body: invoiceSchema, response: orderSchema, status: 201 }),
-  webhook: endpoint({ method: 'POST', path: '/api/payments/webhook', action: 'webhook:receive', summary: 'Events of the payment service, signed', takes: 'raw', response: z.object({ received: z.boolean() }) }),
+  receive: endpoint({
+    method: 'POST',
+    path: '/api/orders/{id}/receipts',
+    action: 'order:receive',
+    summary: 'Take packs of a line in as a lot',
+    params: idParams,
+    body: receiptSchema,
+    response: orderSchema,
+    status: 201,
+  }),
+  invoice: endpoint({
+    method: 'POST',
+    path: '/api/orders/{id}/invoices',
+    action: 'order:receive',
+    summary: 'Enter the invoice and match it',
+    params: idParams,
+    body: invoiceSchema,
+    response: orderSchema,
+    status: 201,
+  }),
+  webhook: endpoint({
+    method: 'POST',
+    path: '/api/payments/webhook',
+    action: 'webhook:receive',
+    summary: 'Events of the payment service, signed',
+    takes: 'raw',
+    response: z.object({ received: z.boolean() }),
+  }),
 };

@@ -18,9 +18,13 @@ export const outboxItemSchema = z.object({
 });
 export type OutboxItem = z.infer<typeof outboxItemSchema>;
 
-export const outboxListQuerySchema = listQuery(['nextAttemptAt', 'channel', 'state', 'attempts'], '-nextAttemptAt', {
-  state: z.enum(OUTBOX_STATES).optional(),
-});
+export const outboxListQuerySchema = listQuery(
+  ['nextAttemptAt', 'channel', 'state', 'attempts'],
+  '-nextAttemptAt',
+  {
+    state: z.enum(OUTBOX_STATES).optional(),
+  },
+);
 export type OutboxListQuery = z.output<typeof outboxListQuerySchema>;
 
 export const outboxEndpoints = {

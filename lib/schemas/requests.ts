@@ -22,15 +22,33 @@ export const requestLineSchema = z.discriminatedUnion('kind', [
 ]);
 export type RequestLineInput = z.output<typeof requestLineSchema>;
 
-const linesField = z.array(requestLineSchema).min(1, 'Ask for at least one solution or demonstration.').max(40, 'At most 40 lines.');
+const linesField = z
+  .array(requestLineSchema)
+  .min(1, 'Ask for at least one solution or demonstration.')
+  .max(40, 'At most 40 lines.');
 
-export const requestCreateSchema = z.strictObject({ sessionId: idField, note: noteField.nullable(), lines: linesField });
+export const requestCreateSchema = z.strictObject({
+  sessionId: idField,
+  note: noteField.nullable(),
+  lines: linesField,
+});
 export type RequestCreate = z.output<typeof requestCreateSchema>;
-export const requestPatchSchema = z.strictObject({ note: noteField.nullable(), lines: linesField, version: versionField });
+export const requestPatchSchema = z.strictObject({
+  note: noteField.nullable(),
+  lines: linesField,
+  version: versionField,
+});
 export type RequestPatch = z.output<typeof requestPatchSchema>;
-export const planPreviewSchema = z.strictObject({ sessionId: idField, requestId: idField.nullable().default(null), lines: linesField });
+export const planPreviewSchema = z.strictObject({
+  sessionId: idField,
+  requestId: idField.nullable().default(null),
+  lines: linesField,
+});
 export type PlanPreviewBody = z.output<typeof planPreviewSchema>;
-export const requestMoveSchema = z.strictObject({ version: versionField, reason: z.string().trim().max(500).default('') });
+export const requestMoveSchema = z.strictObject({
+  version: versionField,
+  reason: z.string().trim().max(500).default(''),
+});
 export type RequestMove = z.output<typeof requestMoveSchema>;
 
 export const requestRowSchema = z.object({
@@ -57,7 +75,14 @@ export const requestSchema = requestRowSchema.extend({
   planHash: z.string().nullable(),
   /** The frozen plan; null for a draft. */
   plan: z.record(z.string(), z.unknown()).nullable(),
-  review: z.object({ id: z.uuid(), state: z.enum(REVIEW_STATES), decisionText: z.string().nullable(), conditions: z.array(z.string()) }).nullable(),
+  review: z
+    .object({
+      id: z.uuid(),
+      state: z.enum(REVIEW_STATES),
+      decisionText: z.string().nullable(),
+      conditions: z.array(z.string()),
+    })
+    .nullable(),
   story: z.array(recordEntrySchema),
   mayChange: z.boolean(),
 });
@@ -86,10 +111,57 @@ export const requestEndpoints = {
       { key: 'waitsFor', header: 'Waits for' },
     ],
   }),
-  create: endpoint({ method: 'POST', path: '/api/requests', action: 'request:create', summary: 'Draft a request', body: requestCreateSchema, response: requestSchema, status: 201 }),
-  read: endpoint({ method: 'GET', path: '/api/requests/{id}', action: 'request:read', summary: 'One request with its plan', params: idParams, response: requestSchema }),
-  update: endpoint({ method: 'PATCH', path: '/api/requests/{id}', action: 'request:update', summary: 'Change a request; a plan that was judged is computed again', params: idParams, body: requestPatchSchema, response: requestSchema }),
-  submit: endpoint({ method: 'POST', path: '/api/requests/{id}/submit', action: 'request:update', summary: 'Submit: agreed at once, or sent to safety', params: idParams, body: requestMoveSchema, response: requestSchema }),
-  withdraw: endpoint({ method: 'POST', path: '/api/requests/{id}/withdraw', action: 'request:update', summary: 'Withdraw', params: idParams, body: requestMoveSchema, response: requestSchema }),
-  previewPlan: endpoint({ method: 'POST', path: '/api/requests/plan-preview', action: 'request:create', summary: 'The plan of a request that is not saved yet', body: planPreviewSchema, response: z.record(z.string(), z.unknown()), cost: 'heavy' }),
+  create: endpoint({
+    method: 'POST',
+    path: '/api/requests',
+    action: 'request:create',
+    summary: 'Draft a request',
+    body: requestCreateSchema,
+    response: requestSchema,
+    status: 201,
+  }),
+  read: endpoint({
+    method: 'GET',
+    path: '/api/requests/{id}',
+    action: 'request:read',
+    summary: 'One request with its plan',
+    params: idParams,
+    response: requestSchema,
+  }),
+  update: endpoint({
+    method: 'PATCH',
+    path: '/api/requests/{id}',
+    action: 'request:update',
+    summary: 'Change a request; a plan that was judged is computed again',
+    params: idParams,
+    body: requestPatchSchema,
+    response: requestSchema,
+  }),
+  submit: endpoint({
+    method: 'POST',
+    path: '/api/requests/{id}/submit',
+    action: 'request:update',
+    summary: 'Submit: agreed at once, or sent to safety',
+    params: idParams,
+    body: requestMoveSchema,
+    response: requestSchema,
+  }),
+  withdraw: endpoint({
+    method: 'POST',
+    path: '/api/requests/{id}/withdraw',
+    action: 'request:update',
+    summary: 'Withdraw',
+    params: idParams,
+    body: requestMoveSchema,
+    response: requestSchema,
+  }),
+  previewPlan: endpoint({
+    method: 'POST',
+    path: '/api/requests/plan-preview',
+    action: 'request:create',
+    summary: 'The plan of a request that is not saved yet',
+    body: planPreviewSchema,
+    response: z.record(z.string(), z.unknown()),
+    cost: 'heavy',
+  }),
 };

@@ -65,7 +65,9 @@ export const decisionSchema = z.discriminatedUnion('verdict', [
 ]);
 export type ReviewDecision = z.output<typeof decisionSchema>;
 
-export const reviewMessageSchema = z.strictObject({ body: z.string().trim().min(1, 'Write something.').max(4000) });
+export const reviewMessageSchema = z.strictObject({
+  body: z.string().trim().min(1, 'Write something.').max(4000),
+});
 
 export const reviewEndpoints = {
   list: endpoint({

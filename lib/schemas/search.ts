@@ -1,7 +1,16 @@
 import { z } from 'zod';
 import { endpoint } from './endpoint';
 
-export const SEARCH_KINDS = ['substance', 'solution', 'session', 'request', 'batch', 'bottle', 'lot', 'order'] as const;
+export const SEARCH_KINDS = [
+  'substance',
+  'solution',
+  'session',
+  'request',
+  'batch',
+  'bottle',
+  'lot',
+  'order',
+] as const;
 
 export const searchHitSchema = z.object({
   kind: z.enum(SEARCH_KINDS),

@@ -5,7 +5,12 @@ import { idParams, molarityField, nameField, noteField, versionField } from './f
 import { listQuery, pageOf } from './list';
 import { classificationSchema } from './mixes';
 
-const soluteRow = z.object({ substance: z.string(), name: z.string(), formula: z.string(), molarity: z.number() });
+const soluteRow = z.object({
+  substance: z.string(),
+  name: z.string(),
+  formula: z.string(),
+  molarity: z.number(),
+});
 
 export const solutionSchema = z.object({
   id: z.uuid(),
@@ -34,16 +39,27 @@ const shape = {
   storageNote: noteField.nullable(),
   toleranceClass: z.enum(TOLERANCE_CLASSES),
   solutes: z
-    .array(z.strictObject({ substance: z.string().trim().min(1, 'Choose a substance.').max(80), molarity: molarityField }))
+    .array(
+      z.strictObject({
+        substance: z.string().trim().min(1, 'Choose a substance.').max(80),
+        molarity: molarityField,
+      }),
+    )
     .min(1, 'A solution needs at least one solute.')
     .max(12, 'At most 12 solutes.'),
 };
 export const solutionCreateSchema = z.strictObject(shape);
 export type SolutionCreate = z.output<typeof solutionCreateSchema>;
-export const solutionPatchSchema = z.strictObject({ ...shape, isArchived: z.boolean(), version: versionField });
+export const solutionPatchSchema = z.strictObject({
+  ...shape,
+  isArchived: z.boolean(),
+  version: versionField,
+});
 export type SolutionPatch = z.output<typeof solutionPatchSchema>;
 
-export const solutionListQuerySchema = listQuery(['name', 'shelfLifeDays'], 'name', { archived: z.enum(['no', 'yes']).default('no') });
+export const solutionListQuerySchema = listQuery(['name', 'shelfLifeDays'], 'name', {
+  archived: z.enum(['no', 'yes']).default('no'),
+});
 export type SolutionListQuery = z.output<typeof solutionListQuerySchema>;
 
 export const solutionEndpoints = {
@@ -61,7 +77,30 @@ export const solutionEndpoints = {
       { key: 'storageNote', header: 'Storage' },
     ],
   }),
-  create: endpoint({ method: 'POST', path: '/api/solutions', action: 'recipe:create', summary: 'Save a recipe', body: solutionCreateSchema, response: solutionDetailSchema, status: 201 }),
-  read: endpoint({ method: 'GET', path: '/api/solutions/{id}', action: 'catalogue:read', summary: 'One recipe with its label and pH', params: idParams, response: solutionDetailSchema }),
-  update: endpoint({ method: 'PATCH', path: '/api/solutions/{id}', action: 'recipe:update', summary: 'Change or archive a recipe', params: idParams, body: solutionPatchSchema, response: solutionDetailSchema }),
+  create: endpoint({
+    method: 'POST',
+    path: '/api/solutions',
+    action: 'recipe:create',
+    summary: 'Save a recipe',
+    body: solutionCreateSchema,
+    response: solutionDetailSchema,
+    status: 201,
+  }),
+  read: endpoint({
+    method: 'GET',
+    path: '/api/solutions/{id}',
+    action: 'catalogue:read',
+    summary: 'One recipe with its label and pH',
+    params: idParams,
+    response: solutionDetailSchema,
+  }),
+  update: endpoint({
+    method: 'PATCH',
+    path: '/api/solutions/{id}',
+    action: 'recipe:update',
+    summary: 'Change or archive a recipe',
+    params: idParams,
+    body: solutionPatchSchema,
+    response: solutionDetailSchema,
+  }),
 };

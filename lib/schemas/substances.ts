@@ -29,7 +29,11 @@ export const substanceListQuerySchema = listQuery(['name', 'cas', 'formula', 'st
 });
 export type SubstanceListQuery = z.output<typeof substanceListQuerySchema>;
 
-export const holdSchema = z.strictObject({ isHeld: z.boolean(), reason: z.string().trim().min(3, 'Say why, in a few words.').max(500), version: versionField });
+export const holdSchema = z.strictObject({
+  isHeld: z.boolean(),
+  reason: z.string().trim().min(3, 'Say why, in a few words.').max(500),
+  version: versionField,
+});
 export type Hold = z.output<typeof holdSchema>;
 
 export const speciesRowSchema = z.object({
@@ -41,7 +45,9 @@ export const speciesRowSchema = z.object({
   source: z.string(),
 });
 export type SpeciesRow = z.infer<typeof speciesRowSchema>;
-export const speciesListQuerySchema = listQuery(['id', 'name', 'logK'], 'id', { component: z.string().max(20).optional() });
+export const speciesListQuerySchema = listQuery(['id', 'name', 'logK'], 'id', {
+  component: z.string().max(20).optional(),
+});
 export type SpeciesListQuery = z.output<typeof speciesListQuerySchema>;
 
 export const substanceEndpoints = {
@@ -60,8 +66,23 @@ export const substanceEndpoints = {
       { key: 'inStock', header: 'In stock' },
     ],
   }),
-  read: endpoint({ method: 'GET', path: '/api/substances/{id}', action: 'catalogue:read', summary: 'One substance', params: slugParams, response: substanceSchema }),
-  hold: endpoint({ method: 'POST', path: '/api/substances/{id}/hold', action: 'substance:hold', summary: 'Stop use of a substance at once, or lift that', params: slugParams, body: holdSchema, response: substanceSchema }),
+  read: endpoint({
+    method: 'GET',
+    path: '/api/substances/{id}',
+    action: 'catalogue:read',
+    summary: 'One substance',
+    params: slugParams,
+    response: substanceSchema,
+  }),
+  hold: endpoint({
+    method: 'POST',
+    path: '/api/substances/{id}/hold',
+    action: 'substance:hold',
+    summary: 'Stop use of a substance at once, or lift that',
+    params: slugParams,
+    body: holdSchema,
+    response: substanceSchema,
+  }),
   species: endpoint({
     method: 'GET',
     path: '/api/species',

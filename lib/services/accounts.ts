@@ -50,7 +50,10 @@ export async function findViewer(userId: string, sessionVersion: number): Promis
  * @throws DomainError `wrong-password`, the same for an unknown address and a wrong password;
  *   `locked-out` after too many failures
  */
-export async function signIn(email: string, password: string): Promise<{ viewer: Viewer; sessionVersion: number }> {
+export async function signIn(
+  email: string,
+  password: string,
+): Promise<{ viewer: Viewer; sessionVersion: number }> {
   const user = await UserModel.findOne({ where: { email } });
   const refused = new DomainError('wrong-password', 'The e-mail address or the password is not right.');
   if (!user || user.disabledAt) {
@@ -69,7 +72,11 @@ export async function signIn(email: string, password: string): Promise<{ viewer:
 export async function confirmPassword(viewer: Viewer, password: string): Promise<void> {
   const user = await UserModel.findByPk(viewer.id);
   if (!user) throw new DomainError('not-found', 'The account is gone.');
-  await checkPassword(user, password, invalid([{ pointer: '#/password', detail: 'The password is not right.' }]));
+  await checkPassword(
+    user,
+    password,
+    invalid([{ pointer: '#/password', detail: 'The password is not right.' }]),
+  );
 }
 
 /** Counts failures per account. The count is kept by a write of its own, so a refusal does not undo it. */
@@ -77,9 +84,13 @@ async function checkPassword(user: UserModel, password: string, refused: DomainE
   const now = Date.now();
   if (user.lockedUntil && user.lockedUntil.getTime() > now) {
     const retryAfterSeconds = Math.ceil((user.lockedUntil.getTime() - now) / 1000);
-    throw new DomainError('locked-out', `Too many wrong passwords. Try again in ${Math.ceil(retryAfterSeconds / 60)} minutes.`, {
-      retryAfterSeconds,
-    });
+    throw new DomainError(
+      'locked-out',
+      `Too many wrong passwords. Try again in ${Math.ceil(retryAfterSeconds / 60)} minutes.`,
+      {
+        retryAfterSeconds,
+      },
+    );
   }
   if (await bcrypt.compare(password, user.passwordHash)) {
     if (user.failedSignIns > 0) await write(() => user.update({ failedSignIns: 0, lockedUntil: null }));
@@ -90,7 +101,12 @@ async function checkPassword(user: UserModel, password: string, refused: DomainE
     await user.reload();
     if (user.failedSignIns >= FAILURES_BEFORE_LOCK) {
       await user.update({ failedSignIns: 0, lockedUntil: new Date(now + LOCK_MINUTES * 60_000) });
-      await record(null, { subjectType: 'user', subjectId: user.id, subjectLabel: user.email, action: 'locked after wrong passwords' });
+      await record(null, {
+        subjectType: 'user',
+        subjectId: user.id,
+        subjectLabel: user.email,
+        action: 'locked after wrong passwords',
+      });
     }
   });
   throw refused;
@@ -100,7 +116,12 @@ async function checkPassword(user: UserModel, password: string, refused: DomainE
 export async function signOutEverywhere(viewer: Viewer): Promise<void> {
   await write(async () => {
     await UserModel.increment('sessionVersion', { where: { id: viewer.id } });
-    await record(viewer, { subjectType: 'user', subjectId: viewer.id, subjectLabel: viewer.email, action: 'signed out everywhere' });
+    await record(viewer, {
+      subjectType: 'user',
+      subjectId: viewer.id,
+      subjectLabel: viewer.email,
+      action: 'signed out everywhere',
+    });
   });
 }
 
@@ -116,18 +137,30 @@ export async function changePassword(viewer: Viewer, current: string, next: stri
 }
 
 /** Sets a password and ends every session. */
-export async function setPassword(userId: string, password: string, actor: Viewer | null, action: string): Promise<number> {
+export async function setPassword(
+  userId: string,
+  password: string,
+  actor: Viewer | null,
+  action: string,
+): Promise<number> {
   const passwordHash = await hashPassword(password);
   return write(async () => {
     const user = await UserModel.findByPk(userId, { rejectOnEmpty: true });
-    await user.update({ passwordHash, sessionVersion: user.sessionVersion + 1, failedSignIns: 0, lockedUntil: null });
+    await user.update({
+      passwordHash,
+      sessionVersion: user.sessionVersion + 1,
+      failedSignIns: 0,
+      lockedUntil: null,
+    });
     await record(actor, { subjectType: 'user', subjectId: user.id, subjectLabel: user.email, action });
     return user.sessionVersion;
   });
 }
 
 export async function listUsers(_viewer: Viewer, query: UserListQuery): Promise<Page<User>> {
-  const where = query.search ? { [Op.or]: [contains('name', query.search), contains('email', query.search)] } : {};
+  const where = query.search
+    ? { [Op.or]: [contains('name', query.search), contains('email', query.search)] }
+    : {};
   return pageOfRows(UserModel, query, { where, order: orderOf(query.sort) }, present);
 }
 
@@ -141,7 +174,13 @@ export async function createUser(viewer: Viewer, input: UserCreate): Promise<Use
       });
     }
     const user = await UserModel.create({ ...input, roles: unique(input.roles), passwordHash });
-    await record(viewer, { subjectType: 'user', subjectId: user.id, subjectLabel: user.email, action: 'created', detail: { roles: user.roles } });
+    await record(viewer, {
+      subjectType: 'user',
+      subjectId: user.id,
+      subjectLabel: user.email,
+      action: 'created',
+      detail: { roles: user.roles },
+    });
     return present(user);
   });
 }
@@ -152,7 +191,9 @@ export async function updateUser(viewer: Viewer, id: string, patch: UserPatch): 
     const user = await UserModel.findByPk(id);
     if (!user) throw new DomainError('not-found', 'There is no such account.');
     if (user.version !== patch.version) {
-      throw new DomainError('conflict', 'Somebody changed this account meanwhile.', { data: { current: present(user) } });
+      throw new DomainError('conflict', 'Somebody changed this account meanwhile.', {
+        data: { current: present(user) },
+      });
     }
     if (user.id === viewer.id && (patch.isDisabled || !patch.roles.includes('admin'))) {
       throw invalid([{ pointer: '#/roles', detail: 'You cannot take away your own administration.' }]);

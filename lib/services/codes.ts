@@ -7,7 +7,10 @@ const SERIES = { request: 'Q', batch: 'B', order: 'P', lot: 'L', jar: 'W' } as c
 
 /** The next code of a series, such as `B-0042`. Belongs inside a write. */
 export async function nextCode(series: keyof typeof SERIES): Promise<string> {
-  const [counter] = await CounterModel.findOrCreate({ where: { name: series }, defaults: { name: series, value: 0 } });
+  const [counter] = await CounterModel.findOrCreate({
+    where: { name: series },
+    defaults: { name: series, value: 0 },
+  });
   counter.value += 1;
   await counter.save();
   return `${SERIES[series]}-${String(counter.value).padStart(4, '0')}`;

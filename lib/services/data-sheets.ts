@@ -19,13 +19,19 @@ function folder(): string {
 
 /** A PDF starts with its mark and ends with its trailer, wherever it came from. */
 export function looksLikePdf(bytes: Buffer): boolean {
-  return bytes.subarray(0, 5).toString('latin1') === '%PDF-' && bytes.subarray(-1024).toString('latin1').includes('%%EOF');
+  return (
+    bytes.subarray(0, 5).toString('latin1') === '%PDF-' &&
+    bytes.subarray(-1024).toString('latin1').includes('%%EOF')
+  );
 }
 
 /** A name safe to show and to send back: no folders, no control letters, at most 120 long. */
 function safeName(name: string): string {
   const last = name.split(/[\\/]/).at(-1) ?? '';
-  const plain = last.replaceAll(/[\p{Cc}"<>|:*?]/gu, '').trim().slice(0, 120);
+  const plain = last
+    .replaceAll(/[\p{Cc}"<>|:*?]/gu, '')
+    .trim()
+    .slice(0, 120);
   return /\.pdf$/i.test(plain) ? plain : `${plain || 'data-sheet'}.pdf`;
 }
 
@@ -37,14 +43,25 @@ export async function listDataSheets(substanceId: string): Promise<DataSheet[]> 
 }
 
 function present(row: DataSheetModel, uploadedBy: string): DataSheet {
-  return { id: row.id, fileName: row.fileName, sizeBytes: row.sizeBytes, uploadedBy, uploadedAt: row.createdAt.toISOString() };
+  return {
+    id: row.id,
+    fileName: row.fileName,
+    sizeBytes: row.sizeBytes,
+    uploadedBy,
+    uploadedAt: row.createdAt.toISOString(),
+  };
 }
 
 /**
  * Keeps a data sheet under a random name outside the public folder.
  * @throws DomainError `invalid` where the content is no PDF or the substance has too many already
  */
-export async function addDataSheet(viewer: Viewer, substanceId: string, name: string, bytes: Buffer): Promise<DataSheet> {
+export async function addDataSheet(
+  viewer: Viewer,
+  substanceId: string,
+  name: string,
+  bytes: Buffer,
+): Promise<DataSheet> {
   if (!looksLikePdf(bytes)) throw invalid([{ pointer: '#/file', detail: 'This is not a PDF.' }]);
   const storedName = `${randomUUID()}.pdf`;
   await mkdir(folder(), { recursive: true });
@@ -58,8 +75,21 @@ export async function addDataSheet(viewer: Viewer, substanceId: string, name: st
         throw invalid([{ pointer: '#/file', detail: `A substance keeps ${MOST_SHEETS} sheets at most.` }]);
       }
       const sha256 = createHash('sha256').update(bytes).digest('hex');
-      const row = await DataSheetModel.create({ substanceId, fileName: safeName(name), storedName, sizeBytes: bytes.length, sha256, uploadedById: viewer.id });
-      await record(viewer, { subjectType: 'substance', subjectId: substanceId, subjectLabel: substance.name, action: 'data sheet added', detail: { fileName: row.fileName, sha256 } });
+      const row = await DataSheetModel.create({
+        substanceId,
+        fileName: safeName(name),
+        storedName,
+        sizeBytes: bytes.length,
+        sha256,
+        uploadedById: viewer.id,
+      });
+      await record(viewer, {
+        subjectType: 'substance',
+        subjectId: substanceId,
+        subjectLabel: substance.name,
+        action: 'data sheet added',
+        detail: { fileName: row.fileName, sha256 },
+      });
       return present(row, viewer.name);
     });
   } catch (error) {

@@ -10,7 +10,12 @@ import { IdempotencyKeyModel } from '@/models/idempotency-key';
  * @throws DomainError `conflict` where the same key comes with another content
  */
 export async function once<T>(
-  call: { readonly userId: string; readonly endpoint: string; readonly key: string; readonly requestHash: string },
+  call: {
+    readonly userId: string;
+    readonly endpoint: string;
+    readonly key: string;
+    readonly requestHash: string;
+  },
   work: () => Promise<T>,
 ): Promise<T> {
   return write(async () => {
@@ -24,7 +29,14 @@ export async function once<T>(
     }
     const result = await work();
     const responseBody: JsonObject = { result };
-    await IdempotencyKeyModel.create({ userId, endpoint, key, requestHash, responseStatus: 200, responseBody });
+    await IdempotencyKeyModel.create({
+      userId,
+      endpoint,
+      key,
+      requestHash,
+      responseStatus: 200,
+      responseBody,
+    });
     return result;
   });
 }

@@ -5,7 +5,13 @@ import type { WhereOptions } from 'sequelize';
 import { DomainError, invalid } from '@/lib/domain/errors';
 import { authorise } from '@/lib/domain/policy';
 import type { Viewer } from '@/lib/domain/roles';
-import type { LabSession, LabSessionCreate, LabSessionListQuery, LabSessionPatch, RoomRow } from '@/lib/schemas/lab-sessions';
+import type {
+  LabSession,
+  LabSessionCreate,
+  LabSessionListQuery,
+  LabSessionPatch,
+  RoomRow,
+} from '@/lib/schemas/lab-sessions';
 import type { Page } from '@/lib/schemas/list';
 import { write } from '@/models/db';
 import { RequestModel } from '@/models/request';
@@ -21,7 +27,10 @@ import { recomputeRequestsOf } from './request-plans';
 async function present(sessions: readonly SessionModel[]): Promise<LabSession[]> {
   const [rooms, people, requests] = await Promise.all([
     RoomModel.findAll({ where: { id: sessions.map(({ roomId }) => roomId) } }),
-    UserModel.findAll({ where: { id: sessions.map(({ instructorId }) => instructorId) }, attributes: ['id', 'name'] }),
+    UserModel.findAll({
+      where: { id: sessions.map(({ instructorId }) => instructorId) },
+      attributes: ['id', 'name'],
+    }),
     RequestModel.findAll({ where: { sessionId: sessions.map(({ id }) => id) }, order: [['code', 'ASC']] }),
   ]);
   const roomNames = new Map(rooms.map(({ id, name }) => [id, name]));
@@ -39,7 +48,9 @@ async function present(sessions: readonly SessionModel[]): Promise<LabSession[]>
     instructorName: names.get(session.instructorId) ?? '',
     isCancelled: session.cancelledAt !== null,
     version: session.version,
-    requests: requests.filter(({ sessionId }) => sessionId === session.id).map(({ id, code, state }) => ({ id, code, state })),
+    requests: requests
+      .filter(({ sessionId }) => sessionId === session.id)
+      .map(({ id, code, state }) => ({ id, code, state })),
   }));
 }
 
@@ -54,7 +65,8 @@ export async function listLabSessions(viewer: Viewer, query: LabSessionListQuery
   if (query.whose === 'mine') conditions.push({ instructorId: viewer.id });
   if (query.from) conditions.push({ startsAt: { [Op.gte]: new Date(`${query.from}T00:00:00`) } });
   if (query.to) conditions.push({ startsAt: { [Op.lt]: addDays(new Date(`${query.to}T00:00:00`), 1) } });
-  if (query.search) conditions.push({ [Op.or]: [contains('course', query.search), contains('title', query.search)] });
+  if (query.search)
+    conditions.push({ [Op.or]: [contains('course', query.search), contains('title', query.search)] });
   const { rows, count } = await SessionModel.findAndCountAll({
     where: { [Op.and]: conditions },
     order: orderOf(query.sort),
@@ -72,28 +84,55 @@ export async function getLabSession(_viewer: Viewer, id: string): Promise<LabSes
 
 export async function listRooms(): Promise<RoomRow[]> {
   const rooms = await RoomModel.findAll({ order: [['name', 'ASC']] });
-  return rooms.map(({ id, name, volumeM3, airChangesPerHour, fumeCupboards, benches }) => ({ id, name, volumeM3, airChangesPerHour, fumeCupboards, benches }));
+  return rooms.map(({ id, name, volumeM3, airChangesPerHour, fumeCupboards, benches }) => ({
+    id,
+    name,
+    volumeM3,
+    airChangesPerHour,
+    fumeCupboards,
+    benches,
+  }));
 }
 
 async function requireRoom(roomId: string): Promise<void> {
-  if (!(await RoomModel.findByPk(roomId))) throw invalid([{ pointer: '#/roomId', detail: 'There is no such room.' }]);
+  if (!(await RoomModel.findByPk(roomId)))
+    throw invalid([{ pointer: '#/roomId', detail: 'There is no such room.' }]);
 }
 
 export async function createLabSession(viewer: Viewer, input: LabSessionCreate): Promise<LabSession> {
   return write(async () => {
     await requireRoom(input.roomId);
-    const session = await SessionModel.create({ ...input, startsAt: new Date(input.startsAt), endsAt: new Date(input.endsAt), instructorId: viewer.id });
-    await record(viewer, { subjectType: 'session', subjectId: session.id, subjectLabel: `${session.course} ${session.title}`, action: 'created' });
+    const session = await SessionModel.create({
+      ...input,
+      startsAt: new Date(input.startsAt),
+      endsAt: new Date(input.endsAt),
+      instructorId: viewer.id,
+    });
+    await record(viewer, {
+      subjectType: 'session',
+      subjectId: session.id,
+      subjectLabel: `${session.course} ${session.title}`,
+      action: 'created',
+    });
     return presentOne(session);
   });
 }
 
 /** What was planned for the session is computed again: another room or hour has other neighbours and other air. */
-export async function updateLabSession(viewer: Viewer, id: string, patch: LabSessionPatch): Promise<LabSession> {
+export async function updateLabSession(
+  viewer: Viewer,
+  id: string,
+  patch: LabSessionPatch,
+): Promise<LabSession> {
   return write(async () => {
     const session = await SessionModel.findByPk(id);
     if (!session) throw new DomainError('not-found', 'There is no such session.');
-    authorise(viewer, 'lab-session:update', { ownerId: session.instructorId }, 'It is the session of another instructor.');
+    authorise(
+      viewer,
+      'lab-session:update',
+      { ownerId: session.instructorId },
+      'It is the session of another instructor.',
+    );
     if (session.version !== patch.version) refuseStale(session, patch.version, await presentOne(session));
     await requireRoom(patch.roomId);
     const { isCancelled, version, startsAt, endsAt, ...rest } = patch;
@@ -104,7 +143,12 @@ export async function updateLabSession(viewer: Viewer, id: string, patch: LabSes
       cancelledAt: isCancelled ? (session.cancelledAt ?? new Date()) : null,
       version: version + 1,
     });
-    await record(viewer, { subjectType: 'session', subjectId: session.id, subjectLabel: `${session.course} ${session.title}`, action: isCancelled ? 'cancelled' : 'changed' });
+    await record(viewer, {
+      subjectType: 'session',
+      subjectId: session.id,
+      subjectLabel: `${session.course} ${session.title}`,
+      action: isCancelled ? 'cancelled' : 'changed',
+    });
     await recomputeRequestsOf(viewer, session);
     return presentOne(session);
   });

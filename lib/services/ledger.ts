@@ -25,7 +25,8 @@ export interface Move {
  */
 export async function move(viewer: Pick<Viewer, 'id'>, line: Move): Promise<MovementModel> {
   if (!currentTransaction()) throw new TypeError('move() belongs inside write()');
-  if (!Number.isSafeInteger(line.amountMicro) || line.amountMicro === 0) throw new RangeError('A movement moves a whole number of millionths');
+  if (!Number.isSafeInteger(line.amountMicro) || line.amountMicro === 0)
+    throw new RangeError('A movement moves a whole number of millionths');
   const [changed] = await LotModel.update(
     { balanceMicro: literal(`"balanceMicro" + ${line.amountMicro}`) as unknown as number },
     { where: { id: line.lotId, balanceMicro: { [Op.gte]: Math.max(0, -line.amountMicro) } } },
@@ -33,7 +34,10 @@ export async function move(viewer: Pick<Viewer, 'id'>, line: Move): Promise<Move
   const lot = await LotModel.findByPk(line.lotId);
   if (!lot) throw new DomainError('not-found', 'There is no such lot.');
   if (changed === 0) {
-    throw new DomainError('not-enough', `Lot ${lot.code} holds ${fromMicro(lot.balanceMicro)} ${lot.unit}; ${fromMicro(-line.amountMicro)} ${lot.unit} is asked for.`);
+    throw new DomainError(
+      'not-enough',
+      `Lot ${lot.code} holds ${fromMicro(lot.balanceMicro)} ${lot.unit}; ${fromMicro(-line.amountMicro)} ${lot.unit} is asked for.`,
+    );
   }
   return MovementModel.create({ ...line, balanceAfterMicro: lot.balanceMicro, actorId: viewer.id });
 }

@@ -4,7 +4,10 @@ import type { FindAndCountOptions, ModelStatic, Model, Order, WhereOptions } fro
 import type { Page } from '@/lib/schemas/list';
 
 /** Sequelize's order from `name` or `-name`; the id decides between equals, so that pages don't overlap. */
-export function orderOf(sort: string, columns: Readonly<Record<string, string | readonly string[]>> = {}): Order {
+export function orderOf(
+  sort: string,
+  columns: Readonly<Record<string, string | readonly string[]>> = {},
+): Order {
   const isDescending = sort.startsWith('-');
   const name = isDescending ? sort.slice(1) : sort;
   const path = columns[name] ?? name;

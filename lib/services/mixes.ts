@@ -25,14 +25,26 @@ export function computeSpeciation(body: SpeciationBody): EquilibriumState {
   const unknown: FieldError[] = [];
   if (body.reactions === 'catalogue') {
     for (const id of Object.keys(body.amounts)) {
-      if (!isMasterComponent(id)) unknown.push({ pointer: `#/amounts/${escapePointer(id)}`, detail: 'This is not a component of the catalogue.' });
+      if (!isMasterComponent(id))
+        unknown.push({
+          pointer: `#/amounts/${escapePointer(id)}`,
+          detail: 'This is not a component of the catalogue.',
+        });
     }
   } else {
-    const components = new Set([...Object.keys(body.amounts), ...body.reactions.flatMap(({ stoich }) => Object.keys(stoich))]);
+    const components = new Set([
+      ...Object.keys(body.amounts),
+      ...body.reactions.flatMap(({ stoich }) => Object.keys(stoich)),
+    ]);
     const seen = new Set<string>();
     body.reactions.forEach(({ species }, index) => {
-      if (components.has(species)) unknown.push({ pointer: `#/reactions/${index}/species`, detail: 'This species is also a component.' });
-      if (seen.has(species)) unknown.push({ pointer: `#/reactions/${index}/species`, detail: 'This species is formed twice.' });
+      if (components.has(species))
+        unknown.push({
+          pointer: `#/reactions/${index}/species`,
+          detail: 'This species is also a component.',
+        });
+      if (seen.has(species))
+        unknown.push({ pointer: `#/reactions/${index}/species`, detail: 'This species is formed twice.' });
       seen.add(species);
     });
   }
@@ -42,10 +54,23 @@ export function computeSpeciation(body: SpeciationBody): EquilibriumState {
 }
 
 /** @throws DomainError `invalid` for each substance that is not in the catalogue, `not-converged` */
-export function computePreview({ portions, activity, temperatureC, room, slips }: MixPreviewBody): MixPreview {
+export function computePreview({
+  portions,
+  activity,
+  temperatureC,
+  room,
+  slips,
+}: MixPreviewBody): MixPreview {
   const unknown = portions.flatMap(({ solutes }, portion) =>
     solutes.flatMap(({ substance }, index) =>
-      findSubstance(substance) ? [] : [{ pointer: `#/portions/${portion}/solutes/${index}/substance`, detail: 'This substance is not in the catalogue.' }],
+      findSubstance(substance)
+        ? []
+        : [
+            {
+              pointer: `#/portions/${portion}/solutes/${index}/substance`,
+              detail: 'This substance is not in the catalogue.',
+            },
+          ],
     ),
   );
   if (unknown.length > 0) throw invalid(unknown);

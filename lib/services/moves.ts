@@ -2,10 +2,23 @@ import 'server-only';
 import { DomainError } from '@/lib/domain/errors';
 import type { JsonObject } from '@/lib/domain/json';
 import type { Viewer } from '@/lib/domain/roles';
-import { BATCH_MOVES, BOTTLE_MOVES, ORDER_MOVES, REQUEST_MOVES, REVIEW_MOVES, stateWords } from '@/lib/domain/states';
+import {
+  BATCH_MOVES,
+  BOTTLE_MOVES,
+  ORDER_MOVES,
+  REQUEST_MOVES,
+  REVIEW_MOVES,
+  stateWords,
+} from '@/lib/domain/states';
 import { record } from './record';
 
-const MOVES = { request: REQUEST_MOVES, review: REVIEW_MOVES, batch: BATCH_MOVES, bottle: BOTTLE_MOVES, order: ORDER_MOVES };
+const MOVES = {
+  request: REQUEST_MOVES,
+  review: REVIEW_MOVES,
+  batch: BATCH_MOVES,
+  bottle: BOTTLE_MOVES,
+  order: ORDER_MOVES,
+};
 
 /** A row with a state and a version, as all things that move through the house have. */
 interface Stateful<S extends string> {
@@ -29,7 +42,10 @@ export async function changeState<K extends keyof typeof MOVES, S extends keyof 
   const table = MOVES[kind] as unknown as Readonly<Record<string, readonly string[]>>;
   const fromState = row.state;
   if (!table[fromState]?.includes(toState)) {
-    throw new DomainError('wrong-state', `The ${kind} ${about.label} is ${stateWords(fromState)}; it can't become ${stateWords(toState)}.`);
+    throw new DomainError(
+      'wrong-state',
+      `The ${kind} ${about.label} is ${stateWords(fromState)}; it can't become ${stateWords(toState)}.`,
+    );
   }
   row.state = toState;
   row.version += 1;
@@ -49,8 +65,12 @@ export async function changeState<K extends keyof typeof MOVES, S extends keyof 
 /** @throws DomainError `conflict`, carrying the newer row, where somebody changed it meanwhile */
 export function refuseStale(row: { version: number }, version: number, current: unknown): void {
   if (row.version !== version) {
-    throw new DomainError('conflict', 'Somebody changed this meanwhile. What you typed is kept; look at the newer state and try again.', {
-      data: { current },
-    });
+    throw new DomainError(
+      'conflict',
+      'Somebody changed this meanwhile. What you typed is kept; look at the newer state and try again.',
+      {
+        data: { current },
+      },
+    );
   }
 }

@@ -16,21 +16,43 @@ import { releaseShortages } from './orders';
 import { enqueue, enqueueLetter } from './outbox';
 
 /** Another person than the drafter approves, within their limit. */
-export async function approveOrder(viewer: Viewer, id: string, { version, reason }: OrderMove): Promise<OrderDetail> {
+export async function approveOrder(
+  viewer: Viewer,
+  id: string,
+  { version, reason }: OrderMove,
+): Promise<OrderDetail> {
   return write(async () => {
     const order = await loadOrder(id);
-    authorise(viewer, 'order:approve', { ownerId: order.draftedById, totalMinor: order.totalMinor }, whyNotApprove(viewer, order) ?? undefined);
+    authorise(
+      viewer,
+      'order:approve',
+      { ownerId: order.draftedById, totalMinor: order.totalMinor },
+      whyNotApprove(viewer, order) ?? undefined,
+    );
     if (order.version !== version) refuseStale(order, version, await presentOrder(viewer, order));
     order.approvedById = viewer.id;
-    await changeState(viewer, 'order', order, 'approved', { label: order.code, reason: reason || null, detail: { totalMinor: order.totalMinor, limitMinor: viewer.approvalLimitMinor } });
+    await changeState(viewer, 'order', order, 'approved', {
+      label: order.code,
+      reason: reason || null,
+      detail: { totalMinor: order.totalMinor, limitMinor: viewer.approvalLimitMinor },
+    });
     return presentOrder(viewer, order);
   });
 }
 
-export async function refuseOrder(viewer: Viewer, id: string, { version, reason }: OrderRefuse): Promise<OrderDetail> {
+export async function refuseOrder(
+  viewer: Viewer,
+  id: string,
+  { version, reason }: OrderRefuse,
+): Promise<OrderDetail> {
   return write(async () => {
     const order = await loadOrder(id);
-    authorise(viewer, 'order:refuse', { ownerId: order.draftedById }, 'You drafted it; another person must judge it.');
+    authorise(
+      viewer,
+      'order:refuse',
+      { ownerId: order.draftedById },
+      'You drafted it; another person must judge it.',
+    );
     if (order.version !== version) refuseStale(order, version, await presentOrder(viewer, order));
     await changeState(viewer, 'order', order, 'refused', { label: order.code, reason });
     await releaseShortages(order.id);
@@ -45,12 +67,29 @@ export async function refuseOrder(viewer: Viewer, id: string, { version, reason 
 export async function sendOrder(viewer: Viewer, id: string, { version }: OrderMove): Promise<OrderDetail> {
   return write(async () => {
     const order = await loadOrder(id);
-    authorise(viewer, 'order:send', { ownerId: order.draftedById }, 'You drafted it; another person must send it.');
+    authorise(
+      viewer,
+      'order:send',
+      { ownerId: order.draftedById },
+      'You drafted it; another person must send it.',
+    );
     if (order.version !== version) refuseStale(order, version, await presentOrder(viewer, order));
     const supplier = await SupplierModel.findByPk(order.supplierId, { rejectOnEmpty: true });
     if (!supplier.active) throw new DomainError('wrong-state', `${supplier.name} is closed.`);
-    const lines = await OrderLineModel.findAll({ where: { orderId: order.id }, order: [['position', 'ASC']] });
-    const [offers, substances] = await Promise.all([rowsById(OfferModel, lines.map(({ offerId }) => offerId)), rowsById(SubstanceModel, lines.map(({ substanceId }) => substanceId))]);
+    const lines = await OrderLineModel.findAll({
+      where: { orderId: order.id },
+      order: [['position', 'ASC']],
+    });
+    const [offers, substances] = await Promise.all([
+      rowsById(
+        OfferModel,
+        lines.map(({ offerId }) => offerId),
+      ),
+      rowsById(
+        SubstanceModel,
+        lines.map(({ substanceId }) => substanceId),
+      ),
+    ]);
     order.sentAt = new Date();
     await changeState(viewer, 'order', order, 'sent', { label: order.code });
     await enqueue({
@@ -62,7 +101,12 @@ export async function sendOrder(viewer: Viewer, id: string, { version }: OrderMo
         orderId: order.id,
         orderCode: order.code,
         account: supplier.accountCode,
-        lines: lines.map((line) => ({ line: line.id, stockNumber: offers.get(line.offerId)?.stockNumber ?? '', packs: line.packs, priceMinor: line.priceMinor })),
+        lines: lines.map((line) => ({
+          line: line.id,
+          stockNumber: offers.get(line.offerId)?.stockNumber ?? '',
+          packs: line.packs,
+          priceMinor: line.priceMinor,
+        })),
       },
     });
     await enqueueLetter(
@@ -75,7 +119,10 @@ export async function sendOrder(viewer: Viewer, id: string, { version }: OrderMo
           '',
           `please deliver to the Larkmoor College prep room, account ${supplier.accountCode}:`,
           '',
-          ...lines.map((line) => `${line.packs} × ${packSizeOf(line.packMicro, line.unit)} ${substances.get(line.substanceId)?.name ?? ''}, ${offers.get(line.offerId)?.stockNumber ?? ''}, ${(line.priceMinor / 100).toFixed(2)} ${order.currency} each`),
+          ...lines.map(
+            (line) =>
+              `${line.packs} × ${packSizeOf(line.packMicro, line.unit)} ${substances.get(line.substanceId)?.name ?? ''}, ${offers.get(line.offerId)?.stockNumber ?? ''}, ${(line.priceMinor / 100).toFixed(2)} ${order.currency} each`,
+          ),
           '',
           `Goods ${(order.goodsMinor / 100).toFixed(2)}, carriage and surcharges ${(order.surchargeMinor / 100).toFixed(2)}, in all ${(order.totalMinor / 100).toFixed(2)} ${order.currency}.`,
           `The same order goes to your ordering service under ${order.code}; please deliver it once.`,

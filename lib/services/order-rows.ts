@@ -27,8 +27,14 @@ export function packSizeOf(packMicro: number, unit: LedgerUnit): string {
 
 export async function presentOrderRows(orders: readonly OrderModel[]): Promise<OrderRow[]> {
   const [suppliers, people, lines] = await Promise.all([
-    rowsById(SupplierModel, orders.map(({ supplierId }) => supplierId)),
-    rowsById(UserModel, orders.map(({ draftedById }) => draftedById)),
+    rowsById(
+      SupplierModel,
+      orders.map(({ supplierId }) => supplierId),
+    ),
+    rowsById(
+      UserModel,
+      orders.map(({ draftedById }) => draftedById),
+    ),
     OrderLineModel.findAll({ where: { orderId: orders.map(({ id }) => id) }, attributes: ['orderId'] }),
   ]);
   return orders.map((order) => ({
@@ -50,7 +56,8 @@ export async function presentOrderRows(orders: readonly OrderModel[]): Promise<O
 export function whyNotApprove(viewer: Viewer, order: OrderModel): string | null {
   if (!viewer.roles.includes('purchasing')) return 'Only purchasing approves, sends and pays.';
   if (order.draftedById === viewer.id) return 'You drafted it; another person must approve it.';
-  if (!may(viewer, 'order:approve', { ownerId: order.draftedById, totalMinor: order.totalMinor })) return 'It is above your limit; somebody with a higher one must approve it.';
+  if (!may(viewer, 'order:approve', { ownerId: order.draftedById, totalMinor: order.totalMinor }))
+    return 'It is above your limit; somebody with a higher one must approve it.';
   return null;
 }
 
@@ -70,10 +77,21 @@ export async function presentOrder(viewer: Viewer, order: OrderModel): Promise<O
     order.approvedById ? UserModel.findByPk(order.approvedById) : null,
     PaymentModel.findOne({ where: { orderId: order.id }, order: [['createdAt', 'DESC']] }),
     InvoiceModel.findAll({ where: { orderId: order.id }, order: [['createdAt', 'ASC']] }),
-    OutboxMessageModel.findOne({ where: { subjectType: 'order', subjectId: order.id, channel: 'supplier-order' } }),
+    OutboxMessageModel.findOne({
+      where: { subjectType: 'order', subjectId: order.id, channel: 'supplier-order' },
+    }),
     storyOf('order', order.id),
   ]);
-  const [substances, offers] = await Promise.all([rowsById(SubstanceModel, lines.map(({ substanceId }) => substanceId)), rowsById(OfferModel, lines.map(({ offerId }) => offerId))]);
+  const [substances, offers] = await Promise.all([
+    rowsById(
+      SubstanceModel,
+      lines.map(({ substanceId }) => substanceId),
+    ),
+    rowsById(
+      OfferModel,
+      lines.map(({ offerId }) => offerId),
+    ),
+  ]);
   return {
     ...row,
     supplierId: order.supplierId,
@@ -97,9 +115,13 @@ export async function presentOrder(viewer: Viewer, order: OrderModel): Promise<O
       supplierStatus: line.supplierStatus,
       reason: line.reason,
     })),
-    payment: payment ? { state: payment.state, failure: payment.failure, reference: payment.intentReference } : null,
+    payment: payment
+      ? { state: payment.state, failure: payment.failure, reference: payment.intentReference }
+      : null,
     invoices: invoices.map(({ id, number, amountMinor, state }) => ({ id, number, amountMinor, state })),
-    sending: message ? { state: message.state, attempts: message.attempts, lastError: message.lastError } : null,
+    sending: message
+      ? { state: message.state, attempts: message.attempts, lastError: message.lastError }
+      : null,
     story,
     whyNotApprove: whyNotApprove(viewer, order),
   };

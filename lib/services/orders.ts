@@ -4,7 +4,17 @@ import { DomainError, invalid } from '@/lib/domain/errors';
 import type { FieldError } from '@/lib/domain/errors';
 import type { Viewer } from '@/lib/domain/roles';
 import type { Page } from '@/lib/schemas/list';
-import type { BudgetRow, OfferListQuery, OfferRow, OrderCreate, OrderDetail, OrderListQuery, OrderMove, OrderPatch, OrderRow } from '@/lib/schemas/orders';
+import type {
+  BudgetRow,
+  OfferListQuery,
+  OfferRow,
+  OrderCreate,
+  OrderDetail,
+  OrderListQuery,
+  OrderMove,
+  OrderPatch,
+  OrderRow,
+} from '@/lib/schemas/orders';
 import { write } from '@/models/db';
 import { BudgetModel } from '@/models/budget';
 import { OfferModel } from '@/models/offer';
@@ -22,7 +32,10 @@ import { record } from './record';
 
 export async function listOrders(_viewer: Viewer, query: OrderListQuery): Promise<Page<OrderRow>> {
   const { rows, count } = await OrderModel.findAndCountAll({
-    where: { ...(query.state ? { state: query.state } : {}), ...(query.search ? contains('code', query.search) : {}) },
+    where: {
+      ...(query.state ? { state: query.state } : {}),
+      ...(query.search ? contains('code', query.search) : {}),
+    },
     order: orderOf(query.sort),
     limit: query.pageSize,
     offset: (query.page - 1) * query.pageSize,
@@ -35,19 +48,35 @@ export async function getOrder(viewer: Viewer, id: string): Promise<OrderDetail>
 }
 
 export async function listOffers(_viewer: Viewer, query: OfferListQuery): Promise<Page<OfferRow>> {
-  const found = query.search ? await SubstanceModel.findAll({ where: contains('searchText', query.search.toLowerCase()), attributes: ['id'] }) : null;
+  const found = query.search
+    ? await SubstanceModel.findAll({
+        where: contains('searchText', query.search.toLowerCase()),
+        attributes: ['id'],
+      })
+    : null;
   const { rows, count } = await OfferModel.findAndCountAll({
     where: {
       active: true,
       ...(query.supplierId ? { supplierId: query.supplierId } : {}),
       ...(query.substanceId ? { substanceId: query.substanceId } : {}),
-      ...(found ? { [Op.or]: [{ substanceId: found.map(({ id }) => id) }, contains('stockNumber', query.search)] } : {}),
+      ...(found
+        ? { [Op.or]: [{ substanceId: found.map(({ id }) => id) }, contains('stockNumber', query.search)] }
+        : {}),
     },
     order: orderOf(query.sort),
     limit: query.pageSize,
     offset: (query.page - 1) * query.pageSize,
   });
-  const [suppliers, substances] = await Promise.all([rowsById(SupplierModel, rows.map(({ supplierId }) => supplierId)), rowsById(SubstanceModel, rows.map(({ substanceId }) => substanceId))]);
+  const [suppliers, substances] = await Promise.all([
+    rowsById(
+      SupplierModel,
+      rows.map(({ supplierId }) => supplierId),
+    ),
+    rowsById(
+      SubstanceModel,
+      rows.map(({ substanceId }) => substanceId),
+    ),
+  ]);
   const items = rows.map((offer) => ({
     id: offer.id,
     supplierId: offer.supplierId,
@@ -64,24 +93,54 @@ export async function listOffers(_viewer: Viewer, query: OfferListQuery): Promis
 
 /** Budgets with the orders that are promised but not paid, and those that are paid. */
 export async function listBudgets(): Promise<BudgetRow[]> {
-  const budgets = await BudgetModel.findAll({ order: [['year', 'DESC'], ['name', 'ASC']] });
+  const budgets = await BudgetModel.findAll({
+    order: [
+      ['year', 'DESC'],
+      ['name', 'ASC'],
+    ],
+  });
   const orders = await OrderModel.findAll({
-    where: { budgetId: budgets.map(({ id }) => id), state: { [Op.notIn]: ['draft', 'for-approval', 'refused', 'cancelled'] } },
+    where: {
+      budgetId: budgets.map(({ id }) => id),
+      state: { [Op.notIn]: ['draft', 'for-approval', 'refused', 'cancelled'] },
+    },
     attributes: ['budgetId', 'totalMinor', 'paidAt'],
   });
-  const sum = (budgetId: string, isPaid: boolean) => orders.filter((order) => order.budgetId === budgetId && (order.paidAt !== null) === isPaid).reduce((total, { totalMinor }) => total + totalMinor, 0);
-  return budgets.map(({ id, name, year, amountMinor, currency }) => ({ id, name, year, amountMinor, currency, committedMinor: sum(id, false), spentMinor: sum(id, true) }));
+  const sum = (budgetId: string, isPaid: boolean) =>
+    orders
+      .filter((order) => order.budgetId === budgetId && (order.paidAt !== null) === isPaid)
+      .reduce((total, { totalMinor }) => total + totalMinor, 0);
+  return budgets.map(({ id, name, year, amountMinor, currency }) => ({
+    id,
+    name,
+    year,
+    amountMinor,
+    currency,
+    committedMinor: sum(id, false),
+    spentMinor: sum(id, true),
+  }));
 }
 
 interface Priced {
-  readonly rows: readonly { offerId: string; substanceId: string; packs: number; packMicro: number; unit: 'g' | 'mL'; priceMinor: number; lineTotalMinor: number }[];
+  readonly rows: readonly {
+    offerId: string;
+    substanceId: string;
+    packs: number;
+    packMicro: number;
+    unit: 'g' | 'mL';
+    priceMinor: number;
+    lineTotalMinor: number;
+  }[];
   readonly goodsMinor: number;
   readonly surchargeMinor: number;
 }
 
 /** Prices lines at a supplier's present offers. @throws DomainError `invalid` for every line that does not fit */
 async function priceLines(supplier: SupplierModel, lines: OrderCreate['lines']): Promise<Priced> {
-  const offers = await rowsById(OfferModel, lines.map(({ offerId }) => offerId));
+  const offers = await rowsById(
+    OfferModel,
+    lines.map(({ offerId }) => offerId),
+  );
   const errors: FieldError[] = [];
   const seen = new Set<string>();
   let isHazardous = false;
@@ -89,7 +148,8 @@ async function priceLines(supplier: SupplierModel, lines: OrderCreate['lines']):
     const offer = offers.get(offerId);
     const pointer = `#/lines/${index}/offerId`;
     if (!offer || !offer.active) errors.push({ pointer, detail: 'There is no such offer.' });
-    else if (offer.supplierId !== supplier.id) errors.push({ pointer, detail: `${supplier.name} does not offer this.` });
+    else if (offer.supplierId !== supplier.id)
+      errors.push({ pointer, detail: `${supplier.name} does not offer this.` });
     else if (seen.has(offerId)) errors.push({ pointer, detail: 'This offer stands twice.' });
     if (!offer) return [];
     seen.add(offerId);
@@ -100,23 +160,38 @@ async function priceLines(supplier: SupplierModel, lines: OrderCreate['lines']):
   if (errors.length > 0) throw invalid(errors);
   const goodsMinor = rows.reduce((sum, { lineTotalMinor }) => sum + lineTotalMinor, 0);
   if (goodsMinor < supplier.minimumOrderMinor) {
-    throw invalid([{ pointer: '#/lines', detail: `${supplier.name} takes orders from ${(supplier.minimumOrderMinor / 100).toFixed(2)} ${CURRENCY} of goods.` }]);
+    throw invalid([
+      {
+        pointer: '#/lines',
+        detail: `${supplier.name} takes orders from ${(supplier.minimumOrderMinor / 100).toFixed(2)} ${CURRENCY} of goods.`,
+      },
+    ]);
   }
-  return { rows, goodsMinor, surchargeMinor: supplier.carriageMinor + (isHazardous ? supplier.hazardSurchargeMinor : 0) };
+  return {
+    rows,
+    goodsMinor,
+    surchargeMinor: supplier.carriageMinor + (isHazardous ? supplier.hazardSurchargeMinor : 0),
+  };
 }
 
 /** Ties the open shortages of what is ordered to its lines. */
 async function claimShortages(orderId: string): Promise<void> {
   const lines = await OrderLineModel.findAll({ where: { orderId } });
   for (const line of lines) {
-    await ShortageModel.update({ state: 'on-order', orderLineId: line.id }, { where: { substanceId: line.substanceId, state: 'open' } });
+    await ShortageModel.update(
+      { state: 'on-order', orderLineId: line.id },
+      { where: { substanceId: line.substanceId, state: 'open' } },
+    );
   }
 }
 
 /** What an order no longer covers is open again. Belongs inside a write. */
 export async function releaseShortages(orderId: string): Promise<void> {
   const lines = await OrderLineModel.findAll({ where: { orderId }, attributes: ['id'] });
-  await ShortageModel.update({ state: 'open', orderLineId: null }, { where: { orderLineId: lines.map(({ id }) => id), state: 'on-order' } });
+  await ShortageModel.update(
+    { state: 'open', orderLineId: null },
+    { where: { orderLineId: lines.map(({ id }) => id), state: 'on-order' } },
+  );
 }
 
 async function saveLines(orderId: string, { rows }: Priced): Promise<void> {
@@ -127,13 +202,15 @@ async function saveLines(orderId: string, { rows }: Priced): Promise<void> {
 }
 
 async function requireBudget(budgetId: string): Promise<void> {
-  if (!(await BudgetModel.findByPk(budgetId))) throw invalid([{ pointer: '#/budgetId', detail: 'There is no such budget.' }]);
+  if (!(await BudgetModel.findByPk(budgetId)))
+    throw invalid([{ pointer: '#/budgetId', detail: 'There is no such budget.' }]);
 }
 
 export async function createOrder(viewer: Viewer, input: OrderCreate): Promise<OrderDetail> {
   return write(async () => {
     const supplier = await SupplierModel.findByPk(input.supplierId);
-    if (!supplier || !supplier.active) throw invalid([{ pointer: '#/supplierId', detail: 'There is no such supplier.' }]);
+    if (!supplier || !supplier.active)
+      throw invalid([{ pointer: '#/supplierId', detail: 'There is no such supplier.' }]);
     await requireBudget(input.budgetId);
     const priced = await priceLines(supplier, input.lines);
     const order = await OrderModel.create({
@@ -149,7 +226,13 @@ export async function createOrder(viewer: Viewer, input: OrderCreate): Promise<O
       totalMinor: priced.goodsMinor + priced.surchargeMinor,
     });
     await saveLines(order.id, priced);
-    await record(viewer, { subjectType: 'order', subjectId: order.id, subjectLabel: order.code, action: 'draft', toState: 'draft' });
+    await record(viewer, {
+      subjectType: 'order',
+      subjectId: order.id,
+      subjectLabel: order.code,
+      action: 'draft',
+      toState: 'draft',
+    });
     return presentOrder(viewer, order);
   });
 }
@@ -171,26 +254,44 @@ export async function updateOrder(viewer: Viewer, id: string, patch: OrderPatch)
       version: order.version + 1,
     });
     await saveLines(order.id, priced);
-    await record(viewer, { subjectType: 'order', subjectId: order.id, subjectLabel: order.code, action: 'changed' });
+    await record(viewer, {
+      subjectType: 'order',
+      subjectId: order.id,
+      subjectLabel: order.code,
+      action: 'changed',
+    });
     return presentOrder(viewer, order);
   });
 }
 
-export async function submitOrder(viewer: Viewer, id: string, { version, reason }: OrderMove): Promise<OrderDetail> {
+export async function submitOrder(
+  viewer: Viewer,
+  id: string,
+  { version, reason }: OrderMove,
+): Promise<OrderDetail> {
   return write(async () => {
     const order = await loadOrder(id);
     if (order.version !== version) refuseStale(order, version, await presentOrder(viewer, order));
-    await changeState(viewer, 'order', order, 'for-approval', { label: order.code, reason: reason || null, detail: { totalMinor: order.totalMinor } });
+    await changeState(viewer, 'order', order, 'for-approval', {
+      label: order.code,
+      reason: reason || null,
+      detail: { totalMinor: order.totalMinor },
+    });
     return presentOrder(viewer, order);
   });
 }
 
 /** What was short is short again. */
-export async function cancelOrder(viewer: Viewer, id: string, { version, reason }: OrderMove): Promise<OrderDetail> {
+export async function cancelOrder(
+  viewer: Viewer,
+  id: string,
+  { version, reason }: OrderMove,
+): Promise<OrderDetail> {
   return write(async () => {
     const order = await loadOrder(id);
     if (order.version !== version) refuseStale(order, version, await presentOrder(viewer, order));
-    if (order.paidAt) throw new DomainError('wrong-state', 'It is paid; settle that with the supplier first.');
+    if (order.paidAt)
+      throw new DomainError('wrong-state', 'It is paid; settle that with the supplier first.');
     await changeState(viewer, 'order', order, 'cancelled', { label: order.code, reason: reason || null });
     await releaseShortages(order.id);
     return presentOrder(viewer, order);

@@ -46,7 +46,11 @@ export async function enqueue(message: Outgoing): Promise<void> {
 }
 
 /** Queues a letter. */
-export async function enqueueLetter(dedupeKey: string, letter: Letter, subject?: { type: string; id: string }): Promise<void> {
+export async function enqueueLetter(
+  dedupeKey: string,
+  letter: Letter,
+  subject?: { type: string; id: string },
+): Promise<void> {
   await enqueue({
     channel: 'mail',
     dedupeKey,
@@ -62,7 +66,9 @@ async function deliver(message: OutboxMessageModel): Promise<void> {
 }
 
 /** Kept on the global object: the server loads this module once for its start and once for its routes. */
-const shared = globalThis as typeof globalThis & { benchwrightOutbox?: { isServing: boolean; round?: Promise<number> } };
+const shared = globalThis as typeof globalThis & {
+  benchwrightOutbox?: { isServing: boolean; round?: Promise<number> };
+};
 const outbox = (shared.benchwrightOutbox ??= { isServing: false });
 
 /** Sends from now on, at once after each change and every few seconds. Scripts only fill the outbox. */
@@ -108,7 +114,10 @@ async function attempt(message: OutboxMessageModel): Promise<boolean> {
     const attempts = message.attempts + 1;
     const waitSeconds = Math.min(FIRST_WAIT_SECONDS * 2 ** message.attempts, LONGEST_WAIT_SECONDS);
     const lastError = error instanceof Error ? error.message : String(error);
-    log().warn({ outbox: message.id, channel: message.channel, attempts, reason: lastError }, 'outgoing message failed');
+    log().warn(
+      { outbox: message.id, channel: message.channel, attempts, reason: lastError },
+      'outgoing message failed',
+    );
     await write(() =>
       message.update({
         attempts,
@@ -119,7 +128,9 @@ async function attempt(message: OutboxMessageModel): Promise<boolean> {
     );
     return false;
   }
-  await write(() => message.update({ state: 'sent', sentAt: new Date(), attempts: message.attempts + 1, lastError: null }));
+  await write(() =>
+    message.update({ state: 'sent', sentAt: new Date(), attempts: message.attempts + 1, lastError: null }),
+  );
   return true;
 }
 
@@ -134,7 +145,10 @@ function present(message: OutboxMessageModel): OutboxItem {
     lastError,
     subjectType,
     subjectId,
-    summary: channel === 'mail' ? `${payload.subject ?? 'letter'} → ${payload.to ?? ''}` : `Order ${payload.orderCode ?? ''}`,
+    summary:
+      channel === 'mail'
+        ? `${payload.subject ?? 'letter'} → ${payload.to ?? ''}`
+        : `Order ${payload.orderCode ?? ''}`,
     nextAttemptAt: message.nextAttemptAt.toISOString(),
     sentAt: message.sentAt?.toISOString() ?? null,
   };
@@ -155,7 +169,12 @@ export async function resend(viewer: Viewer, id: string): Promise<OutboxItem> {
     if (!message) throw new DomainError('not-found', 'There is no such message.');
     if (message.state === 'sent') throw new DomainError('wrong-state', 'It was already sent.');
     await message.update({ state: 'waiting', attempts: 0, nextAttemptAt: new Date() });
-    await record(viewer, { subjectType: 'outgoing', subjectId: id, subjectLabel: message.dedupeKey, action: 'sent again' });
+    await record(viewer, {
+      subjectType: 'outgoing',
+      subjectId: id,
+      subjectLabel: message.dedupeKey,
+      action: 'sent again',
+    });
     sendSoon();
     return present(message);
   });

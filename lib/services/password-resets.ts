@@ -48,7 +48,9 @@ export async function redeemReset(token: string, password: string): Promise<void
   await write(async () => {
     const reset = await PasswordResetModel.findOne({ where: { tokenHash: hashToken(token) } });
     if (!reset || reset.usedAt || reset.expiresAt.getTime() < Date.now()) {
-      throw invalid([{ pointer: '#/token', detail: 'This address was used or is too old. Ask for a new letter.' }]);
+      throw invalid([
+        { pointer: '#/token', detail: 'This address was used or is too old. Ask for a new letter.' },
+      ]);
     }
     await reset.update({ usedAt: new Date() });
     await setPassword(reset.userId, password, null, 'set a new password by letter');

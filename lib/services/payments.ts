@@ -22,15 +22,35 @@ const PAYABLE = ['approved', 'sent', 'acknowledged', 'part-received', 'received'
 export async function payOrder(viewer: Viewer, id: string, { version }: OrderMove): Promise<OrderDetail> {
   const payment = await write(async () => {
     const order = await loadOrder(id);
-    authorise(viewer, 'order:pay', { ownerId: order.draftedById }, 'You drafted it; another person must pay it.');
+    authorise(
+      viewer,
+      'order:pay',
+      { ownerId: order.draftedById },
+      'You drafted it; another person must pay it.',
+    );
     if (order.paidAt) throw new DomainError('wrong-state', 'It is paid already.');
     if (order.version !== version) refuseStale(order, version, await presentOrder(viewer, order));
-    if (!PAYABLE.includes(order.state)) throw new DomainError('wrong-state', 'Only an approved order can be paid.');
+    if (!PAYABLE.includes(order.state))
+      throw new DomainError('wrong-state', 'Only an approved order can be paid.');
     const pending = await PaymentModel.findOne({ where: { orderId: order.id, state: 'requested' } });
-    return pending ?? PaymentModel.create({ orderId: order.id, amountMinor: order.totalMinor, currency: order.currency, state: 'requested', requestedById: viewer.id });
+    return (
+      pending ??
+      PaymentModel.create({
+        orderId: order.id,
+        amountMinor: order.totalMinor,
+        currency: order.currency,
+        state: 'requested',
+        requestedById: viewer.id,
+      })
+    );
   });
   const order = await loadOrder(id);
-  const outcome = await payNow({ amountMinor: payment.amountMinor, currency: payment.currency, description: `Order ${order.code}`, paymentId: payment.id });
+  const outcome = await payNow({
+    amountMinor: payment.amountMinor,
+    currency: payment.currency,
+    description: `Order ${order.code}`,
+    paymentId: payment.id,
+  });
   await settle(viewer, payment.id, outcome);
   return presentOrder(viewer, await loadOrder(id));
 }
@@ -41,9 +61,15 @@ async function settle(actor: Viewer | null, paymentId: string, outcome: PaymentO
     const payment = await PaymentModel.findByPk(paymentId);
     if (!payment || payment.state === 'succeeded') return;
     const failure = outcome.status === 'failed' ? outcome.failure : null;
-    await payment.update({ state: outcome.status, intentReference: outcome.reference ?? payment.intentReference, failure, version: payment.version + 1 });
+    await payment.update({
+      state: outcome.status,
+      intentReference: outcome.reference ?? payment.intentReference,
+      failure,
+      version: payment.version + 1,
+    });
     const order = await OrderModel.findByPk(payment.orderId, { rejectOnEmpty: true });
-    if (outcome.status === 'succeeded') await order.update({ paidAt: order.paidAt ?? new Date(), version: order.version + 1 });
+    if (outcome.status === 'succeeded')
+      await order.update({ paidAt: order.paidAt ?? new Date(), version: order.version + 1 });
     await record(actor, {
       subjectType: 'order',
       subjectId: order.id,
@@ -62,8 +88,17 @@ export async function receivePaymentEvent(payload: string, signature: string): P
   const intent = event.data.object;
   const paymentId = intent.metadata.payment;
   await write(async () => {
-    const [, isNew] = await WebhookEventModel.findOrCreate({ where: { id: event.id }, defaults: { id: event.id, kind: event.type } });
+    const [, isNew] = await WebhookEventModel.findOrCreate({
+      where: { id: event.id },
+      defaults: { id: event.id, kind: event.type },
+    });
     if (!isNew || !paymentId) return;
-    await settle(null, paymentId, event.type === 'payment_intent.succeeded' ? { status: 'succeeded', reference: intent.id } : { status: 'failed', reference: intent.id, failure: 'The payment was declined.' });
+    await settle(
+      null,
+      paymentId,
+      event.type === 'payment_intent.succeeded'
+        ? { status: 'succeeded', reference: intent.id }
+        : { status: 'failed', reference: intent.id, failure: 'The payment was declined.' },
+    );
   });
 }

@@ -22,7 +22,11 @@ export async function receivePacks(viewer: Viewer, id: string, input: ReceiptInp
   return write(async () => {
     const order = await loadOrder(id);
     if (order.version !== input.version) refuseStale(order, input.version, await presentOrder(viewer, order));
-    if (!RECEIVABLE.includes(order.state)) throw new DomainError('wrong-state', `An order that is ${order.state.replaceAll('-', ' ')} receives nothing.`);
+    if (!RECEIVABLE.includes(order.state))
+      throw new DomainError(
+        'wrong-state',
+        `An order that is ${order.state.replaceAll('-', ' ')} receives nothing.`,
+      );
     const line = await OrderLineModel.findOne({ where: { id: input.lineId, orderId: order.id } });
     const place = await PlaceModel.findByPk(input.placeId);
     const today = formatISO(new Date(), { representation: 'date' });
@@ -30,8 +34,18 @@ export async function receivePacks(viewer: Viewer, id: string, input: ReceiptInp
     const errors = [
       ...(line ? [] : [{ pointer: '#/lineId', detail: 'There is no such line.' }]),
       ...(place ? [] : [{ pointer: '#/placeId', detail: 'There is no such place.' }]),
-      ...(line && input.packs > left ? [{ pointer: '#/packs', detail: left === 0 ? 'All packs of this line have come.' : `Only ${left} packs are still to come.` }] : []),
-      ...(input.expiresOn !== null && input.expiresOn < today ? [{ pointer: '#/expiresOn', detail: 'It has expired already; send it back.' }] : []),
+      ...(line && input.packs > left
+        ? [
+            {
+              pointer: '#/packs',
+              detail:
+                left === 0 ? 'All packs of this line have come.' : `Only ${left} packs are still to come.`,
+            },
+          ]
+        : []),
+      ...(input.expiresOn !== null && input.expiresOn < today
+        ? [{ pointer: '#/expiresOn', detail: 'It has expired already; send it back.' }]
+        : []),
     ];
     if (!line || errors.length > 0) throw invalid(errors);
 
@@ -47,26 +61,60 @@ export async function receivePacks(viewer: Viewer, id: string, input: ReceiptInp
       supplierId: order.supplierId,
       reason: `Received on order ${order.code}`,
     });
-    await ReceiptModel.create({ orderLineId: line.id, lotId: lot.id, packs: input.packs, receivedById: viewer.id });
+    await ReceiptModel.create({
+      orderLineId: line.id,
+      lotId: lot.id,
+      packs: input.packs,
+      receivedById: viewer.id,
+    });
     await line.update({ receivedPacks: line.receivedPacks + input.packs });
     const lines = await OrderLineModel.findAll({ where: { orderId: order.id } });
     const isComplete = lines.every(({ packs, receivedPacks }) => receivedPacks >= packs);
-    await changeState(viewer, 'order', order, isComplete ? 'received' : 'part-received', { label: order.code, reason: `${input.packs} packs of ${substance.name} as lot ${lot.code}` });
-    if (line.receivedPacks >= line.packs) await ShortageModel.update({ state: 'covered' }, { where: { orderLineId: line.id, state: 'on-order' } });
+    await changeState(viewer, 'order', order, isComplete ? 'received' : 'part-received', {
+      label: order.code,
+      reason: `${input.packs} packs of ${substance.name} as lot ${lot.code}`,
+    });
+    if (line.receivedPacks >= line.packs)
+      await ShortageModel.update(
+        { state: 'covered' },
+        { where: { orderLineId: line.id, state: 'on-order' } },
+      );
     return presentOrder(viewer, order);
   });
 }
 
 /** Enters the supplier's invoice and matches it with what was ordered; a received order that matches is closed when paid. */
-export async function enterInvoice(viewer: Viewer, id: string, { number, amountMinor, version }: InvoiceInput): Promise<OrderDetail> {
+export async function enterInvoice(
+  viewer: Viewer,
+  id: string,
+  { number, amountMinor, version }: InvoiceInput,
+): Promise<OrderDetail> {
   return write(async () => {
     const order = await loadOrder(id);
     if (order.version !== version) refuseStale(order, version, await presentOrder(viewer, order));
-    if (await InvoiceModel.findOne({ where: { orderId: order.id, number } })) throw invalid([{ pointer: '#/number', detail: 'This invoice is entered already.' }]);
+    if (await InvoiceModel.findOne({ where: { orderId: order.id, number } }))
+      throw invalid([{ pointer: '#/number', detail: 'This invoice is entered already.' }]);
     const isMatched = amountMinor === order.totalMinor;
-    await InvoiceModel.create({ orderId: order.id, number, amountMinor, currency: order.currency, state: isMatched ? 'matched' : 'disputed' });
-    await record(viewer, { subjectType: 'order', subjectId: order.id, subjectLabel: order.code, action: isMatched ? 'invoice matched' : 'invoice disputed', reason: number, detail: { amountMinor, orderedMinor: order.totalMinor } });
-    if (isMatched && order.state === 'received' && order.paidAt) await changeState(viewer, 'order', order, 'closed', { label: order.code, reason: 'Received, paid and matched' });
+    await InvoiceModel.create({
+      orderId: order.id,
+      number,
+      amountMinor,
+      currency: order.currency,
+      state: isMatched ? 'matched' : 'disputed',
+    });
+    await record(viewer, {
+      subjectType: 'order',
+      subjectId: order.id,
+      subjectLabel: order.code,
+      action: isMatched ? 'invoice matched' : 'invoice disputed',
+      reason: number,
+      detail: { amountMinor, orderedMinor: order.totalMinor },
+    });
+    if (isMatched && order.state === 'received' && order.paidAt)
+      await changeState(viewer, 'order', order, 'closed', {
+        label: order.code,
+        reason: 'Received, paid and matched',
+      });
     else await order.update({ version: order.version + 1 });
     return presentOrder(viewer, order);
   });

@@ -32,13 +32,50 @@ export function canonicalJson(value: unknown): string {
 
 type Hashed = Pick<
   RecordEntryModel,
-  'at' | 'actorId' | 'actorName' | 'subjectType' | 'subjectId' | 'subjectLabel' | 'action' | 'fromState' | 'toState' | 'reason' | 'detail' | 'previousHash'
+  | 'at'
+  | 'actorId'
+  | 'actorName'
+  | 'subjectType'
+  | 'subjectId'
+  | 'subjectLabel'
+  | 'action'
+  | 'fromState'
+  | 'toState'
+  | 'reason'
+  | 'detail'
+  | 'previousHash'
 >;
 
 /** SHA-256 over every field of a line and the hash of the line before. */
 export function hashEntry(entry: Hashed): string {
-  const { at, actorId, actorName, subjectType, subjectId, subjectLabel, action, fromState, toState, reason, detail, previousHash } = entry;
-  const fields = { at, actorId, actorName, subjectType, subjectId, subjectLabel, action, fromState, toState, reason, detail, previousHash };
+  const {
+    at,
+    actorId,
+    actorName,
+    subjectType,
+    subjectId,
+    subjectLabel,
+    action,
+    fromState,
+    toState,
+    reason,
+    detail,
+    previousHash,
+  } = entry;
+  const fields = {
+    at,
+    actorId,
+    actorName,
+    subjectType,
+    subjectId,
+    subjectLabel,
+    action,
+    fromState,
+    toState,
+    reason,
+    detail,
+    previousHash,
+  };
   return createHash('sha256').update(canonicalJson(fields)).digest('hex');
 }
 
@@ -71,7 +108,11 @@ export async function firstBrokenLine(): Promise<number | null> {
   let previousHash = GENESIS;
   let after = 0;
   for (;;) {
-    const lines = await RecordEntryModel.findAll({ where: { seq: { [Op.gt]: after } }, order: [['seq', 'ASC']], limit: 2000 });
+    const lines = await RecordEntryModel.findAll({
+      where: { seq: { [Op.gt]: after } },
+      order: [['seq', 'ASC']],
+      limit: 2000,
+    });
     if (lines.length === 0) return null;
     for (const line of lines) {
       if (line.previousHash !== previousHash || hashEntry(line) !== line.hash) return line.seq;

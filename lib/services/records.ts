@@ -9,8 +9,32 @@ import { contains, pageOfRows } from './lists';
 import { firstBrokenLine } from './record';
 
 function present(entry: RecordEntryModel): RecordEntry {
-  const { seq, at, actorName, subjectType, subjectId, subjectLabel, action, fromState, toState, reason, hash } = entry;
-  return { id: seq, at, actorName, subjectType, subjectId, subjectLabel, action, fromState, toState, reason, hash };
+  const {
+    seq,
+    at,
+    actorName,
+    subjectType,
+    subjectId,
+    subjectLabel,
+    action,
+    fromState,
+    toState,
+    reason,
+    hash,
+  } = entry;
+  return {
+    id: seq,
+    at,
+    actorName,
+    subjectType,
+    subjectId,
+    subjectLabel,
+    action,
+    fromState,
+    toState,
+    reason,
+    hash,
+  };
 }
 
 /** Lines of the record, newest first unless asked otherwise. Times are UTC text, so days compare as text. */
@@ -25,12 +49,21 @@ export async function listRecord(_viewer: Viewer, query: RecordListQuery): Promi
     conditions.push({ [Op.or]: columns.map((column) => contains(column, query.search)) });
   }
   const direction = query.sort === 'at' ? 'ASC' : 'DESC';
-  return pageOfRows(RecordEntryModel, query, { where: { [Op.and]: conditions }, order: [['seq', direction]] }, present);
+  return pageOfRows(
+    RecordEntryModel,
+    query,
+    { where: { [Op.and]: conditions }, order: [['seq', direction]] },
+    present,
+  );
 }
 
 /** The story of one thing, oldest first; part of that thing's own page, so whoever sees it may read it. */
 export async function storyOf(subjectType: string, subjectId: string): Promise<RecordEntry[]> {
-  const lines = await RecordEntryModel.findAll({ where: { subjectType, subjectId }, order: [['seq', 'ASC']], limit: 200 });
+  const lines = await RecordEntryModel.findAll({
+    where: { subjectType, subjectId },
+    order: [['seq', 'ASC']],
+    limit: 200,
+  });
   return lines.map(present);
 }
 

@@ -6,7 +6,16 @@ import type { Viewer } from '@/lib/domain/roles';
 import type { RequestState } from '@/lib/domain/states';
 import type { RequestPlan } from '@/lib/planning/request-plan-types';
 import type { Page } from '@/lib/schemas/list';
-import type { PlanPreviewBody, RequestCreate, RequestDetail, RequestLineInput, RequestListQuery, RequestMove, RequestPatch, RequestRow } from '@/lib/schemas/requests';
+import type {
+  PlanPreviewBody,
+  RequestCreate,
+  RequestDetail,
+  RequestLineInput,
+  RequestListQuery,
+  RequestMove,
+  RequestPatch,
+  RequestRow,
+} from '@/lib/schemas/requests';
 import { write } from '@/models/db';
 import { DemonstrationModel } from '@/models/demonstration';
 import { PlanModel } from '@/models/plan';
@@ -45,7 +54,10 @@ const SUBMITTABLE: readonly RequestState[] = ['draft', 'returned'];
 async function presentRows(requests: readonly RequestModel[]): Promise<RequestRow[]> {
   const [sessions, people, lines] = await Promise.all([
     SessionModel.findAll({ where: { id: requests.map(({ sessionId }) => sessionId) } }),
-    UserModel.findAll({ where: { id: requests.map(({ requesterId }) => requesterId) }, attributes: ['id', 'name'] }),
+    UserModel.findAll({
+      where: { id: requests.map(({ requesterId }) => requesterId) },
+      attributes: ['id', 'name'],
+    }),
     linesOf(requests.map(({ id }) => id)),
   ]);
   const sessionById = new Map(sessions.map((session) => [session.id, session]));
@@ -74,25 +86,46 @@ export async function listRequests(viewer: Viewer, query: RequestListQuery): Pro
     ...(query.state ? { state: query.state } : {}),
     ...(query.search ? contains('code', query.search) : {}),
   };
-  const { rows, count } = await RequestModel.findAndCountAll({ where, order: orderOf(query.sort), limit: query.pageSize, offset: (query.page - 1) * query.pageSize });
+  const { rows, count } = await RequestModel.findAndCountAll({
+    where,
+    order: orderOf(query.sort),
+    limit: query.pageSize,
+    offset: (query.page - 1) * query.pageSize,
+  });
   return { items: await presentRows(rows), total: count, page: query.page, pageSize: query.pageSize };
 }
 
 async function lineNames(lines: readonly RequestLineInput[]): Promise<string[]> {
   const [solutions, demonstrations] = await Promise.all([
-    SolutionModel.findAll({ where: { id: lines.flatMap((line) => (line.kind === 'solution' ? [line.solutionId] : [])) }, attributes: ['id', 'name'] }),
-    DemonstrationModel.findAll({ where: { id: lines.flatMap((line) => (line.kind === 'demonstration' ? [line.demonstrationId] : [])) }, attributes: ['id', 'name'] }),
+    SolutionModel.findAll({
+      where: { id: lines.flatMap((line) => (line.kind === 'solution' ? [line.solutionId] : [])) },
+      attributes: ['id', 'name'],
+    }),
+    DemonstrationModel.findAll({
+      where: { id: lines.flatMap((line) => (line.kind === 'demonstration' ? [line.demonstrationId] : [])) },
+      attributes: ['id', 'name'],
+    }),
   ]);
   const names = new Map([...solutions, ...demonstrations].map(({ id, name }) => [id, name]));
-  return lines.map((line) => names.get(line.kind === 'solution' ? line.solutionId : line.demonstrationId) ?? '');
+  return lines.map(
+    (line) => names.get(line.kind === 'solution' ? line.solutionId : line.demonstrationId) ?? '',
+  );
 }
 
 async function detail(viewer: Viewer, request: RequestModel): Promise<RequestDetail> {
   const [row] = await presentRows([request]);
   if (!row) throw new Error('A request can be presented');
   const lines = (await linesOf([request.id])).get(request.id) ?? [];
-  const plan = request.planHash ? await PlanModel.findOne({ where: { requestId: request.id, hash: request.planHash }, order: [['createdAt', 'DESC']] }) : null;
-  const review = await ReviewModel.findOne({ where: { requestId: request.id }, order: [['createdAt', 'DESC']] });
+  const plan = request.planHash
+    ? await PlanModel.findOne({
+        where: { requestId: request.id, hash: request.planHash },
+        order: [['createdAt', 'DESC']],
+      })
+    : null;
+  const review = await ReviewModel.findOne({
+    where: { requestId: request.id },
+    order: [['createdAt', 'DESC']],
+  });
   return {
     ...row,
     note: request.note,
@@ -101,16 +134,29 @@ async function detail(viewer: Viewer, request: RequestModel): Promise<RequestDet
     decision: plan?.decision ?? null,
     planHash: request.planHash,
     plan: plan?.content ?? null,
-    review: review ? { id: review.id, state: review.state, decisionText: review.decisionText, conditions: review.conditions } : null,
+    review: review
+      ? {
+          id: review.id,
+          state: review.state,
+          decisionText: review.decisionText,
+          conditions: review.conditions,
+        }
+      : null,
     story: await storyOf('request', request.id),
-    mayChange: may(viewer, 'request:update', { ownerId: request.requesterId }) && CHANGEABLE.includes(request.state),
+    mayChange:
+      may(viewer, 'request:update', { ownerId: request.requesterId }) && CHANGEABLE.includes(request.state),
   };
 }
 
 async function loadOwn(viewer: Viewer, id: string): Promise<RequestModel> {
   const request = await RequestModel.findByPk(id);
   if (!request) throw new DomainError('not-found', 'There is no such request.');
-  authorise(viewer, 'request:update', { ownerId: request.requesterId }, 'It is the request of another instructor.');
+  authorise(
+    viewer,
+    'request:update',
+    { ownerId: request.requesterId },
+    'It is the request of another instructor.',
+  );
   return request;
 }
 
@@ -130,8 +176,14 @@ export async function createRequest(viewer: Viewer, input: RequestCreate): Promi
   return write(async () => {
     const session = await SessionModel.findByPk(input.sessionId);
     if (!session) throw invalid([{ pointer: '#/sessionId', detail: 'There is no such session.' }]);
-    if (session.cancelledAt) throw invalid([{ pointer: '#/sessionId', detail: 'This session is cancelled.' }]);
-    authorise(viewer, 'request:create', { ownerId: session.instructorId }, 'It is the session of another instructor.');
+    if (session.cancelledAt)
+      throw invalid([{ pointer: '#/sessionId', detail: 'This session is cancelled.' }]);
+    authorise(
+      viewer,
+      'request:create',
+      { ownerId: session.instructorId },
+      'It is the session of another instructor.',
+    );
     await computePlan(input.sessionId, input.lines, null);
     const request = await RequestModel.create({
       code: await nextCode('request'),
@@ -142,7 +194,13 @@ export async function createRequest(viewer: Viewer, input: RequestCreate): Promi
       planHash: null,
     });
     await saveLines(request.id, input.lines);
-    await record(viewer, { subjectType: 'request', subjectId: request.id, subjectLabel: request.code, action: 'draft', toState: 'draft' });
+    await record(viewer, {
+      subjectType: 'request',
+      subjectId: request.id,
+      subjectLabel: request.code,
+      action: 'draft',
+      toState: 'draft',
+    });
     return detail(viewer, request);
   });
 }
@@ -152,26 +210,47 @@ export async function updateRequest(viewer: Viewer, id: string, patch: RequestPa
   return write(async () => {
     const request = await loadOwn(viewer, id);
     if (request.version !== patch.version) refuseStale(request, patch.version, await detail(viewer, request));
-    if (!CHANGEABLE.includes(request.state)) throw new DomainError('wrong-state', `The request is ${request.state.replaceAll('-', ' ')}; its lines stand.`);
+    if (!CHANGEABLE.includes(request.state))
+      throw new DomainError(
+        'wrong-state',
+        `The request is ${request.state.replaceAll('-', ' ')}; its lines stand.`,
+      );
     await computePlan(request.sessionId, patch.lines, request.id);
     await request.update({ note: patch.note, version: request.version + 1 });
     await saveLines(request.id, patch.lines);
-    await record(viewer, { subjectType: 'request', subjectId: request.id, subjectLabel: request.code, action: 'changed' });
+    await record(viewer, {
+      subjectType: 'request',
+      subjectId: request.id,
+      subjectLabel: request.code,
+      action: 'changed',
+    });
     if (request.state === 'in-review' || request.state === 'agreed') {
       await lapseReviews(viewer, request, 'its request changed');
-      await changeState(viewer, 'request', request, 'asked', { label: request.code, reason: 'the request changed' });
+      await changeState(viewer, 'request', request, 'asked', {
+        label: request.code,
+        reason: 'the request changed',
+      });
       await judge(viewer, request);
     }
     return detail(viewer, request);
   });
 }
 
-export async function submitRequest(viewer: Viewer, id: string, { version, reason }: RequestMove): Promise<RequestDetail> {
+export async function submitRequest(
+  viewer: Viewer,
+  id: string,
+  { version, reason }: RequestMove,
+): Promise<RequestDetail> {
   return write(async () => {
     const request = await loadOwn(viewer, id);
     if (request.version !== version) refuseStale(request, version, await detail(viewer, request));
-    if (!SUBMITTABLE.includes(request.state)) throw new DomainError('wrong-state', `The request is ${request.state.replaceAll('-', ' ')}; it was submitted already.`);
-    if (request.state === 'returned') await lapseReviews(viewer, request, 'it was answered and submitted again');
+    if (!SUBMITTABLE.includes(request.state))
+      throw new DomainError(
+        'wrong-state',
+        `The request is ${request.state.replaceAll('-', ' ')}; it was submitted already.`,
+      );
+    if (request.state === 'returned')
+      await lapseReviews(viewer, request, 'it was answered and submitted again');
     request.submittedAt = new Date();
     await changeState(viewer, 'request', request, 'asked', { label: request.code, reason: reason || null });
     await judge(viewer, request);
@@ -179,18 +258,28 @@ export async function submitRequest(viewer: Viewer, id: string, { version, reaso
   });
 }
 
-export async function withdrawRequest(viewer: Viewer, id: string, { version, reason }: RequestMove): Promise<RequestDetail> {
+export async function withdrawRequest(
+  viewer: Viewer,
+  id: string,
+  { version, reason }: RequestMove,
+): Promise<RequestDetail> {
   return write(async () => {
     const request = await loadOwn(viewer, id);
     if (request.version !== version) refuseStale(request, version, await detail(viewer, request));
     request.closedAt = new Date();
-    await changeState(viewer, 'request', request, 'withdrawn', { label: request.code, reason: reason || null });
+    await changeState(viewer, 'request', request, 'withdrawn', {
+      label: request.code,
+      reason: reason || null,
+    });
     await lapseReviews(viewer, request, 'its request was withdrawn');
     return detail(viewer, request);
   });
 }
 
 /** The plan while it is still being typed; nothing is kept. */
-export async function previewPlan(_viewer: Viewer, { sessionId, requestId, lines }: PlanPreviewBody): Promise<RequestPlan> {
+export async function previewPlan(
+  _viewer: Viewer,
+  { sessionId, requestId, lines }: PlanPreviewBody,
+): Promise<RequestPlan> {
   return computePlan(sessionId, lines, requestId);
 }

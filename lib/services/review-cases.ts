@@ -18,28 +18,46 @@ import { storyOf } from './records';
 const EARLIER_CASES = 10;
 
 /** Rows keyed by id, read in one go. */
-async function byId<M extends { id: string }>(find: (ids: string[]) => Promise<M[]>, ids: readonly (string | null)[]): Promise<Map<string, M>> {
+async function byId<M extends { id: string }>(
+  find: (ids: string[]) => Promise<M[]>,
+  ids: readonly (string | null)[],
+): Promise<Map<string, M>> {
   const wanted = [...new Set(ids.filter((id): id is string => id !== null))];
   return new Map((await find(wanted)).map((row) => [row.id, row]));
 }
 
 /** Queue lines for reviews, with what they are about. */
 async function presentRows(reviews: readonly ReviewModel[]): Promise<ReviewRow[]> {
-  const requests = await byId((id) => RequestModel.findAll({ where: { id } }), reviews.map(({ requestId }) => requestId));
-  const sessions = await byId((id) => SessionModel.findAll({ where: { id } }), [...requests.values()].map(({ sessionId }) => sessionId));
+  const requests = await byId(
+    (id) => RequestModel.findAll({ where: { id } }),
+    reviews.map(({ requestId }) => requestId),
+  );
+  const sessions = await byId(
+    (id) => SessionModel.findAll({ where: { id } }),
+    [...requests.values()].map(({ sessionId }) => sessionId),
+  );
   const people = await byId(
     (id) => UserModel.findAll({ where: { id } }),
-    [...reviews.map(({ reviewerId }) => reviewerId), ...[...requests.values()].map(({ requesterId }) => requesterId)],
+    [
+      ...reviews.map(({ reviewerId }) => reviewerId),
+      ...[...requests.values()].map(({ requesterId }) => requesterId),
+    ],
   );
-  const plans = await byId((id) => PlanModel.findAll({ where: { id }, attributes: ['id', 'decision'] }), reviews.map(({ planId }) => planId));
-  const gravest = await FindingModel.findAll({ where: { planId: reviews.map(({ planId }) => planId), position: 0 } });
+  const plans = await byId(
+    (id) => PlanModel.findAll({ where: { id }, attributes: ['id', 'decision'] }),
+    reviews.map(({ planId }) => planId),
+  );
+  const gravest = await FindingModel.findAll({
+    where: { planId: reviews.map(({ planId }) => planId), position: 0 },
+  });
   const headlines = new Map(gravest.map(({ planId, title }) => [planId, title]));
 
   return reviews.map((review) => {
     const request = requests.get(review.requestId);
     const session = request && sessions.get(request.sessionId);
     const plan = plans.get(review.planId);
-    if (!request || !session || !plan) throw new Error(`Review ${review.id} lost its request, session or plan`);
+    if (!request || !session || !plan)
+      throw new Error(`Review ${review.id} lost its request, session or plan`);
     return {
       id: review.id,
       state: review.state,
@@ -61,26 +79,51 @@ async function presentRows(reviews: readonly ReviewModel[]): Promise<ReviewRow[]
 /** The officers' queue: the gravest first, the oldest of those first. */
 export async function listReviews(_viewer: Viewer, query: ReviewListQuery): Promise<Page<ReviewRow>> {
   const requestIds = query.search
-    ? (await RequestModel.findAll({ where: { code: { [Op.like]: `%${query.search.replaceAll(/[\\%]/g, '_')}%` } }, attributes: ['id'] })).map(({ id }) => id)
+    ? (
+        await RequestModel.findAll({
+          where: { code: { [Op.like]: `%${query.search.replaceAll(/[\\%]/g, '_')}%` } },
+          attributes: ['id'],
+        })
+      ).map(({ id }) => id)
     : undefined;
-  const where = { ...(query.state ? { state: query.state } : {}), ...(requestIds ? { requestId: requestIds } : {}) };
+  const where = {
+    ...(query.state ? { state: query.state } : {}),
+    ...(requestIds ? { requestId: requestIds } : {}),
+  };
   const columns = { openedAt: 'createdAt' };
-  const order = query.sort === 'gravity' ? [['gravity', 'ASC'] as [string, string], ['createdAt', 'ASC'] as [string, string]] : orderOf(query.sort, columns);
-  const { rows, count } = await ReviewModel.findAndCountAll({ where, order, limit: query.pageSize, offset: (query.page - 1) * query.pageSize });
+  const order =
+    query.sort === 'gravity'
+      ? [['gravity', 'ASC'] as [string, string], ['createdAt', 'ASC'] as [string, string]]
+      : orderOf(query.sort, columns);
+  const { rows, count } = await ReviewModel.findAndCountAll({
+    where,
+    order,
+    limit: query.pageSize,
+    offset: (query.page - 1) * query.pageSize,
+  });
   return { items: await presentRows(rows), total: count, page: query.page, pageSize: query.pageSize };
 }
 
 /** Why this person can't agree this case, in words; null where they can. */
-export function whyNotAgree(viewer: Viewer, review: ReviewModel, plan: PlanModel, request: RequestModel): string | null {
+export function whyNotAgree(
+  viewer: Viewer,
+  review: ReviewModel,
+  plan: PlanModel,
+  request: RequestModel,
+): string | null {
   if (review.state !== 'waiting') return 'It is already judged or has lapsed.';
-  if (plan.decision === 'stop') return 'A finding says stop. Nobody can agree that here; the request has to change.';
+  if (plan.decision === 'stop')
+    return 'A finding says stop. Nobody can agree that here; the request has to change.';
   if (!viewer.roles.includes('safety')) return 'Only a safety officer can agree.';
-  if (request.requesterId === viewer.id) return 'It is your own request; another safety officer must judge it.';
+  if (request.requesterId === viewer.id)
+    return 'It is your own request; another safety officer must judge it.';
   return null;
 }
 
 /** @throws DomainError `not-found` */
-export async function loadReview(id: string): Promise<{ review: ReviewModel; request: RequestModel; plan: PlanModel }> {
+export async function loadReview(
+  id: string,
+): Promise<{ review: ReviewModel; request: RequestModel; plan: PlanModel }> {
   const review = await ReviewModel.findByPk(id);
   if (!review) throw new DomainError('not-found', 'There is no such review.');
   const [request, plan] = await Promise.all([
@@ -94,7 +137,10 @@ export async function loadReview(id: string): Promise<{ review: ReviewModel; req
 async function earlierCases(review: ReviewModel): Promise<ReviewRow[]> {
   const gravest = await FindingModel.findOne({ where: { planId: review.planId, position: 0 } });
   if (!gravest) return [];
-  const alike = await FindingModel.findAll({ where: { rule: gravest.rule, position: 0, planId: { [Op.ne]: review.planId } }, attributes: ['planId'] });
+  const alike = await FindingModel.findAll({
+    where: { rule: gravest.rule, position: 0, planId: { [Op.ne]: review.planId } },
+    attributes: ['planId'],
+  });
   const reviews = await ReviewModel.findAll({
     where: { planId: alike.map(({ planId }) => planId), decidedAt: { [Op.ne]: null } },
     order: [['decidedAt', 'DESC']],
@@ -108,8 +154,14 @@ export async function getReview(viewer: Viewer, id: string): Promise<ReviewCase>
   const { review, request, plan } = await loadReview(id);
   const [row] = await presentRows([review]);
   if (!row) throw new Error(`Review ${id} can't be presented`);
-  const messages = await ReviewMessageModel.findAll({ where: { reviewId: id }, order: [['createdAt', 'ASC']] });
-  const authors = await byId((ids) => UserModel.findAll({ where: { id: ids } }), messages.map(({ authorId }) => authorId));
+  const messages = await ReviewMessageModel.findAll({
+    where: { reviewId: id },
+    order: [['createdAt', 'ASC']],
+  });
+  const authors = await byId(
+    (ids) => UserModel.findAll({ where: { id: ids } }),
+    messages.map(({ authorId }) => authorId),
+  );
   return {
     ...row,
     version: review.version,

@@ -30,16 +30,27 @@ const REQUEST_AFTER: Readonly<Record<ReviewDecision['verdict'], RequestState>> =
  * @throws DomainError `invalid` for a wrong password, `forbidden` for one's own request or a stop,
  *   `conflict` where the case changed meanwhile, `wrong-state` where it is already judged
  */
-export async function decideReview(viewer: Viewer, id: string, decision: ReviewDecision): Promise<ReviewCase> {
+export async function decideReview(
+  viewer: Viewer,
+  id: string,
+  decision: ReviewDecision,
+): Promise<ReviewCase> {
   const { request: before } = await loadReview(id);
-  authorise(viewer, 'review:decide', { ownerId: before.requesterId }, 'It is your own request; another safety officer must judge it.');
+  authorise(
+    viewer,
+    'review:decide',
+    { ownerId: before.requesterId },
+    'It is your own request; another safety officer must judge it.',
+  );
   await confirmPassword(viewer, decision.password);
   await write(async () => {
     const { review, request, plan } = await loadReview(id);
-    if (review.version !== decision.version) refuseStale(review, decision.version, await getReview(viewer, id));
+    if (review.version !== decision.version)
+      refuseStale(review, decision.version, await getReview(viewer, id));
     const isAgreement = decision.verdict === 'agreed' || decision.verdict === 'agreed-with-conditions';
     const obstacle = whyNotAgree(viewer, review, plan, request);
-    if (isAgreement && obstacle) throw new DomainError(plan.decision === 'stop' ? 'forbidden' : 'wrong-state', obstacle);
+    if (isAgreement && obstacle)
+      throw new DomainError(plan.decision === 'stop' ? 'forbidden' : 'wrong-state', obstacle);
     if (isAgreement && request.planHash !== review.planHash) {
       throw new DomainError('conflict', 'The plan changed after this review was opened.');
     }
@@ -67,7 +78,13 @@ export async function decideReview(viewer: Viewer, id: string, decision: ReviewD
   return getReview(viewer, id);
 }
 
-async function tellRequester(requesterId: string, requestId: string, code: string, reviewId: string, decision: ReviewDecision): Promise<void> {
+async function tellRequester(
+  requesterId: string,
+  requestId: string,
+  code: string,
+  reviewId: string,
+  decision: ReviewDecision,
+): Promise<void> {
   const requester = await UserModel.findByPk(requesterId, { rejectOnEmpty: true });
   const outcome = {
     agreed: 'was agreed',
@@ -75,13 +92,22 @@ async function tellRequester(requesterId: string, requestId: string, code: strin
     returned: 'came back with a question',
     refused: 'was refused',
   }[decision.verdict];
-  const conditions = decision.verdict === 'agreed-with-conditions' ? decision.conditions.map((line) => `- ${line}`) : [];
+  const conditions =
+    decision.verdict === 'agreed-with-conditions' ? decision.conditions.map((line) => `- ${line}`) : [];
   await enqueueLetter(
     `review:${reviewId}:${decision.verdict}`,
     {
       to: requester.email,
       subject: `Request ${code} ${outcome}`,
-      text: [`${requester.name},`, '', `your request ${code} ${outcome} by the safety officer.`, decision.text, ...conditions, '', `${environment().BASE_URL}/requests/${requestId}`].join('\n'),
+      text: [
+        `${requester.name},`,
+        '',
+        `your request ${code} ${outcome} by the safety officer.`,
+        decision.text,
+        ...conditions,
+        '',
+        `${environment().BASE_URL}/requests/${requestId}`,
+      ].join('\n'),
     },
     { type: 'review', id: reviewId },
   );
@@ -93,7 +119,12 @@ export async function sayInReview(viewer: Viewer, id: string, body: string): Pro
     const { review, request } = await loadReview(id);
     authorise(viewer, 'review:answer', { ownerId: request.requesterId });
     await ReviewMessageModel.create({ reviewId: review.id, authorId: viewer.id, body });
-    await record(viewer, { subjectType: 'review', subjectId: review.id, subjectLabel: request.code, action: 'message' });
+    await record(viewer, {
+      subjectType: 'review',
+      subjectId: review.id,
+      subjectLabel: request.code,
+      action: 'message',
+    });
   });
   return getReview(viewer, id);
 }

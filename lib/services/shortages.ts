@@ -28,11 +28,23 @@ export async function listShortages(_viewer: Viewer, query: ShortageListQuery): 
     offset: (query.page - 1) * query.pageSize,
   });
   const [substances, requests, lines] = await Promise.all([
-    rowsById(SubstanceModel, rows.map(({ substanceId }) => substanceId)),
-    rowsById(RequestModel, rows.map(({ requestId }) => requestId)),
-    rowsById(OrderLineModel, rows.map(({ orderLineId }) => orderLineId)),
+    rowsById(
+      SubstanceModel,
+      rows.map(({ substanceId }) => substanceId),
+    ),
+    rowsById(
+      RequestModel,
+      rows.map(({ requestId }) => requestId),
+    ),
+    rowsById(
+      OrderLineModel,
+      rows.map(({ orderLineId }) => orderLineId),
+    ),
   ]);
-  const orders = await rowsById(OrderModel, [...lines.values()].map(({ orderId }) => orderId));
+  const orders = await rowsById(
+    OrderModel,
+    [...lines.values()].map(({ orderId }) => orderId),
+  );
   const items = rows.map((row) => {
     const line = row.orderLineId ? lines.get(row.orderLineId) : undefined;
     const order = line ? orders.get(line.orderId) : undefined;
@@ -55,7 +67,10 @@ export async function listShortages(_viewer: Viewer, query: ShortageListQuery): 
 }
 
 /** Open shortages in the unit their packs are sold in, one need per substance. */
-function needsOf(shortages: readonly ShortageModel[], unitOf: (substanceId: string) => 'g' | 'mL' | undefined): OrderNeed[] {
+function needsOf(
+  shortages: readonly ShortageModel[],
+  unitOf: (substanceId: string) => 'g' | 'mL' | undefined,
+): OrderNeed[] {
   const bySubstance = new Map<string, OrderNeed>();
   for (const shortage of shortages) {
     const unit = unitOf(shortage.substanceId) ?? shortage.unit;
@@ -63,7 +78,11 @@ function needsOf(shortages: readonly ShortageModel[], unitOf: (substanceId: stri
     const factor = unit === shortage.unit ? 1 : unit === 'mL' ? 1 / density : density;
     const use = { onDay: shortage.neededOn, amountMicro: Math.ceil(shortage.neededMicro * factor) };
     const before = bySubstance.get(shortage.substanceId);
-    bySubstance.set(shortage.substanceId, { substanceId: shortage.substanceId, unit, uses: [...(before?.uses ?? []), use] });
+    bySubstance.set(shortage.substanceId, {
+      substanceId: shortage.substanceId,
+      unit,
+      uses: [...(before?.uses ?? []), use],
+    });
   }
   return [...bySubstance.values()];
 }
@@ -71,9 +90,22 @@ function needsOf(shortages: readonly ShortageModel[], unitOf: (substanceId: stri
 /** The order of least cost for everything that is short, beside what buying each at its best unit price would cost. */
 export async function proposeOrders(_viewer: Viewer): Promise<Proposal> {
   const shortages = await ShortageModel.findAll({ where: { state: 'open' } });
-  const nothing: Proposal = { status: 'nothing-short', message: 'Nothing is short.', currency: CURRENCY, totalMinor: 0, naiveMinor: null, savedMinor: null, gap: 0, suppliers: [], uncovered: [] };
+  const nothing: Proposal = {
+    status: 'nothing-short',
+    message: 'Nothing is short.',
+    currency: CURRENCY,
+    totalMinor: 0,
+    naiveMinor: null,
+    savedMinor: null,
+    gap: 0,
+    suppliers: [],
+    uncovered: [],
+  };
   if (shortages.length === 0) return nothing;
-  const substances = await rowsById(SubstanceModel, shortages.map(({ substanceId }) => substanceId));
+  const substances = await rowsById(
+    SubstanceModel,
+    shortages.map(({ substanceId }) => substanceId),
+  );
   const [offers, suppliers] = await Promise.all([
     OfferModel.findAll({ where: { substanceId: [...substances.keys()], active: true } }),
     SupplierModel.findAll({ where: { active: true } }),
@@ -82,16 +114,48 @@ export async function proposeOrders(_viewer: Viewer): Promise<Proposal> {
     needsOf(shortages, (id) => substances.get(id)?.unit),
     offers
       .filter(({ supplierId }) => suppliers.some(({ id }) => id === supplierId))
-      .map(({ id, supplierId, substanceId, unit, packMicro, priceMinor, hazardous }) => ({ id, supplierId, substanceId, unit, packMicro, prices: [{ fromPacks: 1, priceMinor }], maxPacks: null, shelfLifeDays: null, hazardous })),
-    suppliers.map(({ id, name, leadDays, carriageMinor, hazardSurchargeMinor, minimumOrderMinor }) => ({ id, name, leadDays, carriageMinor, hazardSurchargeMinor, minimumOrderMinor })),
-    { orderOn: formatISO(new Date(), { representation: 'date' }), budgetMinor: null, pinned: [], forbidden: [], timeLimitSeconds: SOLVER_SECONDS },
+      .map(({ id, supplierId, substanceId, unit, packMicro, priceMinor, hazardous }) => ({
+        id,
+        supplierId,
+        substanceId,
+        unit,
+        packMicro,
+        prices: [{ fromPacks: 1, priceMinor }],
+        maxPacks: null,
+        shelfLifeDays: null,
+        hazardous,
+      })),
+    suppliers.map(({ id, name, leadDays, carriageMinor, hazardSurchargeMinor, minimumOrderMinor }) => ({
+      id,
+      name,
+      leadDays,
+      carriageMinor,
+      hazardSurchargeMinor,
+      minimumOrderMinor,
+    })),
+    {
+      orderOn: formatISO(new Date(), { representation: 'date' }),
+      budgetMinor: null,
+      pinned: [],
+      forbidden: [],
+      timeLimitSeconds: SOLVER_SECONDS,
+    },
   );
-  if (outcome.status === 'no-plan') return { ...nothing, status: 'no-plan', message: outcome.message, uncovered: outcome.uncovered.map(({ message }) => message) };
+  if (outcome.status === 'no-plan')
+    return {
+      ...nothing,
+      status: 'no-plan',
+      message: outcome.message,
+      uncovered: outcome.uncovered.map(({ message }) => message),
+    };
   const { plan } = outcome;
   const offerById = new Map(offers.map((offer) => [offer.id, offer]));
   return {
     status: outcome.status,
-    message: plan.gap === 0 ? 'Proven to be the least cost.' : `Within ${(plan.gap * 100).toFixed(1)} % of the least cost.`,
+    message:
+      plan.gap === 0
+        ? 'Proven to be the least cost.'
+        : `Within ${(plan.gap * 100).toFixed(1)} % of the least cost.`,
     currency: CURRENCY,
     totalMinor: plan.totalMinor,
     naiveMinor: plan.naive?.totalMinor ?? null,

@@ -9,7 +9,13 @@ import type { Viewer } from '@/lib/domain/roles';
 import { classifySolution } from '@/lib/hazards/classification/classify-solution';
 import { questionQuantities } from '@/lib/planning/sanity';
 import type { Page } from '@/lib/schemas/list';
-import type { Solution, SolutionCreate, SolutionDetail, SolutionListQuery, SolutionPatch } from '@/lib/schemas/solutions';
+import type {
+  Solution,
+  SolutionCreate,
+  SolutionDetail,
+  SolutionListQuery,
+  SolutionPatch,
+} from '@/lib/schemas/solutions';
 import { write } from '@/models/db';
 import { SolutionModel } from '@/models/solution';
 import { SolutionSoluteModel } from '@/models/solution-solute';
@@ -20,7 +26,10 @@ import { recomputeRequestsUsing } from './request-plans';
 
 /** Rows with their solutes in order. */
 export async function presentSolutions(rows: readonly SolutionModel[]): Promise<Solution[]> {
-  const solutes = await SolutionSoluteModel.findAll({ where: { solutionId: rows.map(({ id }) => id) }, order: [['position', 'ASC']] });
+  const solutes = await SolutionSoluteModel.findAll({
+    where: { solutionId: rows.map(({ id }) => id) },
+    order: [['position', 'ASC']],
+  });
   return rows.map((row) => ({
     id: row.id,
     name: row.name,
@@ -34,7 +43,12 @@ export async function presentSolutions(rows: readonly SolutionModel[]): Promise<
       .filter(({ solutionId }) => solutionId === row.id)
       .map(({ substanceId, molarity }) => {
         const substance = findSubstance(substanceId);
-        return { substance: substanceId, name: substance?.name ?? substanceId, formula: substance?.formula ?? '', molarity };
+        return {
+          substance: substanceId,
+          name: substance?.name ?? substanceId,
+          formula: substance?.formula ?? '',
+          molarity,
+        };
       }),
   }));
 }
@@ -43,11 +57,18 @@ async function detail(row: SolutionModel): Promise<SolutionDetail> {
   const [solution] = await presentSolutions([row]);
   if (!solution) throw new Error('A solution can be presented');
   const pH = solutionPh(solution.solutes);
-  return { ...solution, pH, classification: classifySolution({ solutes: solution.solutes, pH }), questions: questionsFor(solution.solutes) };
+  return {
+    ...solution,
+    pH,
+    classification: classifySolution({ solutes: solution.solutes, pH }),
+    questions: questionsFor(solution.solutes),
+  };
 }
 
 /** pH of a solution as made; null where no equilibrium is found. */
-export function solutionPh(solutes: readonly { readonly substance: string; readonly molarity: number }[]): number | null {
+export function solutionPh(
+  solutes: readonly { readonly substance: string; readonly molarity: number }[],
+): number | null {
   const outcome = speciate({
     volumeL: 1,
     amounts: componentAmounts({ label: 'solution', solutes, volumeMl: 1000 }),
@@ -61,7 +82,9 @@ export function solutionPh(solutes: readonly { readonly substance: string; reado
   return outcome.converged ? outcome.pH : null;
 }
 
-function questionsFor(solutes: readonly { readonly substance: string; readonly molarity: number }[]): string[] {
+function questionsFor(
+  solutes: readonly { readonly substance: string; readonly molarity: number }[],
+): string[] {
   const known = solutes.flatMap(({ substance: id, molarity }) => {
     const substance = findSubstance(id);
     return substance ? [{ substance, molarity, solubleMolarity: null }] : [];
@@ -95,18 +118,27 @@ function resolveSolutes(solutes: SolutionCreate['solutes']): { substanceId: stri
     const pointer = `#/solutes/${index}/substance`;
     const found = findSubstance(substance);
     if (!found) return [{ pointer, detail: 'This substance is not in the catalogue.' }];
-    if (!Number.isFinite(found.molarMassGPerMol)) return [{ pointer, detail: 'It has no molar mass, so it cannot be asked for in mol/L.' }];
+    if (!Number.isFinite(found.molarMassGPerMol))
+      return [{ pointer, detail: 'It has no molar mass, so it cannot be asked for in mol/L.' }];
     if (seen.has(found.id)) return [{ pointer, detail: 'This substance stands twice.' }];
     seen.add(found.id);
     return [];
   });
   if (errors.length > 0) throw invalid(errors);
-  return solutes.map(({ substance, molarity }) => ({ substanceId: findSubstance(substance)?.id ?? substance, molarity }));
+  return solutes.map(({ substance, molarity }) => ({
+    substanceId: findSubstance(substance)?.id ?? substance,
+    molarity,
+  }));
 }
 
-async function saveSolutes(solutionId: string, solutes: readonly { substanceId: string; molarity: number }[]): Promise<void> {
+async function saveSolutes(
+  solutionId: string,
+  solutes: readonly { substanceId: string; molarity: number }[],
+): Promise<void> {
   await SolutionSoluteModel.destroy({ where: { solutionId } });
-  await SolutionSoluteModel.bulkCreate(solutes.map((solute, position) => ({ solutionId, position, ...solute })));
+  await SolutionSoluteModel.bulkCreate(
+    solutes.map((solute, position) => ({ solutionId, position, ...solute })),
+  );
 }
 
 export async function createSolution(viewer: Viewer, input: SolutionCreate): Promise<SolutionDetail> {
@@ -115,13 +147,22 @@ export async function createSolution(viewer: Viewer, input: SolutionCreate): Pro
   return write(async () => {
     const row = await SolutionModel.create({ ...rest, ownerId: viewer.id });
     await saveSolutes(row.id, resolved);
-    await record(viewer, { subjectType: 'solution', subjectId: row.id, subjectLabel: row.name, action: 'created' });
+    await record(viewer, {
+      subjectType: 'solution',
+      subjectId: row.id,
+      subjectLabel: row.name,
+      action: 'created',
+    });
     return detail(row);
   });
 }
 
 /** Plans that use the recipe are computed again, and reviews that no longer fit lapse. */
-export async function updateSolution(viewer: Viewer, id: string, patch: SolutionPatch): Promise<SolutionDetail> {
+export async function updateSolution(
+  viewer: Viewer,
+  id: string,
+  patch: SolutionPatch,
+): Promise<SolutionDetail> {
   const { solutes, isArchived, version, ...rest } = patch;
   const resolved = resolveSolutes(solutes);
   return write(async () => {
@@ -129,9 +170,18 @@ export async function updateSolution(viewer: Viewer, id: string, patch: Solution
     if (!row) throw new DomainError('not-found', 'There is no such solution.');
     authorise(viewer, 'recipe:update', { ownerId: row.ownerId }, 'It is the recipe of somebody else.');
     if (row.version !== version) refuseStale(row, version, await detail(row));
-    await row.update({ ...rest, archivedAt: isArchived ? (row.archivedAt ?? new Date()) : null, version: version + 1 });
+    await row.update({
+      ...rest,
+      archivedAt: isArchived ? (row.archivedAt ?? new Date()) : null,
+      version: version + 1,
+    });
     await saveSolutes(row.id, resolved);
-    await record(viewer, { subjectType: 'solution', subjectId: row.id, subjectLabel: row.name, action: isArchived ? 'archived' : 'changed' });
+    await record(viewer, {
+      subjectType: 'solution',
+      subjectId: row.id,
+      subjectLabel: row.name,
+      action: isArchived ? 'archived' : 'changed',
+    });
     await recomputeRequestsUsing(viewer, row.id);
     return detail(row);
   });

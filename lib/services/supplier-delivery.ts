@@ -23,13 +23,17 @@ export async function deliverOrder(payload: JsonObject, key: string): Promise<vo
   const answer = await placeOrder({ order: orderCode, account, lines }, key);
   await write(async () => {
     const order = await OrderModel.findByPk(orderId, { rejectOnEmpty: true });
-    for (const { line, status } of answer.lines) await OrderLineModel.update({ supplierStatus: status }, { where: { id: line, orderId } });
+    for (const { line, status } of answer.lines)
+      await OrderLineModel.update({ supplierStatus: status }, { where: { id: line, orderId } });
     order.supplierReference = answer.reference;
     if (order.state === 'sent') {
       const odd = answer.lines.filter(({ status }) => status !== 'accepted');
       await changeState(null, 'order', order, 'acknowledged', {
         label: order.code,
-        reason: odd.length === 0 ? `as ${answer.reference}` : `as ${answer.reference}; ${odd.map(({ status }) => status).join(', ')}`,
+        reason:
+          odd.length === 0
+            ? `as ${answer.reference}`
+            : `as ${answer.reference}; ${odd.map(({ status }) => status).join(', ')}`,
       });
     } else await order.save();
   });

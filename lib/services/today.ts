@@ -62,9 +62,15 @@ async function sessionLines(viewer: Viewer, start: Date, end: Date): Promise<Day
   const isStaff = viewer.roles.some((role) => role === 'prep' || role === 'safety');
   if (!isStaff && !viewer.roles.includes('instructor')) return [];
   const sessions = await SessionModel.findAll({
-    where: { startsAt: { [Op.gte]: start, [Op.lt]: end }, cancelledAt: null, ...(isStaff ? {} : { instructorId: viewer.id }) },
+    where: {
+      startsAt: { [Op.gte]: start, [Op.lt]: end },
+      cancelledAt: null,
+      ...(isStaff ? {} : { instructorId: viewer.id }),
+    },
   });
-  const requests = await RequestModel.findAll({ where: { sessionId: sessions.map(({ id }) => id), state: { [Op.ne]: 'withdrawn' } } });
+  const requests = await RequestModel.findAll({
+    where: { sessionId: sessions.map(({ id }) => id), state: { [Op.ne]: 'withdrawn' } },
+  });
   return sessions.map((session) => {
     const own = requests.filter(({ sessionId }) => sessionId === session.id);
     const [first] = own;
@@ -79,8 +85,14 @@ async function sessionLines(viewer: Viewer, start: Date, end: Date): Promise<Day
 }
 
 async function batchLines(day: string): Promise<DayLine[]> {
-  const batches = await BatchModel.findAll({ where: { makeOn: { [Op.lte]: day }, state: ['planned', 'making', 'checked'] }, order: [['readyBy', 'ASC']], limit: 50 });
-  const solutions = await SolutionModel.findAll({ where: { id: batches.map(({ solutionId }) => solutionId) } });
+  const batches = await BatchModel.findAll({
+    where: { makeOn: { [Op.lte]: day }, state: ['planned', 'making', 'checked'] },
+    order: [['readyBy', 'ASC']],
+    limit: 50,
+  });
+  const solutions = await SolutionModel.findAll({
+    where: { id: batches.map(({ solutionId }) => solutionId) },
+  });
   const names = new Map(solutions.map(({ id, name }) => [id, name]));
   return batches.map((batch) => ({
     at: batch.readyBy.toISOString(),
@@ -92,7 +104,14 @@ async function batchLines(day: string): Promise<DayLine[]> {
 }
 
 async function reviewLines(): Promise<DayLine[]> {
-  const reviews = await ReviewModel.findAll({ where: { state: 'waiting' }, order: [['gravity', 'ASC'], ['createdAt', 'ASC']], limit: 20 });
+  const reviews = await ReviewModel.findAll({
+    where: { state: 'waiting' },
+    order: [
+      ['gravity', 'ASC'],
+      ['createdAt', 'ASC'],
+    ],
+    limit: 20,
+  });
   const requests = await RequestModel.findAll({ where: { id: reviews.map(({ requestId }) => requestId) } });
   const codes = new Map(requests.map(({ id, code }) => [id, code]));
   return reviews.map((review) => ({
@@ -105,7 +124,11 @@ async function reviewLines(): Promise<DayLine[]> {
 }
 
 async function orderLines(): Promise<DayLine[]> {
-  const orders = await OrderModel.findAll({ where: { state: ['for-approval', 'approved', 'sent', 'acknowledged', 'part-received'] }, order: [['updatedAt', 'ASC']], limit: 30 });
+  const orders = await OrderModel.findAll({
+    where: { state: ['for-approval', 'approved', 'sent', 'acknowledged', 'part-received'] },
+    order: [['updatedAt', 'ASC']],
+    limit: 30,
+  });
   return orders.map((order) => ({
     at: order.updatedAt.toISOString(),
     kind: 'Order',
@@ -118,23 +141,46 @@ async function orderLines(): Promise<DayLine[]> {
 async function outgoingLines(): Promise<DayLine[]> {
   const dead = await OutboxMessageModel.count({ where: { state: 'dead' } });
   if (dead === 0) return [];
-  return [{ at: null, kind: 'Outgoing', text: `${dead} given up; look why and send again`, state: 'dead', href: '/outgoing?state=dead' }];
+  return [
+    {
+      at: null,
+      kind: 'Outgoing',
+      text: `${dead} given up; look why and send again`,
+      state: 'dead',
+      href: '/outgoing?state=dead',
+    },
+  ];
 }
 
 async function returnedLines(viewer: Viewer): Promise<DayLine[]> {
-  const requests = await RequestModel.findAll({ where: { requesterId: viewer.id, state: OPEN_REQUEST }, order: [['updatedAt', 'DESC']], limit: MARGIN_LINES });
+  const requests = await RequestModel.findAll({
+    where: { requesterId: viewer.id, state: OPEN_REQUEST },
+    order: [['updatedAt', 'DESC']],
+    limit: MARGIN_LINES,
+  });
   return requests.map(({ id, code, state }) => ({
     at: null,
     kind: 'Your request',
-    text: state === 'returned' ? `${code} came back with a question` : state === 'in-review' ? `${code} waits for safety` : `${code} is ${stateWords(state)}`,
+    text:
+      state === 'returned'
+        ? `${code} came back with a question`
+        : state === 'in-review'
+          ? `${code} waits for safety`
+          : `${code} is ${stateWords(state)}`,
     state,
     href: `/requests/${id}`,
   }));
 }
 
 async function shortageLines(): Promise<DayLine[]> {
-  const shortages = await ShortageModel.findAll({ where: { state: 'open' }, order: [['orderBy', 'ASC']], limit: MARGIN_LINES });
-  const substances = await SubstanceModel.findAll({ where: { id: shortages.map(({ substanceId }) => substanceId) } });
+  const shortages = await ShortageModel.findAll({
+    where: { state: 'open' },
+    order: [['orderBy', 'ASC']],
+    limit: MARGIN_LINES,
+  });
+  const substances = await SubstanceModel.findAll({
+    where: { id: shortages.map(({ substanceId }) => substanceId) },
+  });
   const names = new Map(substances.map(({ id, name }) => [id, name]));
   return shortages.map((shortage) => ({
     at: shortage.orderBy,
@@ -147,8 +193,14 @@ async function shortageLines(): Promise<DayLine[]> {
 
 async function expiryLines(day: string): Promise<DayLine[]> {
   const limit = formatISO(addDays(new Date(day), EXPIRY_DAYS), { representation: 'date' });
-  const lots = await LotModel.findAll({ where: { expiresOn: { [Op.lte]: limit }, balanceMicro: { [Op.gt]: 0 } }, order: [['expiresOn', 'ASC']], limit: MARGIN_LINES });
-  const substances = await SubstanceModel.findAll({ where: { id: lots.map(({ substanceId }) => substanceId) } });
+  const lots = await LotModel.findAll({
+    where: { expiresOn: { [Op.lte]: limit }, balanceMicro: { [Op.gt]: 0 } },
+    order: [['expiresOn', 'ASC']],
+    limit: MARGIN_LINES,
+  });
+  const substances = await SubstanceModel.findAll({
+    where: { id: lots.map(({ substanceId }) => substanceId) },
+  });
   const names = new Map(substances.map(({ id, name }) => [id, name]));
   return lots.map((lot) => ({
     at: lot.expiresOn,

@@ -11,7 +11,16 @@ function demoSecrets(dataDir) {
   fs.mkdirSync(dataDir, { recursive: true });
   if (!fs.existsSync(file)) {
     const secret = () => randomBytes(32).toString('hex');
-    fs.writeFileSync(file, JSON.stringify({ SESSION_SECRET: secret(), STRIPE_WEBHOOK_SECRET: `whsec_${secret()}`, STRIPE_SECRET_KEY: `sk_test_${secret()}`, SUPPLIER_API_KEY: secret() }), { mode: 0o600 });
+    fs.writeFileSync(
+      file,
+      JSON.stringify({
+        SESSION_SECRET: secret(),
+        STRIPE_WEBHOOK_SECRET: `whsec_${secret()}`,
+        STRIPE_SECRET_KEY: `sk_test_${secret()}`,
+        SUPPLIER_API_KEY: secret(),
+      }),
+      { mode: 0o600 },
+    );
   }
   return JSON.parse(fs.readFileSync(file, 'utf8'));
 }
@@ -42,7 +51,9 @@ function houseEnvironment(given = process.env) {
         }
       : {}),
   };
-  const set = Object.fromEntries(Object.entries(given).filter(([, value]) => value !== undefined && value !== ''));
+  const set = Object.fromEntries(
+    Object.entries(given).filter(([, value]) => value !== undefined && value !== ''),
+  );
   return { env: { ...own, ...set, DATA_DIR: dataDir }, port, httpPort, isDemo, hasStandIns };
 }
 

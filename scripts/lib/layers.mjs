@@ -11,11 +11,31 @@ export const MAY_IMPORT = {
   'lib/schemas': ['lib/domain', 'lib/chemistry', 'lib/hazards', 'lib/planning'],
   models: ['lib/domain', 'lib/config', 'migrations'],
   migrations: ['models'],
-  'lib/services': ['models', 'lib/domain', 'lib/config', 'lib/schemas', 'lib/chemistry', 'lib/hazards', 'lib/planning'],
+  'lib/services': [
+    'models',
+    'lib/domain',
+    'lib/config',
+    'lib/schemas',
+    'lib/chemistry',
+    'lib/hazards',
+    'lib/planning',
+  ],
   'lib/http': ['lib/services', 'lib/domain', 'lib/config', 'lib/schemas'],
   'lib/client': ['lib/domain', 'lib/schemas', 'lib/chemistry', 'lib/hazards', 'lib/planning'],
   components: ['lib/client', 'lib/domain', 'lib/schemas', 'lib/chemistry', 'lib/hazards', 'lib/planning'],
-  app: ['components', 'lib/client', 'lib/http', 'lib/services', 'lib/config', 'lib/domain', 'lib/schemas', 'lib/chemistry', 'lib/hazards', 'lib/planning', 'fonts'],
+  app: [
+    'components',
+    'lib/client',
+    'lib/http',
+    'lib/services',
+    'lib/config',
+    'lib/domain',
+    'lib/schemas',
+    'lib/chemistry',
+    'lib/hazards',
+    'lib/planning',
+    'fonts',
+  ],
 };
 
 /** Folders that compute and nothing else, with the packages they may use. */

@@ -18,7 +18,7 @@ function isAlive(pid) {
 
 /** Lets one copy at a time install or build in this folder. */
 async function withLock(work) {
-  for (let told = false; ; ) {
+  for (let told = false; ;) {
     try {
       fs.writeFileSync(LOCK, String(process.pid), { flag: 'wx' });
       break;

@@ -8,7 +8,12 @@ const ROOT = path.resolve(__dirname, '../..');
 /** Runs a command to its end and fails where it fails. */
 function run(command, args, options = {}) {
   return new Promise((resolve, reject) => {
-    const child = spawn(command, args, { cwd: ROOT, stdio: options.quiet ? ['ignore', 'ignore', 'inherit'] : 'inherit', ...options, env: { ...process.env, ...options.env } });
+    const child = spawn(command, args, {
+      cwd: ROOT,
+      stdio: options.quiet ? ['ignore', 'ignore', 'inherit'] : 'inherit',
+      ...options,
+      env: { ...process.env, ...options.env },
+    });
     child.once('error', reject);
     child.once('exit', (code, signal) => {
       if (code === 0) resolve();

@@ -29,7 +29,8 @@ async function answers(address) {
 async function serveHouse(mode) {
   const { env, port, httpPort, isDemo, hasStandIns } = houseEnvironment();
   const host = env.HOST || '127.0.0.1';
-  if (!(await isFree(port, host))) throw new Error(`Port ${port} is in use. Stop what listens there, or set PORT.`);
+  if (!(await isFree(port, host)))
+    throw new Error(`Port ${port} is in use. Stop what listens there, or set PORT.`);
   await runScript('scripts/migrate.ts', env);
   if (isDemo) await runScript('scripts/seed.ts', env);
 
@@ -42,7 +43,11 @@ async function serveHouse(mode) {
     for (const child of children) child.kill('SIGTERM');
   };
   const start = (args, extra = {}) => {
-    const child = spawn(process.execPath, args, { cwd: ROOT, stdio: 'inherit', env: { ...process.env, ...env, ...extra } });
+    const child = spawn(process.execPath, args, {
+      cwd: ROOT,
+      stdio: 'inherit',
+      env: { ...process.env, ...env, ...extra },
+    });
     child.once('exit', (code) => stop(isStopping ? (process.exitCode ?? 0) : (code ?? 1)));
     children.push(child);
   };
@@ -50,10 +55,16 @@ async function serveHouse(mode) {
 
   if (hasStandIns) start([...SCRIPT, 'scripts/stand-ins.ts']);
   const isDevelopment = mode === 'dev';
-  start(['node_modules/next/dist/bin/next', isDevelopment ? 'dev' : 'start', '-p', String(port), '-H', host], { NODE_ENV: isDevelopment ? 'development' : 'production' });
+  start(
+    ['node_modules/next/dist/bin/next', isDevelopment ? 'dev' : 'start', '-p', String(port), '-H', host],
+    { NODE_ENV: isDevelopment ? 'development' : 'production' },
+  );
   if (await answers(`http://${host}:${port}/api/health`)) {
     console.log(`\nBenchwright is at http://localhost:${port}`);
-    if (isDemo) console.log('Sign in as instructor@, prep@, purchasing@, safety@ or admin@larkmoor.example; the password is DEMO_PASSWORD, or larkmoor-demo.');
+    if (isDemo)
+      console.log(
+        'Sign in as instructor@, prep@, purchasing@, safety@ or admin@larkmoor.example; the password is DEMO_PASSWORD, or larkmoor-demo.',
+      );
     if (hasStandIns) console.log(`Letters it sends are kept at http://localhost:${httpPort}/mail`);
   }
 }

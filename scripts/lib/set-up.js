@@ -7,13 +7,33 @@ const { hashOf, readStamp, writeStamp } = require('./stamps.js');
 
 const INSTALL_STAMP = 'node_modules/.benchwright-install';
 const BUILD_STAMP = '.next/.benchwright-build';
-const SOURCES = ['app', 'components', 'lib', 'models', 'migrations', 'public', 'fonts', 'instrumentation.ts', 'proxy.ts', 'next.config.js', 'postcss.config.js', 'tailwind.config.js', 'tsconfig.json', 'package.json', 'package-lock.json'];
+const SOURCES = [
+  'app',
+  'components',
+  'lib',
+  'models',
+  'migrations',
+  'public',
+  'fonts',
+  'instrumentation.ts',
+  'proxy.ts',
+  'next.config.js',
+  'postcss.config.js',
+  'tailwind.config.js',
+  'tsconfig.json',
+  'package.json',
+  'package-lock.json',
+];
 
 /** Native modules are compiled against the headers that came with Node.js, where they did. */
 function installEnvironment() {
   const prefix = path.resolve(path.dirname(process.execPath), '..');
   const hasHeaders = fs.existsSync(path.join(prefix, 'include/node/node.h'));
-  return { NODE_ENV: '', NEXT_TELEMETRY_DISABLED: '1', ...(hasHeaders ? { npm_config_nodedir: prefix } : {}) };
+  return {
+    NODE_ENV: '',
+    NEXT_TELEMETRY_DISABLED: '1',
+    ...(hasHeaders ? { npm_config_nodedir: prefix } : {}),
+  };
 }
 
 async function installPackages() {
@@ -32,7 +52,9 @@ async function buildApp() {
   if (readStamp(BUILD_STAMP) === wanted) return;
   console.log('Building …');
   fs.rmSync(path.join(ROOT, BUILD_STAMP), { force: true });
-  await run(process.execPath, ['node_modules/next/dist/bin/next', 'build'], { env: { NODE_ENV: 'production', NEXT_TELEMETRY_DISABLED: '1' } });
+  await run(process.execPath, ['node_modules/next/dist/bin/next', 'build'], {
+    env: { NODE_ENV: 'production', NEXT_TELEMETRY_DISABLED: '1' },
+  });
   writeStamp(BUILD_STAMP, wanted);
 }
 
@@ -45,7 +67,9 @@ async function installBrowser() {
   if (missing.length === 0) return;
   const names = missing.map(([, name]) => name);
   if (process.getuid?.() !== 0 || !fs.existsSync('/usr/bin/apt-get')) {
-    throw new Error(`The browser tests need ${names.join(' and ')}; install them, or run the tests as root on Debian.`);
+    throw new Error(
+      `The browser tests need ${names.join(' and ')}; install them, or run the tests as root on Debian.`,
+    );
   }
   console.log(`Installing ${names.join(' and ')} …`);
   const env = { DEBIAN_FRONTEND: 'noninteractive' };

@@ -13,7 +13,12 @@ export async function bodyOf(request: IncomingMessage): Promise<string> {
   return Buffer.concat(chunks).toString('utf8');
 }
 
-export function sendJson(response: ServerResponse, status: number, value: unknown, headers: Record<string, string> = {}): void {
+export function sendJson(
+  response: ServerResponse,
+  status: number,
+  value: unknown,
+  headers: Record<string, string> = {},
+): void {
   response.writeHead(status, { 'content-type': 'application/json', ...headers });
   response.end(JSON.stringify(value));
 }

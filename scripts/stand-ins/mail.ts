@@ -16,7 +16,10 @@ export interface KeptLetter {
 const MOST_LETTERS = 500;
 
 /** An SMTP server that keeps what it receives, newest first. */
-export function makeMailServer(modes: Modes): { readonly server: SMTPServer; readonly letters: KeptLetter[] } {
+export function makeMailServer(modes: Modes): {
+  readonly server: SMTPServer;
+  readonly letters: KeptLetter[];
+} {
   const letters: KeptLetter[] = [];
   const server = new SMTPServer({
     authOptional: true,

@@ -1,6 +1,15 @@
 /** How a stand-in behaves just now; set through its control address to try faults. */
 export type Mode = 'ok' | 'slow' | 'down' | 'garbage' | 'refuse' | 'partial' | 'backorder' | 'price-change';
-export const MODES: readonly Mode[] = ['ok', 'slow', 'down', 'garbage', 'refuse', 'partial', 'backorder', 'price-change'];
+export const MODES: readonly Mode[] = [
+  'ok',
+  'slow',
+  'down',
+  'garbage',
+  'refuse',
+  'partial',
+  'backorder',
+  'price-change',
+];
 export type Service = 'mail' | 'payments' | 'supplier';
 
 export class Modes {

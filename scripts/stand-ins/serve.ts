@@ -25,13 +25,20 @@ export interface StandIns {
 }
 
 function escapeHtml(text: string): string {
-  return text.replaceAll('&', '&amp;').replaceAll('<', '&lt;').replaceAll('>', '&gt;').replaceAll('"', '&quot;');
+  return text
+    .replaceAll('&', '&amp;')
+    .replaceAll('<', '&lt;')
+    .replaceAll('>', '&gt;')
+    .replaceAll('"', '&quot;');
 }
 
 function letterPage(letters: readonly KeptLetter[]): string {
   const items = letters
     .map(({ at, to, subject, text }) => {
-      const body = escapeHtml(text).replaceAll(/https?:\/\/[^\s&<]+/g, (address) => `<a href="${address}">${address}</a>`);
+      const body = escapeHtml(text).replaceAll(
+        /https?:\/\/[^\s&<]+/g,
+        (address) => `<a href="${address}">${address}</a>`,
+      );
       return `<article><h2>${escapeHtml(subject)}</h2><p>to ${escapeHtml(to)}, ${escapeHtml(at)}</p><pre>${body}</pre></article>`;
     })
     .join('');
@@ -50,7 +57,10 @@ export async function serveStandIns(settings: StandInSettings): Promise<StandIns
     if (request.method === 'GET') return sendJson(response, 200, modes.all());
     const wanted = JSON.parse((await bodyOf(request)) || '{}') as { mode?: string };
     const isService = service === 'mail' || service === 'payments' || service === 'supplier';
-    if (request.method !== 'PUT' || !isService || !MODES.includes(wanted.mode as Mode)) return sendJson(response, 400, { message: `PUT /control/{mail|payments|supplier} with a mode of ${MODES.join(', ')}` });
+    if (request.method !== 'PUT' || !isService || !MODES.includes(wanted.mode as Mode))
+      return sendJson(response, 400, {
+        message: `PUT /control/{mail|payments|supplier} with a mode of ${MODES.join(', ')}`,
+      });
     modes.set(service satisfies Service, wanted.mode as Mode);
     return sendJson(response, 200, modes.all());
   };
@@ -69,7 +79,9 @@ export async function serveStandIns(settings: StandInSettings): Promise<StandIns
       response.end(letterPage(letters));
       return undefined;
     };
-    answer().catch((error: unknown) => sendJson(response, 500, { message: error instanceof Error ? error.message : String(error) }));
+    answer().catch((error: unknown) =>
+      sendJson(response, 500, { message: error instanceof Error ? error.message : String(error) }),
+    );
   });
 
   await new Promise<void>((resolve, reject) => {

@@ -26,7 +26,14 @@ function isOrder(value: unknown): value is OrderedBody {
     typeof body.account === 'string' &&
     Array.isArray(body.lines) &&
     body.lines.length > 0 &&
-    body.lines.every((line: Partial<OrderedLine>) => typeof line.line === 'string' && typeof line.stockNumber === 'string' && Number.isInteger(line.packs) && (line.packs ?? 0) > 0 && Number.isInteger(line.priceMinor))
+    body.lines.every(
+      (line: Partial<OrderedLine>) =>
+        typeof line.line === 'string' &&
+        typeof line.stockNumber === 'string' &&
+        Number.isInteger(line.packs) &&
+        (line.packs ?? 0) > 0 &&
+        Number.isInteger(line.priceMinor),
+    )
   );
 }
 
@@ -49,13 +56,15 @@ export class Supplier {
       response.end('{"status": "accep');
       return;
     }
-    if (headerOf(request, 'authorization') !== `Bearer ${this.apiKey}`) return sendJson(response, 401, { message: 'Unknown account key' });
+    if (headerOf(request, 'authorization') !== `Bearer ${this.apiKey}`)
+      return sendJson(response, 401, { message: 'Unknown account key' });
     const reference = /^\/ordering\/orders\/([\w-]+)$/.exec(path)?.[1];
     if (request.method === 'GET' && reference) {
       const order = this.byReference.get(reference);
       return order ? sendJson(response, 200, order) : sendJson(response, 404, { message: 'No such order' });
     }
-    if (request.method !== 'POST' || path !== '/ordering/orders') return sendJson(response, 404, { message: 'No such address' });
+    if (request.method !== 'POST' || path !== '/ordering/orders')
+      return sendJson(response, 404, { message: 'No such address' });
     const key = headerOf(request, 'idempotency-key');
     const before = this.byKey.get(key);
     if (before) return sendJson(response, 200, before);
@@ -81,9 +90,26 @@ export class Supplier {
       order: body.order,
       status: 'acknowledged' as const,
       lines: body.lines.map((line, index) => {
-        if (mode === 'backorder' || (mode === 'partial' && index % 2 === 1)) return { line: line.line, status: 'back-ordered' as const, packs: line.packs, priceMinor: line.priceMinor };
-        if (mode === 'price-change') return { line: line.line, status: 'price-changed' as const, packs: line.packs, priceMinor: Math.round(line.priceMinor * PRICE_RISE) };
-        return { line: line.line, status: 'accepted' as const, packs: line.packs, priceMinor: line.priceMinor };
+        if (mode === 'backorder' || (mode === 'partial' && index % 2 === 1))
+          return {
+            line: line.line,
+            status: 'back-ordered' as const,
+            packs: line.packs,
+            priceMinor: line.priceMinor,
+          };
+        if (mode === 'price-change')
+          return {
+            line: line.line,
+            status: 'price-changed' as const,
+            packs: line.packs,
+            priceMinor: Math.round(line.priceMinor * PRICE_RISE),
+          };
+        return {
+          line: line.line,
+          status: 'accepted' as const,
+          packs: line.packs,
+          priceMinor: line.priceMinor,
+        };
       }),
     };
   }

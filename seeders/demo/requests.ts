@@ -39,27 +39,65 @@ export async function seedRequests({ people, sessions, solutions, demonstrations
   };
   const upcoming = (instructor: string) => {
     const { id } = person(instructor);
-    return sessions.filter((session) => session.instructorId === id && session.startsAt.getTime() > Date.now());
+    return sessions.filter(
+      (session) => session.instructorId === id && session.startsAt.getTime() > Date.now(),
+    );
   };
   const ask = async (who: string, index: number, lines: RequestLineInput[], note: string | null = null) => {
     const session = upcoming(who)[index];
     if (!session) throw new Error(`${who} has no session ${index} ahead`);
     return createRequest(person(who), { sessionId: session.id, note, lines });
   };
-  const submit = async (who: string, index: number, lines: RequestLineInput[], note: string | null = null) => {
+  const submit = async (
+    who: string,
+    index: number,
+    lines: RequestLineInput[],
+    note: string | null = null,
+  ) => {
     const draft = await ask(who, index, lines, note);
     return submitRequest(person(who), draft.id, { version: draft.version, reason: '' });
   };
 
-  await submit('instructor', 0, [solution('Copper(II) sulfate 0.1 mol/L', 40), solution('Ammonia 2 mol/L', 30), demonstration('Nickel to its blue ammine')]);
-  await submit('instructor', 1, [solution('Hydrochloric acid 0.1 mol/L', 60), solution('Sodium hydroxide 0.1 mol/L', 60), solution('Ethanoic acid 0.1 mol/L', 30)]);
-  await submit('t.renwick', 0, [solution('Zinc sulfate 0.1 mol/L', 20), solution('Sodium hydroxide 1 mol/L', 20), demonstration('Zinc hydroxide, both ways')]);
-  await submit('t.renwick', 1, [solution('Disodium EDTA 0.0100 mol/L', 100, 2), solution('Calcium chloride 0.1 mol/L', 25)]);
-  const cyanide = await submit('instructor', 2, [demonstration('Silver into its cyanide complex'), solution('Hydrochloric acid 0.1 mol/L', 30)], 'Shown once by me, behind the screen.');
+  await submit('instructor', 0, [
+    solution('Copper(II) sulfate 0.1 mol/L', 40),
+    solution('Ammonia 2 mol/L', 30),
+    demonstration('Nickel to its blue ammine'),
+  ]);
+  await submit('instructor', 1, [
+    solution('Hydrochloric acid 0.1 mol/L', 60),
+    solution('Sodium hydroxide 0.1 mol/L', 60),
+    solution('Ethanoic acid 0.1 mol/L', 30),
+  ]);
+  await submit('t.renwick', 0, [
+    solution('Zinc sulfate 0.1 mol/L', 20),
+    solution('Sodium hydroxide 1 mol/L', 20),
+    demonstration('Zinc hydroxide, both ways'),
+  ]);
+  await submit('t.renwick', 1, [
+    solution('Disodium EDTA 0.0100 mol/L', 100, 2),
+    solution('Calcium chloride 0.1 mol/L', 25),
+  ]);
+  const cyanide = await submit(
+    'instructor',
+    2,
+    [demonstration('Silver into its cyanide complex'), solution('Hydrochloric acid 0.1 mol/L', 30)],
+    'Shown once by me, behind the screen.',
+  );
   const returned = await submit('t.renwick', 2, [demonstration('Silver into its cyanide complex')]);
-  await ask('instructor', 3, [solution('Silver nitrate 0.05 mol/L', 20), solution('Sodium chloride 0.1 mol/L', 20)], 'Not finished.');
-  const withdrawn = await submit('t.renwick', 3, [solution('Barium chloride 0.1 mol/L', 20), solution('Sodium sulfate 0.1 mol/L', 20)]);
-  await withdrawRequest(person('t.renwick'), withdrawn.id, { version: withdrawn.version, reason: 'The session does something else.' });
+  await ask(
+    'instructor',
+    3,
+    [solution('Silver nitrate 0.05 mol/L', 20), solution('Sodium chloride 0.1 mol/L', 20)],
+    'Not finished.',
+  );
+  const withdrawn = await submit('t.renwick', 3, [
+    solution('Barium chloride 0.1 mol/L', 20),
+    solution('Sodium sulfate 0.1 mol/L', 20),
+  ]);
+  await withdrawRequest(person('t.renwick'), withdrawn.id, {
+    version: withdrawn.version,
+    reason: 'The session does something else.',
+  });
   await submit('instructor', 4, [demonstration('Golden rain', 2), demonstration('Prussian blue')]);
 
   const officer = person('safety');

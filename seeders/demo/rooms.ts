@@ -42,17 +42,40 @@ type Item = {
 
 /** Maximum permissible errors: ISO 1042 flasks class A, ISO 648 pipettes class A, ISO 4788 cylinders class B, from memory. */
 const EQUIPMENT: readonly Item[] = [
-  { kind: 'balance', name: 'Analytical balance', count: 1, capacityG: 220, readabilityG: 0.0001, repeatabilityG: 0.0001 },
-  { kind: 'balance', name: 'Precision balance', count: 2, capacityG: 620, readabilityG: 0.001, repeatabilityG: 0.001 },
-  { kind: 'balance', name: 'Top-pan balance', count: 2, capacityG: 3200, readabilityG: 0.01, repeatabilityG: 0.01 },
-  ...([
-    [50, 0.06],
-    [100, 0.1],
-    [250, 0.15],
-    [500, 0.25],
-    [1000, 0.4],
-    [2000, 0.6],
-  ] as const).map(([capacityMl, toleranceMl]) => ({
+  {
+    kind: 'balance',
+    name: 'Analytical balance',
+    count: 1,
+    capacityG: 220,
+    readabilityG: 0.0001,
+    repeatabilityG: 0.0001,
+  },
+  {
+    kind: 'balance',
+    name: 'Precision balance',
+    count: 2,
+    capacityG: 620,
+    readabilityG: 0.001,
+    repeatabilityG: 0.001,
+  },
+  {
+    kind: 'balance',
+    name: 'Top-pan balance',
+    count: 2,
+    capacityG: 3200,
+    readabilityG: 0.01,
+    repeatabilityG: 0.01,
+  },
+  ...(
+    [
+      [50, 0.06],
+      [100, 0.1],
+      [250, 0.15],
+      [500, 0.25],
+      [1000, 0.4],
+      [2000, 0.6],
+    ] as const
+  ).map(([capacityMl, toleranceMl]) => ({
     kind: 'flask' as const,
     name: `Volumetric flask ${capacityMl} mL`,
     count: 4,
@@ -60,13 +83,15 @@ const EQUIPMENT: readonly Item[] = [
     toleranceMl,
     glassClass: 'A',
   })),
-  ...([
-    [1, 0.008],
-    [5, 0.015],
-    [10, 0.02],
-    [25, 0.03],
-    [50, 0.05],
-  ] as const).map(([capacityMl, toleranceMl]) => ({
+  ...(
+    [
+      [1, 0.008],
+      [5, 0.015],
+      [10, 0.02],
+      [25, 0.03],
+      [50, 0.05],
+    ] as const
+  ).map(([capacityMl, toleranceMl]) => ({
     kind: 'pipette' as const,
     name: `Pipette ${capacityMl} mL`,
     count: 6,
@@ -74,13 +99,15 @@ const EQUIPMENT: readonly Item[] = [
     toleranceMl,
     glassClass: 'A',
   })),
-  ...([
-    [25, 0.5],
-    [100, 1],
-    [250, 2],
-    [500, 5],
-    [1000, 10],
-  ] as const).map(([capacityMl, toleranceMl]) => ({
+  ...(
+    [
+      [25, 0.5],
+      [100, 1],
+      [250, 2],
+      [500, 5],
+      [1000, 10],
+    ] as const
+  ).map(([capacityMl, toleranceMl]) => ({
     kind: 'cylinder' as const,
     name: `Measuring cylinder ${capacityMl} mL`,
     count: 4,
@@ -89,7 +116,12 @@ const EQUIPMENT: readonly Item[] = [
     glassClass: 'B',
   })),
   { kind: 'burette', name: 'Burette 50 mL', count: 10, capacityMl: 50, toleranceMl: 0.05, glassClass: 'A' },
-  ...[250, 1000, 3000, 5000].map((capacityMl) => ({ kind: 'beaker' as const, name: `Beaker ${capacityMl} mL`, count: 6, capacityMl })),
+  ...[250, 1000, 3000, 5000].map((capacityMl) => ({
+    kind: 'beaker' as const,
+    name: `Beaker ${capacityMl} mL`,
+    count: 6,
+    capacityMl,
+  })),
   ...[50, 100, 250, 500, 1000, 2500].map((capacityMl) => ({
     kind: 'bottle' as const,
     name: `Bottle ${capacityMl} mL`,
@@ -109,7 +141,13 @@ export async function seedRooms(): Promise<Rooms> {
   const prepRoom = rooms.get('Prep room');
   if (!prepRoom) throw new Error('The prep room is missing');
   const places = await PlaceModel.bulkCreate(
-    PLACES.map(([name, kind, storageGroup], position) => ({ roomId: prepRoom.id, name, kind, storageGroup, position })),
+    PLACES.map(([name, kind, storageGroup], position) => ({
+      roomId: prepRoom.id,
+      name,
+      kind,
+      storageGroup,
+      position,
+    })),
   );
   await EquipmentModel.bulkCreate(EQUIPMENT.map((item) => ({ roomId: prepRoom.id, ...item })));
   return { rooms, places: new Map(places.map((place) => [place.name, place])) };

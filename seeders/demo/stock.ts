@@ -49,7 +49,13 @@ const NOTABLE: Readonly<Record<string, readonly Standing[]>> = {
 };
 
 /** Never bought by the demo college. */
-const ABSENT = new Set(['mercury-chloride', 'mercury-nitrate', 'cadmium-nitrate', 'sodium-azide', 'perchloric-acid']);
+const ABSENT = new Set([
+  'mercury-chloride',
+  'mercury-nitrate',
+  'cadmium-nitrate',
+  'sodium-azide',
+  'perchloric-acid',
+]);
 
 const day = (offset: number): string => formatISO(addDays(new Date(), offset), { representation: 'date' });
 
@@ -67,7 +73,8 @@ export async function seedStock(
       receivedDaysAgo: 30 + ((index * 37) % 500),
       expiresInDays: 120 + ((index * 53) % 900),
     };
-    for (const standing of NOTABLE[substance.id] ?? [usual]) await seedLot(prep, places, suppliers, substance, standing, index);
+    for (const standing of NOTABLE[substance.id] ?? [usual])
+      await seedLot(prep, places, suppliers, substance, standing, index);
   }
 }
 
@@ -95,5 +102,10 @@ async function seedLot(
     expiresOn: day(standing.expiresInDays),
     placeId: place.id,
   });
-  await move(prep, { lotId: lot.id, kind: 'received', amountMicro: toMicro(standing.amount), reason: 'Opening count' });
+  await move(prep, {
+    lotId: lot.id,
+    kind: 'received',
+    amountMicro: toMicro(standing.amount),
+    reason: 'Opening count',
+  });
 }

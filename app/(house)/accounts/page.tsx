@@ -9,7 +9,10 @@ export default async function AccountsPage() {
   await pageViewer('user:manage');
   return (
     <>
-      <PageHeader title="Accounts" lead="Who may sign in, and as what. A change of roles ends that person’s sessions at once." />
+      <PageHeader
+        title="Accounts"
+        lead="Who may sign in, and as what. A change of roles ends that person’s sessions at once."
+      />
       <AccountList />
     </>
   );

@@ -10,7 +10,10 @@ export default async function CataloguePage() {
   await pageViewer('catalogue:read');
   return (
     <>
-      <PageHeader title="What is this, and what does it do?" lead="Every substance of the house. Empty hazard classes mean none known here, not safe." />
+      <PageHeader
+        title="What is this, and what does it do?"
+        lead="Every substance of the house. Empty hazard classes mean none known here, not safe."
+      />
       <CatalogueTabs here="/catalogue" />
       <SubstanceList />
     </>

@@ -12,8 +12,16 @@ export default async function MixBenchPage({ searchParams }: PageProps<'/mix-ben
   const { demonstration } = await searchParams;
   return (
     <>
-      <PageHeader title="What if these were poured together?" lead="Drag a volume and watch. Nothing is made from here." />
-      <MixBench demonstration={typeof demonstration === 'string' ? await load(getDemonstration(viewer, demonstration)) : null} maySave={mayByRole(viewer, 'recipe:create')} />
+      <PageHeader
+        title="What if these were poured together?"
+        lead="Drag a volume and watch. Nothing is made from here."
+      />
+      <MixBench
+        demonstration={
+          typeof demonstration === 'string' ? await load(getDemonstration(viewer, demonstration)) : null
+        }
+        maySave={mayByRole(viewer, 'recipe:create')}
+      />
     </>
   );
 }

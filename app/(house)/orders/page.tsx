@@ -14,10 +14,22 @@ export const metadata: Metadata = { title: 'Orders' };
 export default async function OrdersPage() {
   const viewer = await pageViewer('order:read');
   const [waiting, budgets] = await Promise.all([
-    listOrders(viewer, { page: 1, pageSize: 1, sort: '-createdAt', search: '', format: 'json', state: 'for-approval' }),
+    listOrders(viewer, {
+      page: 1,
+      pageSize: 1,
+      sort: '-createdAt',
+      search: '',
+      format: 'json',
+      state: 'for-approval',
+    }),
     listBudgets(),
   ]);
-  const title = waiting.total === 0 ? 'No order waits for approval' : waiting.total === 1 ? '1 order waits for approval' : `${waiting.total} orders wait for approval`;
+  const title =
+    waiting.total === 0
+      ? 'No order waits for approval'
+      : waiting.total === 1
+        ? '1 order waits for approval'
+        : `${waiting.total} orders wait for approval`;
   return (
     <>
       <PageHeader

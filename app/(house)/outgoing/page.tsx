@@ -9,7 +9,10 @@ export default async function OutgoingPage() {
   await pageViewer('outbox:read');
   return (
     <>
-      <PageHeader title="What goes out" lead="Letters and orders wait here until the service outside has taken them. After eight failures a message is given up, and a person decides." />
+      <PageHeader
+        title="What goes out"
+        lead="Letters and orders wait here until the service outside has taken them. After eight failures a message is given up, and a person decides."
+      />
       <OutgoingList />
     </>
   );

@@ -10,7 +10,10 @@ export default async function RecordsPage() {
   await pageViewer('record:read');
   return (
     <>
-      <PageHeader title="Who did what, and when" lead="Every change of state is one line. Each line’s hash covers the line before, so a later alteration shows." />
+      <PageHeader
+        title="Who did what, and when"
+        lead="Every change of state is one line. Each line’s hash covers the line before, so a later alteration shows."
+      />
       <ChainState />
       <RecordList />
     </>

@@ -23,7 +23,10 @@ export default async function SessionsPage() {
           ) : null
         }
       />
-      <SessionList today={formatISO(new Date(), { representation: 'date' })} startsWithMine={viewer.roles.includes('instructor')} />
+      <SessionList
+        today={formatISO(new Date(), { representation: 'date' })}
+        startsWithMine={viewer.roles.includes('instructor')}
+      />
     </>
   );
 }

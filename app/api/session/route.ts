@@ -16,10 +16,16 @@ export const POST = route(accountEndpoints.signIn, async ({ body }) => {
   const { viewer, sessionVersion } = await signIn(body.email, body.password);
   return Response.json(
     { user: userOf(viewer) },
-    { headers: { 'set-cookie': await sessionCookie({ userId: viewer.id, sessionVersion }), 'cache-control': 'no-store' } },
+    {
+      headers: {
+        'set-cookie': await sessionCookie({ userId: viewer.id, sessionVersion }),
+        'cache-control': 'no-store',
+      },
+    },
   );
 });
 
-export const DELETE = route(accountEndpoints.signOut, async () =>
-  new Response(null, { status: 204, headers: { 'set-cookie': clearedCookie() } }),
+export const DELETE = route(
+  accountEndpoints.signOut,
+  async () => new Response(null, { status: 204, headers: { 'set-cookie': clearedCookie() } }),
 );

@@ -11,14 +11,26 @@ const acknowledgementSchema = z.object({
   reference: z.string().min(1).max(80),
   order: z.string(),
   status: z.literal('acknowledged'),
-  lines: z.array(z.object({ line: z.string(), status: z.enum(['accepted', 'back-ordered', 'price-changed']), packs: z.number().int(), priceMinor: z.number().int() })),
+  lines: z.array(
+    z.object({
+      line: z.string(),
+      status: z.enum(['accepted', 'back-ordered', 'price-changed']),
+      packs: z.number().int(),
+      priceMinor: z.number().int(),
+    }),
+  ),
 });
 export type Acknowledgement = z.infer<typeof acknowledgementSchema>;
 
 export interface OutgoingOrder {
   readonly order: string;
   readonly account: string;
-  readonly lines: readonly { readonly line: string; readonly stockNumber: string; readonly packs: number; readonly priceMinor: number }[];
+  readonly lines: readonly {
+    readonly line: string;
+    readonly stockNumber: string;
+    readonly packs: number;
+    readonly priceMinor: number;
+  }[];
 }
 
 /**
@@ -27,20 +39,26 @@ export interface OutgoingOrder {
  */
 export async function placeOrder(order: OutgoingOrder, key: string): Promise<Acknowledgement> {
   const { SUPPLIER_API_BASE, SUPPLIER_API_KEY } = environment();
-  if (!SUPPLIER_API_BASE) throw new DomainError('unavailable', 'No ordering service is set (SUPPLIER_API_BASE).');
+  if (!SUPPLIER_API_BASE)
+    throw new DomainError('unavailable', 'No ordering service is set (SUPPLIER_API_BASE).');
   let response: Response;
   try {
     response = await fetch(new URL('/ordering/orders', SUPPLIER_API_BASE), {
       method: 'POST',
       signal: AbortSignal.timeout(ANSWER_WITHIN_MS),
-      headers: { 'content-type': 'application/json', authorization: `Bearer ${SUPPLIER_API_KEY ?? ''}`, 'idempotency-key': key },
+      headers: {
+        'content-type': 'application/json',
+        authorization: `Bearer ${SUPPLIER_API_KEY ?? ''}`,
+        'idempotency-key': key,
+      },
       body: JSON.stringify(order),
     });
   } catch (cause) {
     throw new DomainError('unavailable', 'The ordering service did not answer.', { cause });
   }
   const text = await response.text().catch(() => '');
-  if (response.status >= 500) throw new DomainError('unavailable', `The ordering service answered ${response.status}.`);
+  if (response.status >= 500)
+    throw new DomainError('unavailable', `The ordering service answered ${response.status}.`);
   if (!response.ok) throw new PermanentFailure(`The supplier refused it: ${text.slice(0, SAID_AT_MOST)}`);
   let value: unknown;
   try {
@@ -49,6 +67,10 @@ export async function placeOrder(order: OutgoingOrder, key: string): Promise<Ack
     throw new DomainError('unavailable', 'The ordering service answered something unreadable.', { cause });
   }
   const parsed = acknowledgementSchema.safeParse(value);
-  if (!parsed.success || parsed.data.order !== order.order) throw new DomainError('unavailable', 'The ordering service answered something that does not fit the order.');
+  if (!parsed.success || parsed.data.order !== order.order)
+    throw new DomainError(
+      'unavailable',
+      'The ordering service answered something that does not fit the order.',
+    );
   return parsed.data;
 }

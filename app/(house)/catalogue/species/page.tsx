@@ -10,7 +10,10 @@ export default async function SpeciesPage() {
   await pageViewer('catalogue:read');
   return (
     <>
-      <PageHeader title="Species and their constants" lead="log K of formation from the masters at 25 °C and ionic strength 0, each with its source." />
+      <PageHeader
+        title="Species and their constants"
+        lead="log K of formation from the masters at 25 °C and ionic strength 0, each with its source."
+      />
       <CatalogueTabs here="/catalogue/species" />
       <SpeciesList />
     </>

@@ -26,10 +26,21 @@ export default async function OrderPage({ params }: PageProps<'/orders/[id]'>) {
   const isReceivable = ['sent', 'acknowledged', 'part-received'].includes(order.state);
   return (
     <>
-      <PageHeader title={`${order.code} to ${order.supplierName}: ${money(order.totalMinor)}`} lead={`Drafted by ${order.draftedByName}${order.approvedByName ? `, approved by ${order.approvedByName}` : ''}`} actions={<StateMark state={order.state} />} />
+      <PageHeader
+        title={`${order.code} to ${order.supplierName}: ${money(order.totalMinor)}`}
+        lead={`Drafted by ${order.draftedByName}${order.approvedByName ? `, approved by ${order.approvedByName}` : ''}`}
+        actions={<StateMark state={order.state} />}
+      />
       {order.sending && order.sending.state !== 'sent' && (
         <div className="mb-4">
-          <Alert tone={order.sending.state === 'dead' ? 'stop' : 'attention'} title={order.sending.state === 'dead' ? 'The supplier has not got it; it was given up' : `On its way; ${order.sending.attempts} attempts so far`}>
+          <Alert
+            tone={order.sending.state === 'dead' ? 'stop' : 'attention'}
+            title={
+              order.sending.state === 'dead'
+                ? 'The supplier has not got it; it was given up'
+                : `On its way; ${order.sending.attempts} attempts so far`
+            }
+          >
             {order.sending.lastError}
           </Alert>
         </div>
@@ -41,7 +52,11 @@ export default async function OrderPage({ params }: PageProps<'/orders/[id]'>) {
           </Alert>
         </div>
       )}
-      <OrderActions order={order} mayDraft={mayByRole(viewer, 'order:update')} mayApprove={mayByRole(viewer, 'order:approve')} />
+      <OrderActions
+        order={order}
+        mayDraft={mayByRole(viewer, 'order:update')}
+        mayApprove={mayByRole(viewer, 'order:approve')}
+      />
       <Section title="What is ordered">
         <OrderLines order={order} />
       </Section>
@@ -55,20 +70,32 @@ export default async function OrderPage({ params }: PageProps<'/orders/[id]'>) {
               ['Budget', order.budgetName],
               ['Paid', order.isPaid ? `yes, ${order.payment?.reference ?? ''}` : 'no'],
               ['Supplier’s reference', order.supplierReference ?? 'none yet'],
-              ['Invoices', order.invoices.map(({ number, amountMinor, state }) => `${number}: ${money(amountMinor)} (${state})`).join(', ') || 'none yet'],
+              [
+                'Invoices',
+                order.invoices
+                  .map(({ number, amountMinor, state }) => `${number}: ${money(amountMinor)} (${state})`)
+                  .join(', ') || 'none yet',
+              ],
             ]}
           />
         </Section>
         {isReceivable && mayByRole(viewer, 'order:receive') && (
           <Section title="Take in what came">
-            <ReceiveForm order={order} places={places.items.map((place) => ({ id: place.id, words: `${place.name} (${place.storageGroup.replaceAll('_', ' ')})` }))} />
+            <ReceiveForm
+              order={order}
+              places={places.items.map((place) => ({
+                id: place.id,
+                words: `${place.name} (${place.storageGroup.replaceAll('_', ' ')})`,
+              }))}
+            />
           </Section>
         )}
-        {['sent', 'acknowledged', 'part-received', 'received'].includes(order.state) && mayByRole(viewer, 'order:receive') && (
-          <Section title="Enter the invoice">
-            <InvoiceForm order={order} />
-          </Section>
-        )}
+        {['sent', 'acknowledged', 'part-received', 'received'].includes(order.state) &&
+          mayByRole(viewer, 'order:receive') && (
+            <Section title="Enter the invoice">
+              <InvoiceForm order={order} />
+            </Section>
+          )}
         <Section title="From draft to shelf">
           <Story entries={order.story} />
         </Section>

@@ -11,7 +11,10 @@ export default async function NewOrderPage() {
   const budgets = await listBudgets();
   return (
     <>
-      <PageHeader title="Draft an order" lead="To one supplier. What the shelves lack is planned for you under Shortages." />
+      <PageHeader
+        title="Draft an order"
+        lead="To one supplier. What the shelves lack is planned for you under Shortages."
+      />
       <OrderForm budgets={budgets.map(({ id, name, year }) => ({ id, words: `${name} ${year}` }))} />
     </>
   );

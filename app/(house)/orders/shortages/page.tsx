@@ -13,17 +13,38 @@ export const metadata: Metadata = { title: 'Shortages' };
 
 export default async function ShortagesPage() {
   const viewer = await pageViewer('order:read');
-  const [open, budgets] = await Promise.all([listShortages(viewer, { page: 1, pageSize: 1, sort: 'orderBy', search: '', format: 'json', state: 'open' }), listBudgets()]);
+  const [open, budgets] = await Promise.all([
+    listShortages(viewer, {
+      page: 1,
+      pageSize: 1,
+      sort: 'orderBy',
+      search: '',
+      format: 'json',
+      state: 'open',
+    }),
+    listBudgets(),
+  ]);
   return (
     <>
-      <PageHeader title={open.total === 0 ? 'Nothing waits to be ordered' : open.total === 1 ? '1 thing is short and not ordered' : `${open.total} things are short and not ordered`} />
+      <PageHeader
+        title={
+          open.total === 0
+            ? 'Nothing waits to be ordered'
+            : open.total === 1
+              ? '1 thing is short and not ordered'
+              : `${open.total} things are short and not ordered`
+        }
+      />
       <OrderTabs here="/orders/shortages" />
       <Section title="What is short">
         <ShortageList />
       </Section>
       {open.total > 0 && (
         <Section title="What to order, at least cost">
-          <ProposalView budgets={budgets.map(({ id, name, year }) => ({ id, words: `${name} ${year}` }))} mayDraft={mayByRole(viewer, 'order:draft')} />
+          <ProposalView
+            budgets={budgets.map(({ id, name, year }) => ({ id, words: `${name} ${year}` }))}
+            mayDraft={mayByRole(viewer, 'order:draft')}
+          />
         </Section>
       )}
     </>

@@ -18,7 +18,18 @@ import { getRequest } from '@/lib/services/requests';
 export const metadata: Metadata = { title: 'Request' };
 
 /** How many of the four steps are behind a request. */
-const STEPS_DONE: Readonly<Record<RequestState, number>> = { draft: 0, asked: 1, 'in-review': 1, returned: 1, agreed: 2, 'in-work': 2, ready: 3, 'handed-over': 4, closed: 4, withdrawn: 0 };
+const STEPS_DONE: Readonly<Record<RequestState, number>> = {
+  draft: 0,
+  asked: 1,
+  'in-review': 1,
+  returned: 1,
+  agreed: 2,
+  'in-work': 2,
+  ready: 3,
+  'handed-over': 4,
+  closed: 4,
+  withdrawn: 0,
+};
 
 export default async function RequestPage({ params }: PageProps<'/requests/[id]'>) {
   const viewer = await pageViewer('request:read');
@@ -45,7 +56,16 @@ export default async function RequestPage({ params }: PageProps<'/requests/[id]'
       />
       {review && review.state !== 'lapsed' && (
         <div className="mb-6">
-          <Alert tone={review.state === 'waiting' ? 'attention' : review.state.startsWith('agreed') ? 'done' : 'stop'} title={review.state === 'waiting' ? 'A safety officer must judge this plan' : `Safety: ${stateWords(review.state)}`}>
+          <Alert
+            tone={
+              review.state === 'waiting' ? 'attention' : review.state.startsWith('agreed') ? 'done' : 'stop'
+            }
+            title={
+              review.state === 'waiting'
+                ? 'A safety officer must judge this plan'
+                : `Safety: ${stateWords(review.state)}`
+            }
+          >
             {review.decisionText && <p>{review.decisionText}</p>}
             {review.conditions.length > 0 && (
               <ul className="list-disc pl-5">
@@ -65,7 +85,9 @@ export default async function RequestPage({ params }: PageProps<'/requests/[id]'
             <li key={index} className="flex flex-wrap justify-between gap-x-4 border-b py-2">
               <span className="font-semibold">{request.lineNames[index]}</span>
               <span className="font-mono text-soft">
-                {line.kind === 'solution' ? `${line.volumePerBenchMl} mL per bench, ${line.spareBenches} to spare` : `shown ${line.performances === 1 ? 'once' : `${line.performances} times`}`}
+                {line.kind === 'solution'
+                  ? `${line.volumePerBenchMl} mL per bench, ${line.spareBenches} to spare`
+                  : `shown ${line.performances === 1 ? 'once' : `${line.performances} times`}`}
               </span>
             </li>
           ))}

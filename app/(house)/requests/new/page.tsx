@@ -15,14 +15,24 @@ export default async function NewRequestPage({ searchParams }: PageProps<'/reque
   const sessions = await sessionChoices(viewer);
   return (
     <>
-      <PageHeader title="What does the session need?" lead="Solutions for every bench, and demonstrations. What they will do is worked out beside them." />
+      <PageHeader
+        title="What does the session need?"
+        lead="Solutions for every bench, and demonstrations. What they will do is worked out beside them."
+      />
       <StepStrip done={0} now="being written" />
       {sessions.length === 0 ? (
-        <EmptyState title="You have no session ahead" action={<LinkButton href="/sessions/new">Make a session</LinkButton>}>
+        <EmptyState
+          title="You have no session ahead"
+          action={<LinkButton href="/sessions/new">Make a session</LinkButton>}
+        >
           A request belongs to a session: a course, a room and an hour.
         </EmptyState>
       ) : (
-        <RequestForm sessions={sessions} sessionId={typeof session === 'string' ? session : ''} request={null} />
+        <RequestForm
+          sessions={sessions}
+          sessionId={typeof session === 'string' ? session : ''}
+          request={null}
+        />
       )}
     </>
   );

@@ -48,7 +48,9 @@ export default async function SessionPage({ params }: PageProps<'/sessions/[id]'
           </Section>
           <Section title="Requests">
             {session.requests.length === 0 ? (
-              <EmptyState title="Nothing is asked for yet">Solutions and demonstrations for this session are asked for in a request.</EmptyState>
+              <EmptyState title="Nothing is asked for yet">
+                Solutions and demonstrations for this session are asked for in a request.
+              </EmptyState>
             ) : (
               <ul>
                 {session.requests.map((request) => (

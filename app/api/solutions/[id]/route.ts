@@ -3,4 +3,6 @@ import { solutionEndpoints } from '@/lib/schemas/solutions';
 import { getSolution, updateSolution } from '@/lib/services/solutions';
 
 export const GET = route(solutionEndpoints.read, ({ viewer, params }) => getSolution(viewer, params.id));
-export const PATCH = route(solutionEndpoints.update, ({ viewer, params, body }) => updateSolution(viewer, params.id, body));
+export const PATCH = route(solutionEndpoints.update, ({ viewer, params, body }) =>
+  updateSolution(viewer, params.id, body),
+);

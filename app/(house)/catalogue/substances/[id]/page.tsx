@@ -38,9 +38,20 @@ export default async function SubstancePage({ params }: PageProps<'/catalogue/su
         <Section title="Identity">
           <DefinitionList
             items={[
-              ['CAS', <span key="cas" className="font-mono">{substance.cas}</span>],
-              ['Molar mass', substance.molarMassGPerMol === null ? 'none' : `${substance.molarMassGPerMol} g/mol`],
-              ['Sold as', `${substance.form}${known?.assayPercent ? `, ${known.assayPercent} %` : ''}${known?.densityGPerMl ? `, ${known.densityGPerMl} g/mL` : ''}`],
+              [
+                'CAS',
+                <span key="cas" className="font-mono">
+                  {substance.cas}
+                </span>,
+              ],
+              [
+                'Molar mass',
+                substance.molarMassGPerMol === null ? 'none' : `${substance.molarMassGPerMol} g/mol`,
+              ],
+              [
+                'Sold as',
+                `${substance.form}${known?.assayPercent ? `, ${known.assayPercent} %` : ''}${known?.densityGPerMl ? `, ${known.densityGPerMl} g/mL` : ''}`,
+              ],
               ['In stock', substance.inStock],
               ['Stands with', substance.storageGroup.replaceAll('_', ' ')],
               ['UN number', hazards?.unNumber ?? 'none'],
@@ -50,7 +61,11 @@ export default async function SubstancePage({ params }: PageProps<'/catalogue/su
           />
         </Section>
         <Section title="Hazards as sold">
-          {hazards && hazards.classes.length > 0 ? <p>{hazards.classes.join('; ')}</p> : <p>None known here; that is no proof of safety.</p>}
+          {hazards && hazards.classes.length > 0 ? (
+            <p>{hazards.classes.join('; ')}</p>
+          ) : (
+            <p>None known here; that is no proof of safety.</p>
+          )}
           {hazards && hazards.euh.length > 0 && <p className="font-mono">{hazards.euh.join(', ')}</p>}
           {hazards && <p className="mt-2 text-sm text-soft">Source: {hazards.source}</p>}
           {hazards && hazards.groups.length > 0 && (
@@ -71,16 +86,26 @@ export default async function SubstancePage({ params }: PageProps<'/catalogue/su
                 <li key={component} className="flex gap-3 border-b py-1.5">
                   <span className="w-10 text-right font-mono">{count}</span>
                   <Formula id={component} />
-                  <Link href={`/catalogue/species?component=${encodeURIComponent(component)}` as Route} className="ml-auto">
+                  <Link
+                    href={`/catalogue/species?component=${encodeURIComponent(component)}` as Route}
+                    className="ml-auto"
+                  >
                     its constants
                   </Link>
                 </li>
               ))}
             </ul>
           ) : (
-            <p>It stands outside the equilibrium model: inert in the computation, but screened for hazards.</p>
+            <p>
+              It stands outside the equilibrium model: inert in the computation, but screened for hazards.
+            </p>
           )}
-          {known?.releases && Object.keys(known.releases).every((component) => findReaction(component) === null) && <p className="mt-2 text-sm text-soft">Only master components; the species they form are listed with their sources.</p>}
+          {known?.releases &&
+            Object.keys(known.releases).every((component) => findReaction(component) === null) && (
+              <p className="mt-2 text-sm text-soft">
+                Only master components; the species they form are listed with their sources.
+              </p>
+            )}
         </Section>
         <Section title="Recipes that use it">
           {recipes.length === 0 ? (

@@ -27,7 +27,11 @@ export default async function EditRequestPage({ params }: PageProps<'/requests/[
           </Alert>
         </div>
       )}
-      <RequestForm sessions={[{ id: session.id, words, benches: session.benches }]} sessionId={session.id} request={request} />
+      <RequestForm
+        sessions={[{ id: session.id, words, benches: session.benches }]}
+        sessionId={session.id}
+        request={request}
+      />
     </>
   );
 }

@@ -2,4 +2,6 @@ import { route } from '@/lib/http/route';
 import { orderEndpoints } from '@/lib/schemas/orders';
 import { cancelOrder } from '@/lib/services/orders';
 
-export const POST = route(orderEndpoints.cancel, ({ viewer, params, body }) => cancelOrder(viewer, params.id, body));
+export const POST = route(orderEndpoints.cancel, ({ viewer, params, body }) =>
+  cancelOrder(viewer, params.id, body),
+);

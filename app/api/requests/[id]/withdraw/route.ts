@@ -2,4 +2,6 @@ import { route } from '@/lib/http/route';
 import { requestEndpoints } from '@/lib/schemas/requests';
 import { withdrawRequest } from '@/lib/services/requests';
 
-export const POST = route(requestEndpoints.withdraw, ({ viewer, params, body }) => withdrawRequest(viewer, params.id, body));
+export const POST = route(requestEndpoints.withdraw, ({ viewer, params, body }) =>
+  withdrawRequest(viewer, params.id, body),
+);
