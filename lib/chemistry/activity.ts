@@ -100,7 +100,6 @@ export function activityLaw(
   model: ActivityModel,
   dissolved: readonly Solute[],
   soluteCount: number,
-  volumeL: number,
   temperatureC: number,
 ): ActivityLaw | null {
   if (model === 'ideal' || dissolved.every(({ charge }) => charge === 0)) return null;
@@ -116,13 +115,15 @@ export function activityLaw(
   );
   const kindOf = Int32Array.from(dissolved, (solute) => keys.indexOf(keyOf(solute)));
   const strengthPerMol = new Float64Array(soluteCount);
-  dissolved.forEach(({ charge }, index) => {
-    strengthPerMol[index] = (charge * charge) / (2 * volumeL);
-  });
   const values = new Float64Array(kinds.length);
   const slopes = new Float64Array(kinds.length);
   return {
     strengthPerMol,
+    setVolume(volumeL) {
+      dissolved.forEach(({ charge }, index) => {
+        strengthPerMol[index] = (charge * charge) / (2 * volumeL);
+      });
+    },
     fill(strength, out, slope) {
       const root = Math.sqrt(strength);
       kinds.forEach((kind, index) => {

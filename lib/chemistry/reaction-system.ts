@@ -1,5 +1,5 @@
 import { chargeOf, massOf, molarMass, withoutPhase } from './formula';
-import { findReaction, findSpecies, formsOnTheBench, reactionsAmong } from './species-catalogue';
+import { ALL_SPECIES, findReaction, findSpecies, formsOnTheBench, reactionsAmong } from './species-catalogue';
 import { logKwShift, vantHoff } from './temperature';
 import type { Reaction, SpeciationInput } from './types';
 
@@ -12,8 +12,6 @@ export interface SystemComponent {
   readonly id: string;
   readonly charge: number;
   readonly ionSizePm: number | null;
-  /** mol; of H+ possibly negative. */
-  readonly total: number;
 }
 
 /** A mixture as a set of components and reactions, at its temperature. */
@@ -71,7 +69,6 @@ export function buildSystem(input: SpeciationInput): ReactionSystem {
       id,
       charge: speciesCharge(id),
       ionSizePm: findSpecies(id)?.ionSizePm ?? null,
-      total: input.amounts[id] ?? 0,
     })),
     aqueous: described.filter(({ phase }) => phase === 'aq'),
     solids: described.filter(({ phase }) => phase === 's' || phase === 'l'),
@@ -142,10 +139,12 @@ function speciesCharge(id: string): number {
   return findSpecies(id)?.charge ?? chargeOf(id);
 }
 
+const massByCatalogueId = new Map(ALL_SPECIES.map(({ id, composition }) => [id, massOf(composition)]));
+
 /** g/mol of a species; null where its id is a name and no formula. */
 export function molarMassOf(id: string): number | null {
-  const known = findSpecies(id);
-  if (known) return massOf(known.composition);
+  const known = massByCatalogueId.get(id);
+  if (known !== undefined) return known;
   try {
     return molarMass(withoutPhase(id));
   } catch (error) {

@@ -133,9 +133,29 @@ export function formsOnTheBench(reaction: CatalogueReaction): boolean {
   return !reaction.flags.some((flag) => NOT_ON_THE_BENCH.includes(flag));
 }
 
+/** Masters a reaction asks for, besides water and H+, which are always there. */
+function mastersOf({ stoich }: CatalogueReaction): string[] {
+  return Object.keys(stoich).filter((id) => id !== 'H2O' && id !== 'H+');
+}
+
+interface FiledReaction {
+  readonly reaction: CatalogueReaction;
+  readonly masters: readonly string[];
+}
+
+/** The reactions filed under the first master they ask for, in the order of the catalogue. */
+const reactionsByMaster = ALL_REACTIONS.reduce((files, reaction) => {
+  const masters = mastersOf(reaction);
+  const file = files.get(masters[0] ?? '') ?? [];
+  file.push({ reaction, masters });
+  return files.set(masters[0] ?? '', file);
+}, new Map<string, FiledReaction[]>());
+
 /** The reactions whose masters are all among the given components; H+ and water are always there. */
 export function reactionsAmong(components: ReadonlySet<string>): CatalogueReaction[] {
-  return ALL_REACTIONS.filter(({ stoich }) =>
-    Object.keys(stoich).every((id) => id === 'H2O' || id === 'H+' || components.has(id)),
+  return ['', ...components].flatMap((id) =>
+    (reactionsByMaster.get(id) ?? [])
+      .filter(({ masters }) => masters.every((master) => components.has(master)))
+      .map(({ reaction }) => reaction),
   );
 }

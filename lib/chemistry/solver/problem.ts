@@ -2,6 +2,7 @@
 export interface ActivityLaw {
   /** z² / 2V of each solute: ionic strength, mol/L, per mol of it; 0 for gases. */
   readonly strengthPerMol: Float64Array;
+  setVolume(volumeL: number): void;
   /** Writes ln γ of each solute and its derivative by the ionic strength. */
   fill(ionicStrength: number, lnGamma: Float64Array, slope: Float64Array): void;
 }
