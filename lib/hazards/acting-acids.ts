@@ -19,7 +19,10 @@ const ACID_BELOW_PH = 5;
 
 /** Equilibrium of some solutes in a volume; null where nothing dissolved is modelled or none was found. */
 function stateOf(solutes: readonly ScreenedSolute[], volumeMl: number): EquilibriumState | null {
-  const parts = solutes.map(({ substance, amountMol }) => ({ substance: substance.id, molarity: (amountMol * 1000) / volumeMl }));
+  const parts = solutes.map(({ substance, amountMol }) => ({
+    substance: substance.id,
+    molarity: (amountMol * 1000) / volumeMl,
+  }));
   const amounts = componentAmounts({ label: '', solutes: parts, volumeMl });
   if (Object.keys(amounts).length === 0) return null;
   const outcome = speciate({
@@ -46,12 +49,20 @@ function molarityOf(state: EquilibriumState | null, id: string): number {
  *
  * @param group - the reactive group of the source, such as `cyanide`
  */
-export function actsAsAcid(group: string, solutes: readonly ScreenedSolute[], volumeMl: number, state: EquilibriumState | null): boolean {
+export function actsAsAcid(
+  group: string,
+  solutes: readonly ScreenedSolute[],
+  volumeMl: number,
+  state: EquilibriumState | null,
+): boolean {
   const others = solutes.filter(({ groups }) => !groups.has(group));
   if (others.length === 0) return false;
   const freed = FREED_SPECIES[group];
   if (freed && state) {
-    const alone = stateOf(solutes.filter(({ groups }) => groups.has(group)), volumeMl);
+    const alone = stateOf(
+      solutes.filter(({ groups }) => groups.has(group)),
+      volumeMl,
+    );
     return molarityOf(state, freed) > FREED_BY_FACTOR * molarityOf(alone, freed);
   }
   const rest = stateOf(others, volumeMl);

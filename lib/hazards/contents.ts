@@ -59,7 +59,12 @@ export function screenedBottle({ label, volumeMl, solutes }: BottleContent): Scr
     const substance = findSubstance(idOrCas);
     if (!substance) throw new RangeError(`${idOrCas} is not in the catalogue`);
     if (!findSubstanceHazards(substance.id)) unknown.push(substance.name);
-    return { substance, molarity, amountMol: (molarity * volumeMl) / 1000, groups: groupsAt(substance.id, molarity) };
+    return {
+      substance,
+      molarity,
+      amountMol: (molarity * volumeMl) / 1000,
+      groups: groupsAt(substance.id, molarity),
+    };
   });
   return { label, volumeMl, solutes: screened, unknown };
 }

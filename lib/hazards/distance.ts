@@ -35,25 +35,42 @@ const GRAVE = gravityOf('review');
  * @param suspects - what may be added; their own volume is not read
  * @throws RangeError for an unknown substance
  */
-export function distancesToDanger(portions: readonly BottleContent[], suspects: readonly BottleContent[], room: Room): Distance[] {
+export function distancesToDanger(
+  portions: readonly BottleContent[],
+  suspects: readonly BottleContent[],
+  room: Room,
+): Distance[] {
   const before = gravityOf(decide(findingsWith(portions, null, 0, room)));
   return suspects
     .map((suspect) => distanceTo(portions, suspect, Math.min(GRAVE, before - 1), room))
     .sort((a, b) => (a.volumeMl ?? Infinity) - (b.volumeMl ?? Infinity));
 }
 
-function findingsWith(portions: readonly BottleContent[], suspect: BottleContent | null, volumeMl: number, room: Room): readonly Finding[] {
+function findingsWith(
+  portions: readonly BottleContent[],
+  suspect: BottleContent | null,
+  volumeMl: number,
+  room: Room,
+): readonly Finding[] {
   const poured = suspect ? [...portions, { ...suspect, volumeMl }] : portions;
   const mix = pourMix({ portions: poured, activity: 'davies', temperatureC: 25 });
   return mix.converged ? screenMix(poured, mix, room) : [];
 }
 
-function distanceTo(portions: readonly BottleContent[], suspect: BottleContent, threshold: number, room: Room): Distance {
-  const crosses = (volumeMl: number) => gravityOf(decide(findingsWith(portions, suspect, volumeMl, room))) <= threshold;
+function distanceTo(
+  portions: readonly BottleContent[],
+  suspect: BottleContent,
+  threshold: number,
+  room: Room,
+): Distance {
+  const crosses = (volumeMl: number) =>
+    gravityOf(decide(findingsWith(portions, suspect, volumeMl, room))) <= threshold;
   const none = { label: suspect.label, volumeMl: null, decision: null, finding: null };
   if (threshold < 0) return none;
   const rungs = Math.ceil(Math.log10(MOST_ML / LEAST_ML) * STEPS_PER_DECADE);
-  const ladder = Array.from({ length: rungs + 1 }, (_, rung) => Math.min(MOST_ML, LEAST_ML * 10 ** (rung / STEPS_PER_DECADE)));
+  const ladder = Array.from({ length: rungs + 1 }, (_, rung) =>
+    Math.min(MOST_ML, LEAST_ML * 10 ** (rung / STEPS_PER_DECADE)),
+  );
   const first = ladder.findIndex(crosses);
   if (first < 0) return none;
   let above = ladder[first] ?? MOST_ML;

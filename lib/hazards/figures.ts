@@ -6,6 +6,8 @@ export function figure(value: number): string {
   const [mantissa = '', exponentText = '0'] = value.toExponential(2).split('e');
   const exponent = Number(exponentText);
   if (exponent >= -3 && exponent < 6) return String(Number(`${mantissa}e${exponent}`));
-  const raised = String(exponent).replaceAll(/\d/g, (digit) => SUPERSCRIPTS[Number(digit)] ?? digit).replace('-', '⁻');
+  const raised = String(exponent)
+    .replaceAll(/\d/g, (digit) => SUPERSCRIPTS[Number(digit)] ?? digit)
+    .replace('-', '⁻');
   return `${mantissa} × 10${raised}`;
 }

@@ -19,15 +19,28 @@ export function ppmIn(volumeM3: number, mol: number): number {
 function availableMol(reactant: string, solutes: readonly ScreenedSolute[]): number | null {
   if (reactant === 'H+') {
     const acids = solutes.filter(({ groups }) => !groups.has('ammonia_or_ammonium'));
-    return positiveOrUnknown(acids.reduce((sum, { substance, amountMol }) => sum + Math.max(0, substance.releases?.['H+'] ?? 0) * amountMol, 0));
+    return positiveOrUnknown(
+      acids.reduce(
+        (sum, { substance, amountMol }) => sum + Math.max(0, substance.releases?.['H+'] ?? 0) * amountMol,
+        0,
+      ),
+    );
   }
   if (reactant === 'OH-') {
-    return solutes.reduce((sum, { substance, amountMol }) => sum + Math.max(0, -(substance.releases?.['H+'] ?? 0)) * amountMol, 0);
+    return solutes.reduce(
+      (sum, { substance, amountMol }) => sum + Math.max(0, -(substance.releases?.['H+'] ?? 0)) * amountMol,
+      0,
+    );
   }
-  const released = solutes.reduce((sum, { substance, amountMol }) => sum + (substance.releases?.[component(reactant)] ?? 0) * amountMol, 0);
+  const released = solutes.reduce(
+    (sum, { substance, amountMol }) => sum + (substance.releases?.[component(reactant)] ?? 0) * amountMol,
+    0,
+  );
   if (released > 0) return released / (reactant === 'Cr2O7-2' ? 2 : 1);
   const groups = GROUPS.filter(({ limiting }) => limiting.includes(reactant)).map(({ id }) => id);
-  const grouped = solutes.filter((solute) => groups.some((id) => solute.groups.has(id))).reduce((sum, { amountMol }) => sum + amountMol, 0);
+  const grouped = solutes
+    .filter((solute) => groups.some((id) => solute.groups.has(id)))
+    .reduce((sum, { amountMol }) => sum + amountMol, 0);
   return grouped > 0 ? grouped : null;
 }
 
@@ -45,7 +58,10 @@ function component(reactant: string): string {
  * The most gas the amounts present can give by the stoichiometry: the scarcest known reactant decides.
  * @returns mol by gas id, nothing where no reactant can be counted
  */
-export function worstCase(stoichiometry: GasStoichiometry, solutes: readonly ScreenedSolute[]): Readonly<Record<string, number>> {
+export function worstCase(
+  stoichiometry: GasStoichiometry,
+  solutes: readonly ScreenedSolute[],
+): Readonly<Record<string, number>> {
   const { consumes, limiting, gives } = stoichiometry;
   const limitingCount = consumes[limiting] ?? 1;
   let extent = Infinity;
@@ -54,7 +70,9 @@ export function worstCase(stoichiometry: GasStoichiometry, solutes: readonly Scr
     if (mol !== null) extent = Math.min(extent, mol / count);
   }
   if (!Number.isFinite(extent) || extent <= 0) return {};
-  return Object.fromEntries(Object.entries(gives).map(([gas, perLimiting]) => [gas, perLimiting * limitingCount * extent]));
+  return Object.fromEntries(
+    Object.entries(gives).map(([gas, perLimiting]) => [gas, perLimiting * limitingCount * extent]),
+  );
 }
 
 /** Named limits, the lowest short-term one first. */
@@ -77,7 +95,13 @@ function limitsOf(gas: Gas): { readonly strictest: GasLimit | null; readonly lim
  * @param liquidMl - volume of the liquid
  * @param state - equilibrium of the mix; null where it is not known
  */
-export function estimateGas(gasId: string, mol: number, liquidMl: number, state: EquilibriumState | null, room: Room): GasEstimate | null {
+export function estimateGas(
+  gasId: string,
+  mol: number,
+  liquidMl: number,
+  state: EquilibriumState | null,
+  room: Room,
+): GasEstimate | null {
   const gas = findGas(gasId);
   if (!gas) return null;
   const { strictest, limits } = limitsOf(gas);
@@ -101,7 +125,8 @@ const BASIC_GASES = new Set(['NH3']);
 export function predictedPpm(gas: Gas, mol: number, liquidMl: number, pH: number | null): number | null {
   if (gas.aqueousOverGas === null) return null;
   if (gas.pKa !== null && pH === null) return null;
-  const away = gas.pKa === null || pH === null ? -Infinity : BASIC_GASES.has(gas.id) ? gas.pKa - pH : pH - gas.pKa;
+  const away =
+    gas.pKa === null || pH === null ? -Infinity : BASIC_GASES.has(gas.id) ? gas.pKa - pH : pH - gas.pKa;
   const neutralShare = 1 / (1 + 10 ** away);
   const liquidM3 = liquidMl * 1e-6;
   const molPerM3 = mol / (BREATHING_ZONE_M3 + (gas.aqueousOverGas * liquidM3) / neutralShare);

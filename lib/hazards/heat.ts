@@ -8,7 +8,17 @@ const NEUTRALISATION_KJ_PER_MOL = 55.8;
 const HEAT_CAPACITY_OF_WATER = 4.18;
 /** Heat capacity of sulfuric acid by % by mass, J/(g K), rounded handbook values from memory, good to about a tenth. */
 const HEAT_CAPACITY_OF_SULFURIC: readonly (readonly [percent: number, joules: number])[] = [
-  [0, HEAT_CAPACITY_OF_WATER], [10, 3.8], [20, 3.4], [30, 3], [40, 2.7], [50, 2.4], [60, 2.1], [70, 1.9], [80, 1.75], [90, 1.55], [98, 1.42],
+  [0, HEAT_CAPACITY_OF_WATER],
+  [10, 3.8],
+  [20, 3.4],
+  [30, 3],
+  [40, 2.7],
+  [50, 2.4],
+  [60, 2.1],
+  [70, 1.9],
+  [80, 1.75],
+  [90, 1.55],
+  [98, 1.42],
 ];
 
 /**
@@ -16,11 +26,24 @@ const HEAT_CAPACITY_OF_SULFURIC: readonly (readonly [percent: number, joules: nu
  * textbook table.
  */
 const SULFURIC_DILUTION: readonly (readonly [r: number, kJ: number])[] = [
-  [0, 0], [0.5, 15.73], [1, 28.07], [1.5, 36.9], [2, 41.92], [3, 48.99], [4, 54.06], [5, 58.03], [10, 67.03],
-  [20, 71.5], [25, 72.3], [50, 73.34], [100, 73.97], [1000, 78.58],
+  [0, 0],
+  [0.5, 15.73],
+  [1, 28.07],
+  [1.5, 36.9],
+  [2, 41.92],
+  [3, 48.99],
+  [4, 54.06],
+  [5, 58.03],
+  [10, 67.03],
+  [20, 71.5],
+  [25, 72.3],
+  [50, 73.34],
+  [100, 73.97],
+  [1000, 78.58],
 ];
 /** g/mL of sulfuric acid solutions by mol/L, rounded handbook values from memory; only the water content rests on it. */
-const sulfuricDensity = (molarity: number) => 1 + 0.06 * Math.min(molarity, 14) + 0.001 * Math.max(0, molarity - 14);
+const sulfuricDensity = (molarity: number) =>
+  1 + 0.06 * Math.min(molarity, 14) + 0.001 * Math.max(0, molarity - 14);
 
 function interpolated(table: readonly (readonly [number, number])[], at: number): number {
   const above = table.findIndex(([x]) => x >= at);
@@ -38,7 +61,8 @@ export function neutralisationKJ(bottles: readonly ScreenedBottle[]): number {
     for (const { substance, amountMol, groups } of solutes) {
       const hydrogen = substance.releases?.['H+'] ?? 0;
       if (hydrogen > 0 && !groups.has('ammonia_or_ammonium')) acid += hydrogen * amountMol;
-      if (hydrogen < 0 || groups.has('ammonia_or_ammonium')) base += Math.max(-hydrogen, groups.has('ammonia_or_ammonium') && hydrogen === 0 ? 1 : 0) * amountMol;
+      if (hydrogen < 0 || groups.has('ammonia_or_ammonium'))
+        base += Math.max(-hydrogen, groups.has('ammonia_or_ammonium') && hydrogen === 0 ? 1 : 0) * amountMol;
     }
   }
   return Math.min(acid, base) * NEUTRALISATION_KJ_PER_MOL;
@@ -53,7 +77,10 @@ export function dilutionKJ(bottles: readonly ScreenedBottle[], finalVolumeMl: nu
       const gramsAcid = amountMol * substance.molarMassGPerMol;
       const waterBefore = Math.max(0, volumeMl * sulfuricDensity(molarity) - gramsAcid) / 18.015;
       const waterAfter = waterBefore + (finalVolumeMl - volumeMl) / 18.015;
-      heat += amountMol * (interpolated(SULFURIC_DILUTION, waterAfter / amountMol) - interpolated(SULFURIC_DILUTION, waterBefore / amountMol));
+      heat +=
+        amountMol *
+        (interpolated(SULFURIC_DILUTION, waterAfter / amountMol) -
+          interpolated(SULFURIC_DILUTION, waterBefore / amountMol));
     }
   }
   return heat;
@@ -75,7 +102,10 @@ function heatCapacityJPerK(bottles: readonly ScreenedBottle[], finalVolumeMl: nu
 
 /** Adiabatic rise in K, all heat staying in the liquid; heats of diluting other acids and bases are left out. */
 export function adiabaticRiseK(bottles: readonly ScreenedBottle[], finalVolumeMl: number): number {
-  return ((neutralisationKJ(bottles) + dilutionKJ(bottles, finalVolumeMl)) * 1000) / heatCapacityJPerK(bottles, finalVolumeMl);
+  return (
+    ((neutralisationKJ(bottles) + dilutionKJ(bottles, finalVolumeMl)) * 1000) /
+    heatCapacityJPerK(bottles, finalVolumeMl)
+  );
 }
 
 /** How grave a rise is; thresholds are ours, to be confirmed locally. */
@@ -100,9 +130,13 @@ export function heatFinding(bottles: readonly ScreenedBottle[], mix: Mix, startC
     reason: `Neutralisation and dilution set free enough heat for a rise of about ${Math.round(rise)} K, to ${Math.round(hottest)} °C, if none is lost.`,
     mustNot: 'Do not pour all at once, and never water into strong acid.',
     gas: null,
-    precautions: ['Pour in portions with stirring and cooling', 'Eye protection, gloves, a vessel twice as large as the mix'],
+    precautions: [
+      'Pour in portions with stirring and cooling',
+      'Eye protection, gloves, a vessel twice as large as the mix',
+    ],
     alternative: 'Weaker solutions give the same change with less heat',
-    source: 'Heat of neutralisation 55.8 kJ/mol (textbook value); dilution table of sulfuric acid (from memory)',
+    source:
+      'Heat of neutralisation 55.8 kJ/mol (textbook value); dilution table of sulfuric acid (from memory)',
     concerns: bottles.map(({ label }) => label),
   };
 }

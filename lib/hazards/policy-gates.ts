@@ -16,15 +16,38 @@ const GATES: readonly Gate[] = [
   { id: 'cyanide', title: 'Cyanide', severity: 'review', trips: ({ groups }) => groups.has('cyanide') },
   { id: 'azide', title: 'Azide', severity: 'review', trips: ({ groups }) => groups.has('azide') },
   { id: 'mercury', title: 'Mercury', severity: 'review', trips: ({ groups }) => groups.has('mercury_salt') },
-  { id: 'chromium6', title: 'Chromium(VI)', severity: 'controlled', trips: ({ groups, molarity }) => groups.has('chromate') && molarity > 0.1 },
-  { id: 'lead_cadmium', title: 'Lead or cadmium', severity: 'controlled', trips: ({ groups, molarity, substance }) => (groups.has('lead_salt') && molarity > 0.1) || substance.id.startsWith('cadmium') },
-  { id: 'conc_ox_acid', title: 'Strong oxidising acid', severity: 'review', trips: ({ substance, molarity }) => (substance.id === 'nitric-acid' && molarity > 8) || substance.id === 'perchloric-acid' },
-  { id: 'perchlorate', title: 'Perchlorate', severity: 'review', trips: ({ groups, molarity }) => groups.has('perchlorate') && molarity > 0.1 },
+  {
+    id: 'chromium6',
+    title: 'Chromium(VI)',
+    severity: 'controlled',
+    trips: ({ groups, molarity }) => groups.has('chromate') && molarity > 0.1,
+  },
+  {
+    id: 'lead_cadmium',
+    title: 'Lead or cadmium',
+    severity: 'controlled',
+    trips: ({ groups, molarity, substance }) =>
+      (groups.has('lead_salt') && molarity > 0.1) || substance.id.startsWith('cadmium'),
+  },
+  {
+    id: 'conc_ox_acid',
+    title: 'Strong oxidising acid',
+    severity: 'review',
+    trips: ({ substance, molarity }) =>
+      (substance.id === 'nitric-acid' && molarity > 8) || substance.id === 'perchloric-acid',
+  },
+  {
+    id: 'perchlorate',
+    title: 'Perchlorate',
+    severity: 'review',
+    trips: ({ groups, molarity }) => groups.has('perchlorate') && molarity > 0.1,
+  },
   {
     id: 'silver_ammonia',
     title: 'Ammoniacal silver kept in a bottle',
     severity: 'stop',
-    trips: ({ groups }, { solutes }) => groups.has('silver_salt') && solutes.some((other) => other.groups.has('ammonia_or_ammonium')),
+    trips: ({ groups }, { solutes }) =>
+      groups.has('silver_salt') && solutes.some((other) => other.groups.has('ammonia_or_ammonium')),
   },
 ];
 

@@ -22,10 +22,20 @@ export type PreviewOutcome = MixPreview | (NotConverged & { readonly afterPortio
  * The whole answer about one mix.
  * @throws RangeError for an unknown substance or a volume that is not positive
  */
-export function previewMix({ portions, activity, temperatureC, room, slips = false }: PreviewInput): PreviewOutcome {
+export function previewMix({
+  portions,
+  activity,
+  temperatureC,
+  room,
+  slips = false,
+}: PreviewInput): PreviewOutcome {
   const mix = pourMix({ portions, activity, temperatureC });
   if (!mix.converged) return mix;
-  const findings = sortFindings([...screenMix(portions, mix, room), ...orderFindings(portions, mix, activity, temperatureC, room), ...screenPolicy(portions)]);
+  const findings = sortFindings([
+    ...screenMix(portions, mix, room),
+    ...orderFindings(portions, mix, activity, temperatureC, room),
+    ...screenPolicy(portions),
+  ]);
   return {
     finalVolumeMl: mix.finalVolumeMl,
     diluted: mix.diluted,
@@ -41,7 +51,9 @@ export function previewMix({ portions, activity, temperatureC, room, slips = fal
 
 /** Acids and bases that neutralised each other no longer count as what they were; the excess does. */
 function leftAfterNeutralising({ diluted }: Mix): Solute[] {
-  const protons = diluted.map(({ substance, molarity }) => (findSubstance(substance)?.releases?.['H+'] ?? 0) * molarity);
+  const protons = diluted.map(
+    ({ substance, molarity }) => (findSubstance(substance)?.releases?.['H+'] ?? 0) * molarity,
+  );
   const acid = protons.reduce((sum, value) => sum + Math.max(0, value), 0);
   const base = protons.reduce((sum, value) => sum + Math.max(0, -value), 0);
   const used = Math.min(acid, base);
@@ -55,8 +67,14 @@ function leftAfterNeutralising({ diluted }: Mix): Solute[] {
 const MOST_PORTIONS_FOR_ORDERS = 4;
 
 /** Findings that another order of pouring would add. */
-function orderFindings(portions: readonly BottleContent[], mix: Mix, activity: ActivityModel, temperatureC: number, room: Room): Finding[] {
-  if (portions.length < 3 || portions.length > MOST_PORTIONS_FOR_ORDERS) return [];
+function orderFindings(
+  portions: readonly BottleContent[],
+  mix: Mix,
+  activity: ActivityModel,
+  temperatureC: number,
+  room: Room,
+): Finding[] {
+  if (portions.length < 2 || portions.length > MOST_PORTIONS_FOR_ORDERS) return [];
   const known = new Set(screenMix(portions, mix, room).map(({ rule }) => rule));
   return permutations(portions)
     .slice(1)
@@ -76,5 +94,7 @@ function orderFindings(portions: readonly BottleContent[], mix: Mix, activity: A
 
 function permutations<T>(items: readonly T[]): T[][] {
   if (items.length <= 1) return [[...items]];
-  return items.flatMap((item, index) => permutations(items.filter((_, other) => other !== index)).map((rest) => [item, ...rest]));
+  return items.flatMap((item, index) =>
+    permutations(items.filter((_, other) => other !== index)).map((rest) => [item, ...rest]),
+  );
 }

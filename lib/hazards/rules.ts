@@ -53,8 +53,19 @@ function meets(rule: HazardRule, all: ReadonlySet<string>, { bottles, volumeMl, 
   const missing = rule.groups.filter((group) => !all.has(group));
   if (missing.length === 0) return true;
   const [source] = rule.groups;
-  if (missing.length > 1 || missing[0] !== 'acid_mineral_nonox' || rule.conditions.pHBelow === undefined || !source) return false;
-  return actsAsAcid(source, bottles.flatMap(({ solutes }) => solutes), volumeMl, state);
+  if (
+    missing.length > 1 ||
+    missing[0] !== 'acid_mineral_nonox' ||
+    rule.conditions.pHBelow === undefined ||
+    !source
+  )
+    return false;
+  return actsAsAcid(
+    source,
+    bottles.flatMap(({ solutes }) => solutes),
+    volumeMl,
+    state,
+  );
 }
 
 /** A condition that is not known counts as met, so that the graver of two variants is told. */
@@ -66,7 +77,8 @@ function holds(rule: HazardRule, meeting: Meeting): boolean {
   if (conditions.hotterThanC !== undefined && meeting.temperatureC <= conditions.hotterThanC) return false;
   if (conditions.coolerThanC !== undefined && meeting.temperatureC > conditions.coolerThanC) return false;
   const strongest = strengthOf(rule, meeting);
-  if (conditions.strongerThanMolarity !== undefined && strongest <= conditions.strongerThanMolarity) return false;
+  if (conditions.strongerThanMolarity !== undefined && strongest <= conditions.strongerThanMolarity)
+    return false;
   if (conditions.weakerThanMolarity !== undefined && strongest > conditions.weakerThanMolarity) return false;
   if (conditions.standing === 'over-half-a-year') return false;
   if (conditions.standing === 'over-an-hour' && !meeting.isKept) return false;
@@ -83,7 +95,9 @@ function strengthOf(rule: HazardRule, { bottles }: Meeting): number {
 }
 
 function isAcidPouredFirst(bottles: readonly ScreenedBottle[]): boolean {
-  const position = bottles.findIndex(({ solutes }) => solutes.some(({ groups }) => groups.has('concentrated_acid')));
+  const position = bottles.findIndex(({ solutes }) =>
+    solutes.some(({ groups }) => groups.has('concentrated_acid')),
+  );
   return position >= 0 && position < bottles.length - 1;
 }
 
@@ -93,9 +107,15 @@ function formHolds(form: string, { bottles }: Meeting, pH: number | null): boole
   const has = (test: (solute: ScreenedSolute) => boolean) => solutes.some(test);
   if (form === 'ammonia-solution') {
     const isFree = pH === null || pH >= FREE_AMMONIA_FROM_PH;
-    return has(({ substance }) => substance.id === 'ammonia-solution') || (isFree && has(({ groups }) => groups.has('ammonia_or_ammonium')));
+    return (
+      has(({ substance }) => substance.id === 'ammonia-solution') ||
+      (isFree && has(({ groups }) => groups.has('ammonia_or_ammonium')))
+    );
   }
-  if (form === 'ammonium-salt') return has(({ substance, groups }) => groups.has('ammonia_or_ammonium') && substance.id !== 'ammonia-solution');
+  if (form === 'ammonium-salt')
+    return has(
+      ({ substance, groups }) => groups.has('ammonia_or_ammonium') && substance.id !== 'ammonia-solution',
+    );
   return has(({ substance }) => substance.id === 'sodium-hydrogencarbonate');
 }
 
@@ -103,14 +123,27 @@ function fire(rule: HazardRule, meeting: Meeting): Firing {
   const solutes = meeting.bottles.flatMap((bottle) => bottle.solutes);
   const gas = gravestGas(rule, solutes, meeting);
   const escalated = gas && rule.severity !== 'stop' ? escalate(rule, gas) : rule.severity;
-  const named = meeting.bottles.filter(({ solutes: own }) => own.some((solute) => rule.groups.some((group) => group !== 'water' && solute.groups.has(group))));
-  const acidByName = meeting.bottles.some(({ solutes: own }) => own.some((solute) => solute.groups.has('acid_mineral_nonox')));
+  const named = meeting.bottles.filter(({ solutes: own }) =>
+    own.some((solute) => rule.groups.some((group) => group !== 'water' && solute.groups.has(group))),
+  );
+  const acidByName = meeting.bottles.some(({ solutes: own }) =>
+    own.some((solute) => solute.groups.has('acid_mineral_nonox')),
+  );
   const isActing = rule.groups.includes('acid_mineral_nonox') && !acidByName;
-  return { rule, severity: escalated, gas, concerns: (isActing ? meeting.bottles : named).map(({ label }) => label) };
+  return {
+    rule,
+    severity: escalated,
+    gas,
+    concerns: (isActing ? meeting.bottles : named).map(({ label }) => label),
+  };
 }
 
 /** Of the gases a rule can give, the one furthest above its limit. */
-function gravestGas(rule: HazardRule, solutes: readonly ScreenedSolute[], meeting: Meeting): GasEstimate | null {
+function gravestGas(
+  rule: HazardRule,
+  solutes: readonly ScreenedSolute[],
+  meeting: Meeting,
+): GasEstimate | null {
   const found = (rule.gas ?? []).flatMap((stoichiometry) =>
     Object.entries(worstCase(stoichiometry, solutes)).flatMap(([gasId, mol]) => {
       const estimate = estimateGas(gasId, mol, meeting.volumeMl, meeting.state, meeting.room);
@@ -121,14 +154,18 @@ function gravestGas(rule: HazardRule, solutes: readonly ScreenedSolute[], meetin
   return [...found].sort((a, b) => weight(b) - weight(a))[0] ?? null;
 }
 
-/** Raises a severity where the worst case passes limits, in the room or before the face. Never lowers one. */
+/**
+ * Raises a severity where the worst case passes limits, in the room or before the face. Never lowers one. Slow
+ * gases are judged by the room alone, since nobody breathes all of it at once.
+ */
 function escalate({ severity, isSlow }: HazardRule, estimate: GasEstimate): Severity {
   const gas = findGas(estimate.species);
   const limit = (kind: string) => gas?.limits.find((named) => named.kind === kind)?.ppm ?? Infinity;
-  let raised = severity;
-  if (estimate.ppmInRoom > limit('short-term') || estimate.ppmInRoom > limit('aegl-2') / 2) raised = graver(raised, isSlow ? 'controlled' : 'review');
-  if (estimate.ppmInBreathingZone > limit('idlh') || estimate.ppmInBreathingZone > limit('aegl-3')) raised = graver(raised, 'controlled');
-  return raised;
+  const fillsRoom = estimate.ppmInRoom > limit('short-term') || estimate.ppmInRoom > limit('aegl-2') / 2;
+  const fillsZone =
+    estimate.ppmInBreathingZone > limit('idlh') || estimate.ppmInBreathingZone > limit('aegl-3');
+  if (fillsRoom) return graver(severity, isSlow ? 'controlled' : 'review');
+  return fillsZone && !isSlow ? graver(severity, 'controlled') : severity;
 }
 
 function graver(a: Severity, b: Severity): Severity {
@@ -137,7 +174,9 @@ function graver(a: Severity, b: Severity): Severity {
 
 /** What meets, in words. */
 export function meetingTitle(rule: HazardRule): string {
-  const names = rule.groups.filter((group) => group !== 'water').map((group) => groupName(group).toLowerCase());
+  const names = rule.groups
+    .filter((group) => group !== 'water')
+    .map((group) => groupName(group).toLowerCase());
   return sentenceCase(names.join(' with '));
 }
 

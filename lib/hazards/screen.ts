@@ -15,7 +15,10 @@ const ROOM_TEMPERATURE_C = 25;
 
 /** The gravest finding decides; notes alone leave it clear. */
 export function decide(findings: readonly Finding[]): Decision {
-  const gravest = findings.reduce((least, { severity }) => Math.min(least, gravityOf(severity)), gravityOf('clear'));
+  const gravest = findings.reduce(
+    (least, { severity }) => Math.min(least, gravityOf(severity)),
+    gravityOf('clear'),
+  );
   return DECISIONS[gravest] ?? 'clear';
 }
 
@@ -32,7 +35,11 @@ export function sortFindings(findings: readonly Finding[]): Finding[] {
     });
 }
 
-function findingOf({ rule, severity, gas, concerns }: Firing, scope: Finding['scope'], reason: string): Finding {
+function findingOf(
+  { rule, severity, gas, concerns }: Firing,
+  scope: Finding['scope'],
+  reason: string,
+): Finding {
   return {
     rule: rule.id,
     severity,
@@ -58,14 +65,30 @@ function withGas({ rule, gas }: Firing): string {
  * Findings on the portions as poured, at the composition computed after every pour.
  * @param isKept - true where the mix is to stand, overnight or in a bottle
  */
-export function screenMix(portions: readonly BottleContent[], mix: Mix, room: Room, isKept = false): Finding[] {
+export function screenMix(
+  portions: readonly BottleContent[],
+  mix: Mix,
+  room: Room,
+  isKept = false,
+): Finding[] {
   const bottles = portions.map(screenedBottle);
   const findings: Finding[] = bottles.flatMap(unknownFindings);
   mix.steps.forEach((step, index) => {
     const met = bottles.slice(0, index + 1);
     if (met.length < 2 && bottles.length > 1) return;
-    const firings = firingRules({ bottles: met, volumeMl: step.volumeMl, state: step.equilibrium, temperatureC: step.equilibrium.temperatureC, isKept, room });
-    findings.push(...firings.map((firing) => findingOf(firing, firing.rule.kinds.includes('quality-only') ? 'quality' : 'mix', withGas(firing))));
+    const firings = firingRules({
+      bottles: met,
+      volumeMl: step.volumeMl,
+      state: step.equilibrium,
+      temperatureC: step.equilibrium.temperatureC,
+      isKept,
+      room,
+    });
+    findings.push(
+      ...firings.map((firing) =>
+        findingOf(firing, firing.rule.kinds.includes('quality-only') ? 'quality' : 'mix', withGas(firing)),
+      ),
+    );
   });
   findings.push(...uncoveredFindings(bottles));
   const heat = heatFinding(bottles, mix, mix.equilibrium.temperatureC);
@@ -132,7 +155,13 @@ function redoxFindings(portions: readonly BottleContent[], mix: Mix): Finding[] 
 }
 
 /** Standing beside each other is less than being poured together. */
-const BESIDE: Readonly<Record<Severity, Severity | null>> = { stop: 'review', review: 'caution', controlled: null, caution: null, note: null };
+const BESIDE: Readonly<Record<Severity, Severity | null>> = {
+  stop: 'review',
+  review: 'caution',
+  controlled: null,
+  caution: null,
+  note: null,
+};
 
 /**
  * Every pair of bottles that share a room and hour, judged as if they met in a spill or a sink: the whole of
@@ -143,32 +172,68 @@ export function screenNeighbours(contents: readonly BottleContent[], room: Room)
   const findings: Finding[] = [];
   bottles.forEach((first, index) => {
     bottles.slice(index + 1).forEach((second, offset) => {
-      const portions = [contents[index], contents[index + 1 + offset]].filter((content) => content !== undefined);
+      const portions = [contents[index], contents[index + 1 + offset]].filter(
+        (content) => content !== undefined,
+      );
       findings.push(...screenPair(first, second, portions, room));
     });
   });
   return sortFindings(findings);
 }
 
-function screenPair(first: ScreenedBottle, second: ScreenedBottle, portions: readonly BottleContent[], room: Room): Finding[] {
+function screenPair(
+  first: ScreenedBottle,
+  second: ScreenedBottle,
+  portions: readonly BottleContent[],
+  room: Room,
+): Finding[] {
   const pair = [first, second];
-  const could = firingRules({ bottles: pair, volumeMl: first.volumeMl + second.volumeMl, state: null, temperatureC: ROOM_TEMPERATURE_C, isKept: false, room });
+  const could = firingRules({
+    bottles: pair,
+    volumeMl: first.volumeMl + second.volumeMl,
+    state: null,
+    temperatureC: ROOM_TEMPERATURE_C,
+    isKept: false,
+    room,
+  });
   if (!could.some(({ rule }) => BESIDE[rule.severity] !== null && needsBoth(rule.groups, pair))) return [];
   const mix = pourMix({ portions, activity: 'davies', temperatureC: ROOM_TEMPERATURE_C });
   const state = mix.converged ? mix.equilibrium : null;
-  return firingRules({ bottles: pair, volumeMl: first.volumeMl + second.volumeMl, state, temperatureC: ROOM_TEMPERATURE_C, isKept: false, room }).flatMap((firing) => {
+  return firingRules({
+    bottles: pair,
+    volumeMl: first.volumeMl + second.volumeMl,
+    state,
+    temperatureC: ROOM_TEMPERATURE_C,
+    isKept: false,
+    room,
+  }).flatMap((firing) => {
     const severity = BESIDE[firing.rule.severity];
     if (!severity || !needsBoth(firing.rule.groups, pair)) return [];
-    const finding = findingOf({ ...firing, severity, concerns: [first.label, second.label] }, 'neighbours', `${first.label} and ${second.label} stand in the same room and hour. If they met: ${withGas(firing)}`);
-    return [{ ...finding, precautions: [`Keep ${first.label} and ${second.label} on separate trolleys and benches, with separate waste`, ...finding.precautions] }];
+    const finding = findingOf(
+      { ...firing, severity, concerns: [first.label, second.label] },
+      'neighbours',
+      `${first.label} and ${second.label} stand in the same room and hour. If they met: ${withGas(firing)}`,
+    );
+    return [
+      {
+        ...finding,
+        precautions: [
+          `Keep ${first.label} and ${second.label} on separate trolleys and benches, with separate waste`,
+          ...finding.precautions,
+        ],
+      },
+    ];
   });
 }
 
 /** Whether it takes both bottles for the rule: one alone is no neighbour. */
 function needsBoth(groups: readonly string[], [first, second]: readonly ScreenedBottle[]): boolean {
-  const held = (bottle: ScreenedBottle | undefined) => new Set((bottle?.solutes ?? []).flatMap((solute) => [...solute.groups]));
+  const held = (bottle: ScreenedBottle | undefined) =>
+    new Set((bottle?.solutes ?? []).flatMap((solute) => [...solute.groups]));
   const inFirst = held(first);
   const inSecond = held(second);
   const real = groups.filter((group) => group !== 'water');
-  return real.some((group) => !inFirst.has(group)) && real.some((group) => !inSecond.has(group)) && real.length > 1;
+  return (
+    real.some((group) => !inFirst.has(group)) && real.some((group) => !inSecond.has(group)) && real.length > 1
+  );
 }

@@ -28,7 +28,12 @@ const JARS: readonly { readonly name: string; readonly substance: string; readon
 ];
 
 /** mol/L of the goods as sold, which no stock can pass; infinite for solids. */
-function strongestMolarity({ form, assayPercent, densityGPerMl, molarMassGPerMol }: CatalogueSubstance): number {
+function strongestMolarity({
+  form,
+  assayPercent,
+  densityGPerMl,
+  molarMassGPerMol,
+}: CatalogueSubstance): number {
   if (form === 'solid' || assayPercent === null || densityGPerMl === null) return Infinity;
   return (assayPercent * densityGPerMl * 10) / molarMassGPerMol;
 }
@@ -38,12 +43,22 @@ function tooStrong(portion: BottleContent): BottleContent {
     ...portion,
     solutes: portion.solutes.map(({ substance: id, molarity }) => {
       const substance = findSubstance(id);
-      return { substance: id, molarity: Math.min(molarity * STRONGER_BY, substance ? Math.max(molarity, strongestMolarity(substance)) : Infinity) };
+      return {
+        substance: id,
+        molarity: Math.min(
+          molarity * STRONGER_BY,
+          substance ? Math.max(molarity, strongestMolarity(substance)) : Infinity,
+        ),
+      };
     }),
   };
 }
 
-function replaced(portions: readonly BottleContent[], index: number, portion: BottleContent): BottleContent[] {
+function replaced(
+  portions: readonly BottleContent[],
+  index: number,
+  portion: BottleContent,
+): BottleContent[] {
   return portions.map((other, at) => (at === index ? portion : other));
 }
 
@@ -63,7 +78,10 @@ export function editDistance(a: string, b: string): number {
 
 /** Substances whose name is easily read for another's, such as nitrite for nitrate. */
 export function similarlyNamed(id: string): CatalogueSubstance[] {
-  return ALL_SUBSTANCES.filter((other) => other.id !== id && findSubstanceHazards(other.id) && editDistance(other.id, id) <= SIMILAR_UP_TO);
+  return ALL_SUBSTANCES.filter(
+    (other) =>
+      other.id !== id && findSubstanceHazards(other.id) && editDistance(other.id, id) <= SIMILAR_UP_TO,
+  );
 }
 
 function name(idOrCas: string): string {
@@ -74,24 +92,56 @@ function name(idOrCas: string): string {
  * Every single slip with these portions.
  * @param others - further bottles of the same session, any of which may be taken for a portion
  */
-export function slipVariants(portions: readonly BottleContent[], others: readonly BottleContent[]): SlipVariant[] {
+export function slipVariants(
+  portions: readonly BottleContent[],
+  others: readonly BottleContent[],
+): SlipVariant[] {
   const plain = { isKept: false };
   const each = portions.flatMap((portion, index): SlipVariant[] => {
     const concerns = [portion.label];
     const strong = tooStrong(portion);
-    const strengths = strong.solutes.map(({ substance, molarity }) => `${figure(molarity)} mol/L ${name(substance)}`).join(', ');
+    const strengths = strong.solutes
+      .map(({ substance, molarity }) => `${figure(molarity)} mol/L ${name(substance)}`)
+      .join(', ');
     const rest = portions.filter((_, at) => at !== index);
     return [
-      { ...plain, kind: 'too-strong', clause: `${portion.label} is made ten times too strong (${strengths})`, portions: replaced(portions, index, strong), concerns },
-      { ...plain, kind: 'doubled', clause: `twice the volume of ${portion.label} is taken`, portions: replaced(portions, index, { ...portion, volumeMl: 2 * portion.volumeMl }), concerns },
-      ...(rest.length > 0 ? [{ ...plain, kind: 'left-out' as const, clause: `${portion.label} is left out`, portions: rest, concerns }] : []),
+      {
+        ...plain,
+        kind: 'too-strong',
+        clause: `${portion.label} is made ten times too strong (${strengths})`,
+        portions: replaced(portions, index, strong),
+        concerns,
+      },
+      {
+        ...plain,
+        kind: 'doubled',
+        clause: `twice the volume of ${portion.label} is taken`,
+        portions: replaced(portions, index, { ...portion, volumeMl: 2 * portion.volumeMl }),
+        concerns,
+      },
+      ...(rest.length > 0
+        ? [
+            {
+              ...plain,
+              kind: 'left-out' as const,
+              clause: `${portion.label} is left out`,
+              portions: rest,
+              concerns,
+            },
+          ]
+        : []),
       ...portion.solutes.flatMap(({ substance: id, molarity }, place) => {
         const own = findSubstance(id);
         return (own ? similarlyNamed(own.id) : []).map((other) => ({
           ...plain,
           kind: 'wrong-substance' as const,
           clause: `${other.name} is taken for ${name(id)} in ${portion.label}`,
-          portions: replaced(portions, index, { ...portion, solutes: portion.solutes.map((solute, at) => (at === place ? { substance: other.id, molarity } : solute)) }),
+          portions: replaced(portions, index, {
+            ...portion,
+            solutes: portion.solutes.map((solute, at) =>
+              at === place ? { substance: other.id, molarity } : solute,
+            ),
+          }),
           concerns,
         }));
       }),
@@ -109,14 +159,36 @@ export function slipVariants(portions: readonly BottleContent[], others: readonl
       ...plain,
       kind: 'swapped',
       clause: `${first.label} and ${second.label} are swapped`,
-      portions: portions.map((portion) => (portion === first ? { ...second, volumeMl: first.volumeMl } : portion === second ? { ...first, volumeMl: second.volumeMl } : portion)),
+      portions: portions.map((portion) =>
+        portion === first
+          ? { ...second, volumeMl: first.volumeMl }
+          : portion === second
+            ? { ...first, volumeMl: second.volumeMl }
+            : portion,
+      ),
       concerns: [first.label, second.label],
     })),
   );
   const labels = portions.map(({ label }) => label);
   const whole: SlipVariant[] = [
-    ...(portions.length > 1 ? [{ ...plain, kind: 'reversed' as const, clause: 'the portions are poured in the opposite order', portions: [...portions].reverse(), concerns: labels }] : []),
-    { kind: 'overnight', clause: 'the mix is left standing overnight', portions, isKept: true, concerns: labels },
+    ...(portions.length > 1
+      ? [
+          {
+            ...plain,
+            kind: 'reversed' as const,
+            clause: 'the portions are poured in the opposite order',
+            portions: [...portions].reverse(),
+            concerns: labels,
+          },
+        ]
+      : []),
+    {
+      kind: 'overnight',
+      clause: 'the mix is left standing overnight',
+      portions,
+      isKept: true,
+      concerns: labels,
+    },
     ...JARS.map(({ name: jar, substance, molarity }) => ({
       isKept: true,
       kind: 'wrong-jar' as const,

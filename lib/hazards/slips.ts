@@ -34,19 +34,35 @@ const VOLATILE = ['CN-', 'HS-', 'SO3-2', 'NH3'];
  * Whether a handling could be graver than what is intended, told without an equilibrium: conditions on pH then
  * count as met, so that nothing is overlooked. Most slips of a safe mix end here.
  */
-function mayBeGraver({ portions, isKept }: SlipVariant, before: number, { temperatureC, room }: SlipInput): boolean {
+function mayBeGraver(
+  { portions, isKept }: SlipVariant,
+  before: number,
+  { temperatureC, room }: SlipInput,
+): boolean {
   const bottles = portions.map(screenedBottle);
   const volumeMl = portions.reduce((sum, portion) => sum + portion.volumeMl, 0);
   if (bottles.some(({ unknown }) => unknown.length > 0) || uncoveredFindings(bottles).length > 0) return true;
-  if (firingRules({ bottles, volumeMl, state: null, temperatureC, isKept, room }).some(({ severity }) => gravityOf(severity) < before)) return true;
+  if (
+    firingRules({ bottles, volumeMl, state: null, temperatureC, isKept, room }).some(
+      ({ severity }) => gravityOf(severity) < before,
+    )
+  )
+    return true;
   const heat = heatSeverity(adiabaticRiseK(bottles, volumeMl), temperatureC);
   if (heat && gravityOf(heat) < before) return true;
   const amounts = portions.map(componentAmounts);
-  return before > gravityOf('caution') && VOLATILE.some((component) => amounts.some((held) => (held[component] ?? 0) > 0));
+  return (
+    before > gravityOf('caution') &&
+    VOLATILE.some((component) => amounts.some((held) => (held[component] ?? 0) > 0))
+  );
 }
 
 /** Findings of one handling; none where no equilibrium is found, which is then no claim of safety but not a slip either. */
-function findingsOf(portions: readonly BottleContent[], isKept: boolean, { activity, temperatureC, room }: SlipInput): Finding[] | null {
+function findingsOf(
+  portions: readonly BottleContent[],
+  isKept: boolean,
+  { activity, temperatureC, room }: SlipInput,
+): Finding[] | null {
   const mix = pourMix({ portions, activity, temperatureC });
   return mix.converged ? screenMix(portions, mix, room, isKept) : null;
 }
@@ -69,11 +85,23 @@ export function checkSlips(input: SlipInput): SlipReport {
     })
     .sort((a, b) => gravityOf(a.decision) - gravityOf(b.decision));
   const stops = raised.filter(({ decision }) => decision === 'stop').length;
-  return { tried: variants.length, raised, stops, summary: summaryOf(variants.length, raised, stops), separation: separationFor(raised) };
+  return {
+    tried: variants.length,
+    raised,
+    stops,
+    summary: summaryOf(variants.length, raised, stops),
+    separation: separationFor(raised),
+  };
 }
 
 function slipOf({ kind, clause, concerns }: SlipVariant, finding: Finding, decision: Slip['decision']): Slip {
-  return { kind, sentence: `If ${clause}, ${RESULT[decision] ?? 'it changes'}: ${finding.reason}`, decision, finding, concerns };
+  return {
+    kind,
+    sentence: `If ${clause}, ${RESULT[decision] ?? 'it changes'}: ${finding.reason}`,
+    decision,
+    finding,
+    concerns,
+  };
 }
 
 function summaryOf(tried: number, raised: readonly Slip[], stops: number): string {

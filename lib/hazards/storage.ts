@@ -6,7 +6,9 @@ import { findSubstanceHazards } from './tables';
 import type { Finding } from './types';
 
 export type Togetherness = 'OK' | 'separate' | 'never';
-const MATRIX = storageData.matrix as Readonly<Record<string, Readonly<Record<string, Togetherness | undefined>> | undefined>>;
+const MATRIX = storageData.matrix as Readonly<
+  Record<string, Readonly<Record<string, Togetherness | undefined>> | undefined>
+>;
 const REASONS = storageData.reasons as Readonly<Record<string, string | undefined>>;
 
 /** What stands in a place: a lot or bottle with one main substance. */
@@ -31,7 +33,10 @@ export function storageGroupOf({ substance: idOrCas, molarity }: Stored): string
   if (!substance || !hazards) return null;
   const { storageGroup, groups } = hazards;
   if (molarity === null) return storageGroup;
-  const isTamedNitrate = storageGroup === 'oxidiser' && groups.includes('nitrate_ox') && !groupsAt(substance.id, molarity).has('nitrate_ox');
+  const isTamedNitrate =
+    storageGroup === 'oxidiser' &&
+    groups.includes('nitrate_ox') &&
+    !groupsAt(substance.id, molarity).has('nitrate_ox');
   const isTamed = TAMED_BY_DILUTION.has(storageGroup) && molarity <= DILUTE_UP_TO_MOLARITY;
   return isTamedNitrate || isTamed ? 'general' : storageGroup;
 }
@@ -49,8 +54,18 @@ export function screenStorage(arriving: Stored, standing: readonly Stored[]): Fi
   return sortFindings(
     standing.flatMap((other): Finding[] => {
       const undiluted = [arriving, other].map((stored) => storageGroupOf({ ...stored, molarity: null }));
-      const [own = null, theirs = null] = undiluted.some((group) => group && KNOWS_NO_DILUTE.has(group)) ? undiluted : [arriving, other].map(storageGroupOf);
-      if (own === null || theirs === null) return [storageFinding('review', arriving, other, 'no storage group is held for one of them, and unknown is not safe')];
+      const [own = null, theirs = null] = undiluted.some((group) => group && KNOWS_NO_DILUTE.has(group))
+        ? undiluted
+        : [arriving, other].map(storageGroupOf);
+      if (own === null || theirs === null)
+        return [
+          storageFinding(
+            'review',
+            arriving,
+            other,
+            'no storage group is held for one of them, and unknown is not safe',
+          ),
+        ];
       const together = mayStandTogether(own, theirs);
       if (together === 'OK' || (own === 'general' && theirs === 'general')) return [];
       const why = REASONS[[own, theirs].sort().join('+')] ?? 'they differ in storage group';
@@ -59,7 +74,12 @@ export function screenStorage(arriving: Stored, standing: readonly Stored[]): Fi
   );
 }
 
-function storageFinding(severity: Finding['severity'], arriving: Stored, other: Stored, why: string): Finding {
+function storageFinding(
+  severity: Finding['severity'],
+  arriving: Stored,
+  other: Stored,
+  why: string,
+): Finding {
   const isApart = severity === 'caution';
   return {
     rule: `storage:${severity}`,
@@ -69,7 +89,11 @@ function storageFinding(severity: Finding['severity'], arriving: Stored, other: 
     reason: `${arriving.label} ${isApart ? 'needs a tray apart from' : 'must not share a cabinet with'} ${other.label}: ${why}.`,
     mustNot: isApart ? null : `Do not put ${arriving.label} with ${other.label}.`,
     gas: null,
-    precautions: [isApart ? 'Its own tray, with no common path for a spill' : 'Another cabinet, with no common drain or air space'],
+    precautions: [
+      isApart
+        ? 'Its own tray, with no common path for a spill'
+        : 'Another cabinet, with no common drain or air space',
+    ],
     alternative: null,
     source: `House storage table (${storageData.sources.join('; ')})`,
     concerns: [arriving.label, other.label],

@@ -41,7 +41,7 @@ export interface HazardRule {
   /** True where the source is known from memory only. */
   readonly isDraft: boolean;
   readonly variant?: string;
-  /** The gas comes over minutes to hours, so that room air is changed meanwhile: the worst case raises it to `controlled` at most. */
+  /** The gas comes over minutes to hours: its worst case is judged by the room alone and raises to `controlled` at most. */
   readonly isSlow?: boolean;
   readonly gas?: readonly GasStoichiometry[];
 }

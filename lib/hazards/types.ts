@@ -74,7 +74,16 @@ export interface Classification {
 
 /** One plausible slip and what the same screen says of it. */
 export interface Slip {
-  readonly kind: 'too-strong' | 'doubled' | 'swapped' | 'reversed' | 'left-out' | 'wrong-substance' | 'wrong-bottle' | 'overnight' | 'wrong-jar';
+  readonly kind:
+    | 'too-strong'
+    | 'doubled'
+    | 'swapped'
+    | 'reversed'
+    | 'left-out'
+    | 'wrong-substance'
+    | 'wrong-bottle'
+    | 'overnight'
+    | 'wrong-jar';
   /** Whole sentence, beginning with "If". */
   readonly sentence: string;
   readonly decision: Decision;

@@ -4,7 +4,11 @@ import { groupName, HAZARD_RULES } from './tables';
 import type { Finding } from './types';
 
 const EXAMINED = examinedData.reactive as Readonly<Record<string, readonly string[] | undefined>>;
-const RULED = new Set(HAZARD_RULES.flatMap(({ groups }) => groups.flatMap((a) => groups.filter((b) => b !== a).map((b) => `${a}|${b}`))));
+const RULED = new Set(
+  HAZARD_RULES.flatMap(({ groups }) =>
+    groups.flatMap((a) => groups.filter((b) => b !== a).map((b) => `${a}|${b}`)),
+  ),
+);
 
 function isRuled(first: ScreenedSolute, second: ScreenedSolute): boolean {
   return [...first.groups].some((a) => [...second.groups].some((b) => RULED.has(`${a}|${b}`)));
@@ -15,7 +19,8 @@ function uncoveredGroup(first: ScreenedSolute, second: ScreenedSolute): string |
   if (second.groups.size === 0 || isRuled(first, second)) return null;
   for (const group of first.groups) {
     const examined = EXAMINED[group];
-    if (examined && [...second.groups].some((other) => other !== group && !examined.includes(other))) return group;
+    if (examined && [...second.groups].some((other) => other !== group && !examined.includes(other)))
+      return group;
   }
   return null;
 }

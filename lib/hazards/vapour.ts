@@ -24,11 +24,18 @@ export function vapourFindings(mix: Mix, room: Room): Finding[] {
     const gas = total > 0 ? estimateGas(id, total, finalVolumeMl, equilibrium, room) : null;
     const limit = findGas(id)?.limits.find(({ kind }) => kind === 'short-term')?.ppm;
     const gravely = findGas(id)?.limits.find(({ kind }) => kind === 'idlh')?.ppm ?? Infinity;
-    if (!gas || gas.ppmAboveLiquid === null || limit === undefined || gas.ppmAboveLiquid < limit * (TOLD_EARLY.has(id) ? ORDER_OF_LIMIT : 1)) return [];
+    if (
+      !gas ||
+      gas.ppmAboveLiquid === null ||
+      limit === undefined ||
+      gas.ppmAboveLiquid < limit * (TOLD_EARLY.has(id) ? ORDER_OF_LIMIT : 1)
+    )
+      return [];
     return [
       {
         rule: `vapour:${id}`,
-        severity: gas.ppmAboveLiquid > gravely || TOLD_EARLY.has(id) ? ('caution' as const) : ('note' as const),
+        severity:
+          gas.ppmAboveLiquid > gravely || TOLD_EARLY.has(id) ? ('caution' as const) : ('note' as const),
         scope: 'mix' as const,
         title: `${name.charAt(0).toUpperCase()}${name.slice(1)} above the open liquid`,
         reason: `At equilibrium the air just above the liquid holds about ${figure(gas.ppmAboveLiquid)} ppm of ${name}, against ${limit} ppm for a short stay.`,

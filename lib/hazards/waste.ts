@@ -57,11 +57,20 @@ export function wasteStreamOf(content: BottleContent): string {
  * streams. The jar comes first, since it is what is poured into.
  * @throws RangeError for an unknown substance or a volume that is not positive
  */
-export function screenWaste(jar: BottleContent, additions: readonly BottleContent[], room: Room): { readonly findings: readonly Finding[]; readonly decision: Decision } {
+export function screenWaste(
+  jar: BottleContent,
+  additions: readonly BottleContent[],
+  room: Room,
+): { readonly findings: readonly Finding[]; readonly decision: Decision } {
   const portions = [jar, ...additions];
   const mix = pourMix({ portions, activity: 'davies', temperatureC: 25 });
-  const computed = mix.converged ? screenMix(portions, mix, room, true).filter(({ severity }) => severity !== 'note') : [notComputed(portions)];
-  const findings = sortFindings([...computed.map((finding) => ({ ...finding, scope: 'waste' as const })), ...additions.flatMap((addition) => streamFindings(jar, addition))]);
+  const computed = mix.converged
+    ? screenMix(portions, mix, room, true).filter(({ severity }) => severity !== 'note')
+    : [notComputed(portions)];
+  const findings = sortFindings([
+    ...computed.map((finding) => ({ ...finding, scope: 'waste' as const })),
+    ...additions.flatMap((addition) => streamFindings(jar, addition)),
+  ]);
   return { findings, decision: decide(findings) };
 }
 

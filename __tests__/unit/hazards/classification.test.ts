@@ -1,7 +1,11 @@
 import { mixtureEstimate } from '../../../lib/hazards/classification/acute';
 import { classifyMixture } from '../../../lib/hazards/classification/classify-mixture';
 import type { Ingredient, Mixture, Regime, Route } from '../../../lib/hazards/classification/mixture';
-import { hazardStatements, pictogramsFor, signalWordFor } from '../../../lib/hazards/classification/statements';
+import {
+  hazardStatements,
+  pictogramsFor,
+  signalWordFor,
+} from '../../../lib/hazards/classification/statements';
 import { supplementalCodes } from '../../../lib/hazards/classification/supplemental';
 import rowData from './classification-rows.json';
 
@@ -11,7 +15,9 @@ interface Row {
   readonly title: string;
   readonly regime: Regime;
   readonly scope: 'all' | readonly string[];
-  readonly mixture: Partial<Omit<Mixture, 'ingredients'>> & { readonly ingredients: readonly (Partial<Ingredient> & Pick<Ingredient, 'name' | 'percent'>)[] };
+  readonly mixture: Partial<Omit<Mixture, 'ingredients'>> & {
+    readonly ingredients: readonly (Partial<Ingredient> & Pick<Ingredient, 'name' | 'percent'>)[];
+  };
   readonly expected: {
     readonly classification: readonly string[];
     readonly ate?: Partial<Readonly<Record<Route, number>>>;
@@ -25,16 +31,32 @@ const ROWS = rowData.rows as unknown as readonly Row[];
 /** Endpoint of a class, in the words of the rows' scopes. */
 function endpointOf(name: string): string {
   const endpoints: readonly (readonly [string, string])[] = [
-    ['Skin Corr', 'skin'], ['Skin Irrit', 'skin'], ['Eye', 'eye'], ['Met. Corr', 'met'], ['Aquatic Acute', 'aquatic_acute'],
-    ['Aquatic Chronic', 'aquatic_chronic'], ['STOT RE', 'stot_re'], ['STOT SE', 'stot_se'],
+    ['Skin Corr', 'skin'],
+    ['Skin Irrit', 'skin'],
+    ['Eye', 'eye'],
+    ['Met. Corr', 'met'],
+    ['Aquatic Acute', 'aquatic_acute'],
+    ['Aquatic Chronic', 'aquatic_chronic'],
+    ['STOT RE', 'stot_re'],
+    ['STOT SE', 'stot_se'],
   ];
-  return endpoints.find(([head]) => name.startsWith(head))?.[1] ?? /^Acute Tox\. \d (\w+)/.exec(name)?.[1] ?? name;
+  return (
+    endpoints.find(([head]) => name.startsWith(head))?.[1] ?? /^Acute Tox\. \d (\w+)/.exec(name)?.[1] ?? name
+  );
 }
 
 function mixtureOf({ mixture, regime }: Row): Mixture {
   const ingredients = mixture.ingredients.map((ingredient) => ({
-    classes: [], specificLimits: [], acuteToxicity: {}, mAcute: 1, mChronic: 1, isAcidOrBase: false, isNonAdditive: false,
-    corrosiveToMetalsFromPercent: null, supplemental: [], ...ingredient,
+    classes: [],
+    specificLimits: [],
+    acuteToxicity: {},
+    mAcute: 1,
+    mChronic: 1,
+    isAcidOrBase: false,
+    isNonAdditive: false,
+    corrosiveToMetalsFromPercent: null,
+    supplemental: [],
+    ...ingredient,
   }));
   return { pH: null, flashPointC: null, viscosity: null, ...mixture, ingredients, regime };
 }
@@ -48,11 +70,19 @@ describe.each(['published', 'computed'])('classification agrees with every %s ro
     const mixture = mixtureOf(row);
     const classes = classifyMixture(mixture);
     const { scope, expected } = row;
-    const inScope = classes.map(({ class: name }) => name).filter((name) => scope === 'all' || scope.includes(endpointOf(name)));
+    const inScope = classes
+      .map(({ class: name }) => name)
+      .filter((name) => scope === 'all' || scope.includes(endpointOf(name)));
     expect(sorted(inScope)).toEqual(sorted(expected.classification));
     if (expected.pictograms) expect(pictogramsFor(classes, row.regime)).toEqual(sorted(expected.pictograms));
     if (expected.signal !== undefined) expect(signalWordFor(classes)).toBe(expected.signal);
-    if (expected.h) expect(sorted([...hazardStatements(classes).map(({ code }) => code), ...supplementalCodes(mixture, classes)])).toEqual(sorted(expected.h));
+    if (expected.h)
+      expect(
+        sorted([
+          ...hazardStatements(classes).map(({ code }) => code),
+          ...supplementalCodes(mixture, classes),
+        ]),
+      ).toEqual(sorted(expected.h));
     for (const [route, ate] of Object.entries(expected.ate ?? {})) {
       // The sources round to three digits or to whole mg/kg.
       expect(Math.abs((mixtureEstimate(mixture, route as Route) ?? NaN) - ate) / ate).toBeLessThan(0.01);
@@ -61,7 +91,8 @@ describe.each(['published', 'computed'])('classification agrees with every %s ro
 });
 
 test('every class that comes out says why', () => {
-  for (const row of ROWS) for (const { because } of classifyMixture(mixtureOf(row))) expect(because).not.toBe('');
+  for (const row of ROWS)
+    for (const { because } of classifyMixture(mixtureOf(row))) expect(because).not.toBe('');
 });
 
 test('the rows are all there', () => {

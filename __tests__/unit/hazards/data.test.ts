@@ -17,9 +17,21 @@ test('there are at least the 178 rules to start from, each with its source', () 
 
 test.each([
   ['a group that is not there', { groups: ['cyanide', 'phlogiston'] }, /unknown group phlogiston/],
-  ['a gas that is not there', { gas: [{ consumes: { 'CN-': 1 }, limiting: 'CN-', gives: { Xx: 1 } }] }, /unknown gas Xx/],
-  ['a reactant nobody can count', { gas: [{ consumes: { 'Qq+': 1 }, limiting: 'Qq+', gives: { HCN: 1 } }] }, /can't count Qq\+/],
-  ['a limiting reactant that is not consumed', { gas: [{ consumes: { 'CN-': 1 }, limiting: 'H+', gives: { HCN: 1 } }] }, /limited by H\+/],
+  [
+    'a gas that is not there',
+    { gas: [{ consumes: { 'CN-': 1 }, limiting: 'CN-', gives: { Xx: 1 } }] },
+    /unknown gas Xx/,
+  ],
+  [
+    'a reactant nobody can count',
+    { gas: [{ consumes: { 'Qq+': 1 }, limiting: 'Qq+', gives: { HCN: 1 } }] },
+    /can't count Qq\+/,
+  ],
+  [
+    'a limiting reactant that is not consumed',
+    { gas: [{ consumes: { 'CN-': 1 }, limiting: 'H+', gives: { HCN: 1 } }] },
+    /limited by H\+/,
+  ],
   ['a strength of a group it does not name', { conditions: { ofGroup: 'peroxide' } }, /strength of peroxide/],
   ['no precaution', { precautions: [] }, /no precaution/],
 ] as const)('a rule with %s is found out', (_title, change, message) => {
@@ -28,7 +40,10 @@ test.each([
 });
 
 test('two rules that ask for the same are found out', () => {
-  expect(findHazardDataFaults({ rules: [model, { ...model, id: 'XX99' }] })).toContainEqual({ where: 'XX99', what: 'asks for the same as an earlier rule' });
+  expect(findHazardDataFaults({ rules: [model, { ...model, id: 'XX99' }] })).toContainEqual({
+    where: 'XX99',
+    what: 'asks for the same as an earlier rule',
+  });
 });
 
 test('a substance of the catalogue without hazard data is found out', () => {

@@ -3,8 +3,11 @@ import { screenPolicy } from '../../../lib/hazards/policy-gates';
 import { previewMix } from '../../../lib/hazards/preview';
 import { decide, screenNeighbours, sortFindings } from '../../../lib/hazards/screen';
 import type { Decision, Finding } from '../../../lib/hazards/types';
-import { TEACHING_MIXES } from './teaching-mixes';
+import { MORE_MIXES } from './more-teaching-mixes';
+import { FIRST_MIXES } from './teaching-mixes';
 import type { TeachingMix } from './teaching-mixes';
+
+const TEACHING_MIXES = [...FIRST_MIXES, ...MORE_MIXES];
 
 const ROOM = { volumeM3: 150, airChangesPerHour: 6, fumeCupboard: false };
 

@@ -25,7 +25,13 @@ const UNKNOWN_MATTERS_FROM = 10;
 const CUTOFF_GRAVE = 0.1;
 const CUTOFF_MILD = 1;
 
-const NAME: Readonly<Record<Route, string>> = { oral: 'oral', dermal: 'dermal', inh_vapour: 'inhalation', inh_mist: 'inhalation', inh_gas: 'inhalation' };
+const NAME: Readonly<Record<Route, string>> = {
+  oral: 'oral',
+  dermal: 'dermal',
+  inh_vapour: 'inhalation',
+  inh_mist: 'inhalation',
+  inh_gas: 'inhalation',
+};
 
 function estimateOf(ingredient: Ingredient, route: Route): number | null {
   const given = ingredient.acuteToxicity[route];
@@ -47,7 +53,8 @@ export function mixtureEstimate(mixture: Mixture, route: Route): number | null {
   let sum = 0;
   let unknown = 0;
   for (const ingredient of mixture.ingredients) {
-    if (ingredient.acuteToxicity[route] === 'unknown' && ingredient.percent >= 1) unknown += ingredient.percent;
+    if (ingredient.acuteToxicity[route] === 'unknown' && ingredient.percent >= 1)
+      unknown += ingredient.percent;
     const estimate = estimateOf(ingredient, route);
     if (estimate === null) continue;
     const category = categoryOf(route, estimate);
@@ -72,5 +79,8 @@ export function acuteClasses(mixture: Mixture): AssignedClass[] {
     const before = best.get(name);
     if (!before || category < before.category) best.set(name, { category, because });
   }
-  return [...best].map(([name, { category, because }]) => ({ class: `Acute Tox. ${category} ${name}`, because }));
+  return [...best].map(([name, { category, because }]) => ({
+    class: `Acute Tox. ${category} ${name}`,
+    because,
+  }));
 }

@@ -20,12 +20,29 @@ export interface SolutionToClassify {
 /** g of chlorine per mol of hypochlorite: its limits count active chlorine. */
 const ACTIVE_CHLORINE_G_PER_MOL = 70.9;
 /** Percent by mass from which a solution keeps H290; practice of suppliers differs, values from their sheets (from memory). */
-const METAL_CORROSION_FROM: Readonly<Record<string, number>> = { 'hydrochloric-acid': 0.1, 'sodium-hydroxide': 0.5, 'potassium-hydroxide': 0.5 };
+const METAL_CORROSION_FROM: Readonly<Record<string, number>> = {
+  'hydrochloric-acid': 0.1,
+  'sodium-hydroxide': 0.5,
+  'potassium-hydroxide': 0.5,
+};
 const METAL_CORROSION_USUALLY_FROM = 1;
 /** Percent from which an EUH statement is carried over (CLP Annex II; acid-sensitive salts by common practice). */
-const SUPPLEMENTAL_FROM: Readonly<Record<string, number>> = { 'EUH032:sodium-cyanide': 0.1, 'EUH032:potassium-cyanide': 0.1, 'EUH032:sodium-azide': 0.1, 'EUH031:sodium-hypochlorite': 5, EUH071: 5 };
+const SUPPLEMENTAL_FROM: Readonly<Record<string, number>> = {
+  'EUH032:sodium-cyanide': 0.1,
+  'EUH032:potassium-cyanide': 0.1,
+  'EUH032:sodium-azide': 0.1,
+  'EUH031:sodium-hypochlorite': 5,
+  EUH071: 5,
+};
 const SUPPLEMENTAL_USUALLY_FROM = 1;
-const ACID_OR_BASE_GROUPS = ['acid_mineral_nonox', 'acid_mineral_ox', 'acid_organic', 'base_strong', 'base_weak', 'ammonia_or_ammonium'];
+const ACID_OR_BASE_GROUPS = [
+  'acid_mineral_nonox',
+  'acid_mineral_ox',
+  'acid_organic',
+  'base_strong',
+  'base_weak',
+  'ammonia_or_ammonium',
+];
 
 /** Solutes that make water lighter, so that a density of 1 would not be on the safe side: g/mL at w % by mass. */
 const LIGHTER: Readonly<Record<string, (percent: number) => number>> = {
@@ -40,7 +57,12 @@ const LIGHTER: Readonly<Record<string, (percent: number) => number>> = {
  * Per cent by mass from mol/L: w = 100 c M / (1000 ρ). Without a measured density ρ = 1, which overstates w for
  * everything that makes water denser and so errs to the safe side.
  */
-export function massPercent(substanceId: string, molarity: number, molarMassGPerMol: number, densityGPerMl?: number | null): number {
+export function massPercent(
+  substanceId: string,
+  molarity: number,
+  molarMassGPerMol: number,
+  densityGPerMl?: number | null,
+): number {
   const grams = molarity * molarMassGPerMol;
   const lighter = LIGHTER[substanceId];
   let percent = grams / (10 * (densityGPerMl ?? 1));
@@ -54,7 +76,12 @@ export function massPercent(substanceId: string, molarity: number, molarMassGPer
  * Proposed classification and label elements of an aqueous solution, by calculation from its solutes.
  * @throws RangeError for a substance that is not in the catalogue
  */
-export function classifySolution({ solutes, densityGPerMl, pH, regime = 'CLP' }: SolutionToClassify): Classification {
+export function classifySolution({
+  solutes,
+  densityGPerMl,
+  pH,
+  regime = 'CLP',
+}: SolutionToClassify): Classification {
   const incomplete: string[] = [];
   const ingredients: Ingredient[] = [];
   for (const { substance: idOrCas, molarity } of solutes) {
@@ -65,14 +92,34 @@ export function classifySolution({ solutes, densityGPerMl, pH, regime = 'CLP' }:
       incomplete.push(substance.name);
       continue;
     }
-    const mass = substance.id === 'sodium-hypochlorite' ? ACTIVE_CHLORINE_G_PER_MOL : substance.molarMassGPerMol;
-    ingredients.push(ingredientOf(shortName(substance.name), hazards, massPercent(substance.id, molarity, mass, densityGPerMl)));
+    const mass =
+      substance.id === 'sodium-hypochlorite' ? ACTIVE_CHLORINE_G_PER_MOL : substance.molarMassGPerMol;
+    ingredients.push(
+      ingredientOf(
+        shortName(substance.name),
+        hazards,
+        massPercent(substance.id, molarity, mass, densityGPerMl),
+      ),
+    );
   }
   const flammable = solutes.flatMap(({ substance: idOrCas, molarity }) => {
     const substance = findSubstance(idOrCas);
-    return substance ? [{ id: substance.id, percent: massPercent(substance.id, molarity, substance.molarMassGPerMol, densityGPerMl) }] : [];
+    return substance
+      ? [
+          {
+            id: substance.id,
+            percent: massPercent(substance.id, molarity, substance.molarMassGPerMol, densityGPerMl),
+          },
+        ]
+      : [];
   });
-  const mixture = { ingredients, pH: pH ?? null, flashPointC: flashPointOf(flammable), viscosity: null, regime };
+  const mixture = {
+    ingredients,
+    pH: pH ?? null,
+    flashPointC: flashPointOf(flammable),
+    viscosity: null,
+    regime,
+  };
   const classes = classifyMixture(mixture);
   return {
     signalWord: signalWordFor(classes),
@@ -102,8 +149,14 @@ function ingredientOf(name: string, hazards: SubstanceHazards, percent: number):
     mChronic: hazards.mFactors?.m_chronic ?? 1,
     isAcidOrBase: hazards.groups.some((group) => ACID_OR_BASE_GROUPS.includes(group)),
     isNonAdditive: false,
-    corrosiveToMetalsFromPercent: hazards.classes.includes('Met. Corr. 1') ? (METAL_CORROSION_FROM[hazards.id] ?? METAL_CORROSION_USUALLY_FROM) : null,
-    supplemental: hazards.euh.map((code) => ({ code, fromPercent: SUPPLEMENTAL_FROM[`${code}:${hazards.id}`] ?? SUPPLEMENTAL_FROM[code] ?? SUPPLEMENTAL_USUALLY_FROM })),
+    corrosiveToMetalsFromPercent: hazards.classes.includes('Met. Corr. 1')
+      ? (METAL_CORROSION_FROM[hazards.id] ?? METAL_CORROSION_USUALLY_FROM)
+      : null,
+    supplemental: hazards.euh.map((code) => ({
+      code,
+      fromPercent:
+        SUPPLEMENTAL_FROM[`${code}:${hazards.id}`] ?? SUPPLEMENTAL_FROM[code] ?? SUPPLEMENTAL_USUALLY_FROM,
+    })),
   };
 }
 

@@ -5,9 +5,57 @@ type Limits = Readonly<Record<string, number>>;
 
 /** Limits that one ingredient alone must reach, per cent (CLP Annex I tables; HazCom appendix A). */
 const ALONE: Readonly<Record<Regime, Limits>> = {
-  CLP: { 'Resp. Sens. 1': 1, 'Resp. Sens. 1B': 1, 'Resp. Sens. 1A': 0.1, 'Skin Sens. 1': 1, 'Skin Sens. 1B': 1, 'Skin Sens. 1A': 0.1, 'Muta. 1A': 0.1, 'Muta. 1B': 0.1, 'Muta. 2': 1, 'Carc. 1A': 0.1, 'Carc. 1B': 0.1, 'Carc. 2': 1, 'Repr. 1A': 0.3, 'Repr. 1B': 0.3, 'Repr. 2': 3 },
-  UN: { 'Resp. Sens. 1': 1, 'Resp. Sens. 1B': 1, 'Resp. Sens. 1A': 0.1, 'Skin Sens. 1': 1, 'Skin Sens. 1B': 1, 'Skin Sens. 1A': 0.1, 'Muta. 1A': 0.1, 'Muta. 1B': 0.1, 'Muta. 2': 1, 'Carc. 1A': 0.1, 'Carc. 1B': 0.1, 'Carc. 2': 1, 'Repr. 1A': 0.3, 'Repr. 1B': 0.3, 'Repr. 2': 3 },
-  HazCom: { 'Resp. Sens. 1': 0.1, 'Resp. Sens. 1B': 1, 'Resp. Sens. 1A': 0.1, 'Skin Sens. 1': 0.1, 'Skin Sens. 1B': 1, 'Skin Sens. 1A': 0.1, 'Muta. 1A': 0.1, 'Muta. 1B': 0.1, 'Muta. 2': 1, 'Carc. 1A': 0.1, 'Carc. 1B': 0.1, 'Carc. 2': 0.1, 'Repr. 1A': 0.1, 'Repr. 1B': 0.1, 'Repr. 2': 0.1 },
+  CLP: {
+    'Resp. Sens. 1': 1,
+    'Resp. Sens. 1B': 1,
+    'Resp. Sens. 1A': 0.1,
+    'Skin Sens. 1': 1,
+    'Skin Sens. 1B': 1,
+    'Skin Sens. 1A': 0.1,
+    'Muta. 1A': 0.1,
+    'Muta. 1B': 0.1,
+    'Muta. 2': 1,
+    'Carc. 1A': 0.1,
+    'Carc. 1B': 0.1,
+    'Carc. 2': 1,
+    'Repr. 1A': 0.3,
+    'Repr. 1B': 0.3,
+    'Repr. 2': 3,
+  },
+  UN: {
+    'Resp. Sens. 1': 1,
+    'Resp. Sens. 1B': 1,
+    'Resp. Sens. 1A': 0.1,
+    'Skin Sens. 1': 1,
+    'Skin Sens. 1B': 1,
+    'Skin Sens. 1A': 0.1,
+    'Muta. 1A': 0.1,
+    'Muta. 1B': 0.1,
+    'Muta. 2': 1,
+    'Carc. 1A': 0.1,
+    'Carc. 1B': 0.1,
+    'Carc. 2': 1,
+    'Repr. 1A': 0.3,
+    'Repr. 1B': 0.3,
+    'Repr. 2': 3,
+  },
+  HazCom: {
+    'Resp. Sens. 1': 0.1,
+    'Resp. Sens. 1B': 1,
+    'Resp. Sens. 1A': 0.1,
+    'Skin Sens. 1': 0.1,
+    'Skin Sens. 1B': 1,
+    'Skin Sens. 1A': 0.1,
+    'Muta. 1A': 0.1,
+    'Muta. 1B': 0.1,
+    'Muta. 2': 1,
+    'Carc. 1A': 0.1,
+    'Carc. 1B': 0.1,
+    'Carc. 2': 0.1,
+    'Repr. 1A': 0.1,
+    'Repr. 1B': 0.1,
+    'Repr. 2': 0.1,
+  },
 };
 /** Families of classes of which only the gravest is kept. */
 const FAMILIES = ['Resp. Sens.', 'Skin Sens.', 'Muta.', 'Carc.', 'Repr.'];
@@ -22,7 +70,10 @@ function plain(name: string): string {
 }
 
 function because(ingredient: Ingredient, name: string, limit: number): AssignedClass {
-  return { class: name, because: `${percentText(ingredient.percent)} ${ingredient.name}: ${name} from ${percentText(limit)}` };
+  return {
+    class: name,
+    because: `${percentText(ingredient.percent)} ${ingredient.name}: ${name} from ${percentText(limit)}`,
+  };
 }
 
 /** Sensitisers and the long-term classes: each ingredient stands alone, the gravest of a family counts. */
@@ -33,7 +84,9 @@ export function longTermClasses({ ingredients, regime }: Mixture): AssignedClass
         .filter((name) => name.startsWith(family))
         .flatMap((name) => {
           const limit = specificMinimum(ingredient, name) ?? ALONE[regime][plain(name)];
-          return limit !== undefined && reaches(ingredient.percent, limit) ? [because(ingredient, name, limit)] : [];
+          return limit !== undefined && reaches(ingredient.percent, limit)
+            ? [because(ingredient, name, limit)]
+            : [];
         }),
     );
     return found.sort((a, b) => a.class.localeCompare(b.class)).slice(0, 1);
@@ -47,7 +100,9 @@ export function organClasses({ ingredients, regime }: Mixture): AssignedClass[] 
     const grave = ingredients.filter((ingredient) => hasClass(ingredient, `${kind} 1`));
     const candidates = [
       ...grave.flatMap((ingredient) => {
-        const limit = specificMinimum(ingredient, `${kind} 1`) ?? (regime === 'HazCom' ? STOT_MILD_FROM : STOT_GRAVE_FROM);
+        const limit =
+          specificMinimum(ingredient, `${kind} 1`) ??
+          (regime === 'HazCom' ? STOT_MILD_FROM : STOT_GRAVE_FROM);
         return reaches(ingredient.percent, limit) ? [because(ingredient, `${kind} 1`, limit)] : [];
       }),
       ...grave.flatMap((ingredient) => {
@@ -57,7 +112,9 @@ export function organClasses({ ingredients, regime }: Mixture): AssignedClass[] 
       ...ingredients
         .filter((ingredient) => hasClass(ingredient, `${kind} 2`))
         .flatMap((ingredient) => {
-          const limit = specificMinimum(ingredient, `${kind} 2`) ?? (regime === 'HazCom' ? STOT_MILD_FROM : STOT_GRAVE_FROM);
+          const limit =
+            specificMinimum(ingredient, `${kind} 2`) ??
+            (regime === 'HazCom' ? STOT_MILD_FROM : STOT_GRAVE_FROM);
           return reaches(ingredient.percent, limit) ? [because(ingredient, `${kind} 2`, limit)] : [];
         }),
     ];
@@ -66,11 +123,17 @@ export function organClasses({ ingredients, regime }: Mixture): AssignedClass[] 
   for (const effect of ['respiratory', 'narcotic']) {
     const name = `STOT SE 3 (${effect})`;
     const counted = ingredients.filter(
-      (ingredient) => (ingredient.classes.includes(name) || specificMinimum(ingredient, name) !== null) && reaches(ingredient.percent, STOT_3_COUNTS_FROM),
+      (ingredient) =>
+        (ingredient.classes.includes(name) || specificMinimum(ingredient, name) !== null) &&
+        reaches(ingredient.percent, STOT_3_COUNTS_FROM),
     );
-    const shares = counted.reduce((sum, ingredient) => sum + ingredient.percent / (specificMinimum(ingredient, name) ?? STOT_3_FROM), 0);
+    const shares = counted.reduce(
+      (sum, ingredient) => sum + ingredient.percent / (specificMinimum(ingredient, name) ?? STOT_3_FROM),
+      0,
+    );
     const [first] = counted;
-    if (first && reaches(shares, 1)) found.push(because(first, name, specificMinimum(first, name) ?? STOT_3_FROM));
+    if (first && reaches(shares, 1))
+      found.push(because(first, name, specificMinimum(first, name) ?? STOT_3_FROM));
   }
   return found;
 }
@@ -79,7 +142,9 @@ export function organClasses({ ingredients, regime }: Mixture): AssignedClass[] 
 export function aquaticClasses({ ingredients, regime }: Mixture): AssignedClass[] {
   if (regime === 'HazCom') return [];
   const sum = (name: string, weight: (ingredient: Ingredient) => number) =>
-    ingredients.filter((ingredient) => ingredient.classes.includes(name)).reduce((total, ingredient) => total + ingredient.percent * weight(ingredient), 0);
+    ingredients
+      .filter((ingredient) => ingredient.classes.includes(name))
+      .reduce((total, ingredient) => total + ingredient.percent * weight(ingredient), 0);
   const one = () => 1;
   const acute1 = sum('Aquatic Acute 1', ({ mAcute }) => mAcute);
   const acute2 = sum('Aquatic Acute 2', one);
@@ -90,10 +155,18 @@ export function aquaticClasses({ ingredients, regime }: Mixture): AssignedClass[
   const chronic3 = sum('Aquatic Chronic 3', one);
   const chronic4 = sum('Aquatic Chronic 4', one);
   const THRESHOLD = 25;
-  const say = (name: string, value: number): AssignedClass => ({ class: name, because: `weighted sum ${Number(value.toPrecision(3))} % of 25 %` });
+  const say = (name: string, value: number): AssignedClass => ({
+    class: name,
+    because: `weighted sum ${Number(value.toPrecision(3))} % of 25 %`,
+  });
   const acute: readonly (readonly [string, number])[] = [
     ['Aquatic Acute 1', acute1],
-    ...(regime === 'UN' ? ([['Aquatic Acute 2', 10 * acute1 + acute2], ['Aquatic Acute 3', 100 * acute1 + 10 * acute2 + acute3]] as const) : []),
+    ...(regime === 'UN'
+      ? ([
+          ['Aquatic Acute 2', 10 * acute1 + acute2],
+          ['Aquatic Acute 3', 100 * acute1 + 10 * acute2 + acute3],
+        ] as const)
+      : []),
   ];
   const chronic: readonly (readonly [string, number])[] = [
     ['Aquatic Chronic 1', chronic1],
@@ -115,16 +188,32 @@ export function physicalClasses({ ingredients, flashPointC, viscosity, regime }:
   const found: AssignedClass[] = [];
   if (flashPointC !== null && (flashPointC <= 60 || (regime !== 'CLP' && flashPointC <= 93))) {
     const category = flashPointC < 23 ? 2 : flashPointC <= 60 ? 3 : 4;
-    found.push({ class: `Flam. Liq. ${category}`, because: `flash point about ${Math.round(flashPointC)} °C` });
+    found.push({
+      class: `Flam. Liq. ${category}`,
+      because: `flash point about ${Math.round(flashPointC)} °C`,
+    });
   }
   for (const ingredient of ingredients) {
-    const oxidising = ingredient.specificLimits.filter((limit) => limit.class.startsWith('Ox. Liq.') && reaches(ingredient.percent, limit.min) && (limit.max === undefined || ingredient.percent < limit.max));
+    const oxidising = ingredient.specificLimits.filter(
+      (limit) =>
+        limit.class.startsWith('Ox. Liq.') &&
+        reaches(ingredient.percent, limit.min) &&
+        (limit.max === undefined || ingredient.percent < limit.max),
+    );
     const [gravest] = oxidising.sort((a, b) => a.class.localeCompare(b.class));
     if (gravest) found.push(because(ingredient, gravest.class, gravest.min));
     const from = ingredient.corrosiveToMetalsFromPercent;
-    if (from !== null && reaches(ingredient.percent, from) && !found.some((entry) => entry.class === 'Met. Corr. 1')) found.push(because(ingredient, 'Met. Corr. 1', from));
+    if (
+      from !== null &&
+      reaches(ingredient.percent, from) &&
+      !found.some((entry) => entry.class === 'Met. Corr. 1')
+    )
+      found.push(because(ingredient, 'Met. Corr. 1', from));
   }
-  const aspirated = ingredients.filter((ingredient) => hasClass(ingredient, 'Asp. Tox. 1') && ingredient.percent >= 1).reduce((sum, { percent }) => sum + percent, 0);
-  if (viscosity !== null && viscosity <= ASPIRATION_VISCOSITY && reaches(aspirated, ASPIRATION_FROM)) found.push({ class: 'Asp. Tox. 1', because: `${percentText(aspirated)} of it, thin enough` });
+  const aspirated = ingredients
+    .filter((ingredient) => hasClass(ingredient, 'Asp. Tox. 1') && ingredient.percent >= 1)
+    .reduce((sum, { percent }) => sum + percent, 0);
+  if (viscosity !== null && viscosity <= ASPIRATION_VISCOSITY && reaches(aspirated, ASPIRATION_FROM))
+    found.push({ class: 'Asp. Tox. 1', because: `${percentText(aspirated)} of it, thin enough` });
   return found;
 }

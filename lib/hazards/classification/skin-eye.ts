@@ -23,7 +23,9 @@ function isCorrosive(ingredient: Ingredient): boolean {
 function corrosionLimit(ingredient: Ingredient, upTo: number): number | null {
   if (!isCorrosive(ingredient)) return null;
   const own = SUBCATEGORIES.findIndex((sub) => ingredient.classes.includes(`Skin Corr. ${sub}`));
-  const specific = SUBCATEGORIES.slice(0, upTo + 1).flatMap((sub) => specificMinimum(ingredient, `Skin Corr. ${sub}`) ?? []);
+  const specific = SUBCATEGORIES.slice(0, upTo + 1).flatMap(
+    (sub) => specificMinimum(ingredient, `Skin Corr. ${sub}`) ?? [],
+  );
   const general = specificMinimum(ingredient, 'Skin Corr. 1');
   if (general !== null) specific.push(general);
   if (specific.length > 0) return Math.min(...specific);
@@ -36,18 +38,27 @@ function anyCorrosionLimit(ingredient: Ingredient): number {
   return corrosionLimit(ingredient, 2) ?? CORROSIVE_FROM;
 }
 
-function sumOfShares(ingredients: readonly Ingredient[], limitOf: (ingredient: Ingredient) => number | null): number {
+function sumOfShares(
+  ingredients: readonly Ingredient[],
+  limitOf: (ingredient: Ingredient) => number | null,
+): number {
   return ingredients.reduce((sum, ingredient) => {
     const limit = limitOf(ingredient);
     return limit === null ? sum : sum + ingredient.percent / limit;
   }, 0);
 }
 
-function reasonFor(ingredients: readonly Ingredient[], limitOf: (ingredient: Ingredient) => number | null, className: string): string {
+function reasonFor(
+  ingredients: readonly Ingredient[],
+  limitOf: (ingredient: Ingredient) => number | null,
+  className: string,
+): string {
   return ingredients
     .flatMap((ingredient) => {
       const limit = limitOf(ingredient);
-      return limit === null ? [] : [`${percentText(ingredient.percent)} ${ingredient.name}: ${className} from ${percentText(limit)}`];
+      return limit === null
+        ? []
+        : [`${percentText(ingredient.percent)} ${ingredient.name}: ${className} from ${percentText(limit)}`];
     })
     .join('; ');
 }
@@ -78,7 +89,9 @@ function eyeIrritationLimit(ingredient: Ingredient): number | null {
 
 /** One acid or base with limits of its own alone touches skin or eye: its pH is already in those limits. */
 function isSettledByLimits(ingredients: readonly Ingredient[]): boolean {
-  const touching = ingredients.filter((ingredient) => skinIrritationLimit(ingredient) !== null || eyeIrritationLimit(ingredient) !== null);
+  const touching = ingredients.filter(
+    (ingredient) => skinIrritationLimit(ingredient) !== null || eyeIrritationLimit(ingredient) !== null,
+  );
   const [only] = touching;
   return (
     touching.length === 1 &&
@@ -101,7 +114,10 @@ export function skinAndEyeClasses(mixture: Mixture): AssignedClass[] {
   }
   const skin = skinClass(ingredients);
   const isSkinCorrosive = skin?.class.startsWith('Skin Corr.') ?? false;
-  const eye = isSkinCorrosive && skin ? { class: 'Eye Dam. 1', because: `goes with ${skin.class}` } : eyeClass(ingredients);
+  const eye =
+    isSkinCorrosive && skin
+      ? { class: 'Eye Dam. 1', because: `goes with ${skin.class}` }
+      : eyeClass(ingredients);
   return [skin, eye].filter((found): found is AssignedClass => found !== null);
 }
 
@@ -111,10 +127,12 @@ function skinClass(ingredients: readonly Ingredient[]): AssignedClass | null {
   for (let upTo = 0; upTo < SUBCATEGORIES.length; upTo += 1) {
     const limitOf = (ingredient: Ingredient) => corrosionLimit(ingredient, upTo);
     const name = `Skin Corr. ${SUBCATEGORIES[upTo]}`;
-    if (reaches(sumOfShares(ingredients, limitOf), 1)) return { class: name, because: reasonFor(ingredients, limitOf, name) };
+    if (reaches(sumOfShares(ingredients, limitOf), 1))
+      return { class: name, because: reasonFor(ingredients, limitOf, name) };
   }
   const unsorted = ingredients.filter((ingredient) => ingredient.classes.includes('Skin Corr. 1'));
-  if (reaches(sumOfShares(unsorted, anyCorrosionLimit), 1)) return { class: 'Skin Corr. 1', because: reasonFor(unsorted, anyCorrosionLimit, 'Skin Corr. 1') };
+  if (reaches(sumOfShares(unsorted, anyCorrosionLimit), 1))
+    return { class: 'Skin Corr. 1', because: reasonFor(unsorted, anyCorrosionLimit, 'Skin Corr. 1') };
   if (reaches(sumOfShares(ingredients, skinIrritationLimit), 1)) {
     return { class: 'Skin Irrit. 2', because: reasonFor(ingredients, skinIrritationLimit, 'Skin Irrit. 2') };
   }
@@ -124,18 +142,26 @@ function skinClass(ingredients: readonly Ingredient[]): AssignedClass | null {
 function eyeClass(ingredients: readonly Ingredient[]): AssignedClass | null {
   const alone = nonAdditive(ingredients, 'Eye Dam. 1', 'Eye Irrit. 2', 'Eye Dam. 1');
   if (alone) return alone;
-  if (reaches(sumOfShares(ingredients, eyeDamageLimit), 1)) return { class: 'Eye Dam. 1', because: reasonFor(ingredients, eyeDamageLimit, 'Eye Dam. 1') };
+  if (reaches(sumOfShares(ingredients, eyeDamageLimit), 1))
+    return { class: 'Eye Dam. 1', because: reasonFor(ingredients, eyeDamageLimit, 'Eye Dam. 1') };
   if (reaches(sumOfShares(ingredients, eyeIrritationLimit), 1)) {
     return { class: 'Eye Irrit. 2', because: reasonFor(ingredients, eyeIrritationLimit, 'Eye Irrit. 2') };
   }
   return null;
 }
 
-function nonAdditive(ingredients: readonly Ingredient[], grave: string, mild: string, result: string): AssignedClass | null {
+function nonAdditive(
+  ingredients: readonly Ingredient[],
+  grave: string,
+  mild: string,
+  result: string,
+): AssignedClass | null {
   for (const ingredient of ingredients.filter(({ isNonAdditive }) => isNonAdditive)) {
     const said = `${percentText(ingredient.percent)} ${ingredient.name}, which does not add up`;
-    if (hasClass(ingredient, grave) && reaches(ingredient.percent, NON_ADDITIVE_CORROSIVE_FROM)) return { class: result, because: said };
-    if (hasClass(ingredient, mild) && reaches(ingredient.percent, NON_ADDITIVE_IRRITANT_FROM)) return { class: mild, because: said };
+    if (hasClass(ingredient, grave) && reaches(ingredient.percent, NON_ADDITIVE_CORROSIVE_FROM))
+      return { class: result, because: said };
+    if (hasClass(ingredient, mild) && reaches(ingredient.percent, NON_ADDITIVE_IRRITANT_FROM))
+      return { class: mild, because: said };
   }
   return null;
 }

@@ -10,8 +10,12 @@ const CLASSES: Readonly<Record<string, ClassStatement | undefined>> = statementD
 const H_TEXTS: Readonly<Record<string, string | undefined>> = statementData.h;
 const EUH_TEXTS: Readonly<Record<string, string | undefined>> = statementData.euh;
 const P_TEXTS: Readonly<Record<string, string | undefined>> = statementData.p;
-const BY_CLASS = statementData.precautionsByClass as Readonly<Record<string, Readonly<Record<string, readonly string[]>> | undefined>>;
-const WEIGHTS = statementData.precautionWeights as Readonly<Record<string, Readonly<Record<string, number>> | undefined>>;
+const BY_CLASS = statementData.precautionsByClass as Readonly<
+  Record<string, Readonly<Record<string, readonly string[]>> | undefined>
+>;
+const WEIGHTS = statementData.precautionWeights as Readonly<
+  Record<string, Readonly<Record<string, number>> | undefined>
+>;
 
 export const MOST_PRECAUTIONS = 6;
 
@@ -38,7 +42,14 @@ export function statementText(code: string): string {
 
 /** Text of a precautionary statement; a combined one joins its parts where it has no text of its own. */
 export function precautionText(code: string): string {
-  return P_TEXTS[code] ?? code.split('+').map((part) => P_TEXTS[part] ?? '').join(' ').trim();
+  return (
+    P_TEXTS[code] ??
+    code
+      .split('+')
+      .map((part) => P_TEXTS[part] ?? '')
+      .join(' ')
+      .trim()
+  );
 }
 
 /**
@@ -46,12 +57,22 @@ export function precautionText(code: string): string {
  * (CLP Art. 26). HazCom (C.2.1) lets the skull stand for the exclamation mark in acute toxicity alone.
  */
 export function pictogramsFor(classes: readonly AssignedClass[], regime: Regime = 'CLP'): string[] {
-  const signs = new Set(classes.flatMap(({ class: name }) => statementFor(name)?.pictogram?.split('+') ?? []));
-  const exclaims = classes.filter(({ class: name }) => statementFor(name)?.pictogram === 'GHS07').map(({ class: name }) => name);
+  const signs = new Set(
+    classes.flatMap(({ class: name }) => statementFor(name)?.pictogram?.split('+') ?? []),
+  );
+  const exclaims = classes
+    .filter(({ class: name }) => statementFor(name)?.pictogram === 'GHS07')
+    .map(({ class: name }) => name);
   const isTouch = (name: string) => name.startsWith('Skin Irrit.') || name.startsWith('Eye Irrit.');
   const hasRespiratory = classes.some(({ class: name }) => name.startsWith('Resp. Sens.'));
-  const isUnderSkull = (name: string) => signs.has('GHS06') && (regime !== 'HazCom' || name.startsWith('Acute Tox.'));
-  const left = exclaims.filter((name) => !isUnderSkull(name) && !(signs.has('GHS05') && isTouch(name)) && !(hasRespiratory && (isTouch(name) || name.startsWith('Skin Sens.'))));
+  const isUnderSkull = (name: string) =>
+    signs.has('GHS06') && (regime !== 'HazCom' || name.startsWith('Acute Tox.'));
+  const left = exclaims.filter(
+    (name) =>
+      !isUnderSkull(name) &&
+      !(signs.has('GHS05') && isTouch(name)) &&
+      !(hasRespiratory && (isTouch(name) || name.startsWith('Skin Sens.'))),
+  );
   if (left.length === 0) signs.delete('GHS07');
   if (signs.has('GHS02') || signs.has('GHS06')) signs.delete('GHS04');
   return [...signs].sort();
@@ -63,7 +84,9 @@ export function signalWordFor(classes: readonly AssignedClass[]): 'Danger' | 'Wa
 }
 
 /** Hazard statements in the order of the label, without those another one says already. */
-export function hazardStatements(classes: readonly AssignedClass[]): { readonly code: string; readonly text: string; readonly because: string }[] {
+export function hazardStatements(
+  classes: readonly AssignedClass[],
+): { readonly code: string; readonly text: string; readonly because: string }[] {
   const byCode = new Map<string, string>();
   for (const { class: name, because } of classes) {
     const code = codeFor(name);
@@ -82,14 +105,18 @@ export function hazardStatements(classes: readonly AssignedClass[]): { readonly 
   drop('H410', 'H400');
   drop('H411', 'H401');
   drop('H412', 'H402');
-  return [...byCode].map(([code, because]) => ({ code, text: statementText(code), because })).sort((a, b) => a.code.localeCompare(b.code));
+  return [...byCode]
+    .map(([code, because]) => ({ code, text: statementText(code), because }))
+    .sort((a, b) => a.code.localeCompare(b.code));
 }
 
 /** Keys of the tables of precautions that a class falls under. */
 function tableKey(name: string): string {
   const short = stated(name);
   if (short.startsWith('Skin Corr.')) return 'Skin Corr. 1';
-  return short.startsWith('STOT SE 3') ? 'STOT SE 3' : short.replace(/ 1[ABC]$/, (match) => (/(?:Sens\.)/.test(short) ? ' 1' : match));
+  return short.startsWith('STOT SE 3')
+    ? 'STOT SE 3'
+    : short.replace(/ 1[ABC]$/, (match) => (/(?:Sens\.)/.test(short) ? ' 1' : match));
 }
 
 function weightsFor(name: string): Readonly<Record<string, number>> {
@@ -106,8 +133,10 @@ function matchesRow(row: string, key: string): boolean {
     const isSameKind = key.startsWith(head.trim().split(' ')[0] ?? '') && key.endsWith(tail.trim());
     return isSameKind && own >= (from ?? '') && own <= (to ?? '');
   }
-  if (row.startsWith('CMR')) return /^(?:Muta|Carc|Repr)\. /.test(key) && key.includes(row.endsWith('1') ? ' 1' : ' 2');
-  if (row === 'STOT 1' || row === 'STOT 2') return /^STOT (?:SE|RE) /.test(key) && key.endsWith(row.at(-1) ?? '');
+  if (row.startsWith('CMR'))
+    return /^(?:Muta|Carc|Repr)\. /.test(key) && key.includes(row.endsWith('1') ? ' 1' : ' 2');
+  if (row === 'STOT 1' || row === 'STOT 2')
+    return /^STOT (?:SE|RE) /.test(key) && key.endsWith(row.at(-1) ?? '');
   return row === key || (row.endsWith('.') && key.startsWith(row));
 }
 
