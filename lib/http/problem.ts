@@ -10,10 +10,25 @@ export function pointerOf(path: readonly PropertyKey[]): string {
   return `#${path.map((key) => `/${String(key).replaceAll('~', '~0').replaceAll('/', '~1')}`).join('')}`;
 }
 
-/** Every bad field of a failed parse; a refused unknown field is named itself, not its parent. */
-export function fieldErrorsOf(error: z.ZodError, prefix: readonly PropertyKey[] = []): FieldError[] {
-  return error.issues.flatMap((issue) => {
+type Issue = z.core.$ZodIssue;
+
+/** Of the ways a value might have fitted, the one that got further than the kind of value. */
+function nearestBranch(branches: readonly (readonly Issue[])[]): readonly Issue[] | undefined {
+  return branches.find((issues) => issues.length > 0 && issues.every(({ path }) => path.length > 0));
+}
+
+/**
+ * Every bad field of a failed parse; a refused unknown field is named itself, not its parent, and where a value
+ * may be one of several kinds, the fields of the kind it is.
+ */
+export function fieldErrorsOf(
+  error: { readonly issues: readonly Issue[] },
+  prefix: readonly PropertyKey[] = [],
+): FieldError[] {
+  return error.issues.flatMap((issue): FieldError[] => {
     const path = [...prefix, ...issue.path];
+    const branch = issue.code === 'invalid_union' ? nearestBranch(issue.errors) : undefined;
+    if (branch) return fieldErrorsOf({ issues: branch }, path);
     if (issue.code === 'unrecognized_keys') {
       return issue.keys.map((key) => ({
         pointer: pointerOf([...path, key]),

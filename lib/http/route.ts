@@ -5,6 +5,7 @@ import { DomainError, invalid } from '@/lib/domain/errors';
 import { mayByRole } from '@/lib/domain/policy';
 import type { Viewer } from '@/lib/domain/roles';
 import type { BodyOf, Endpoint, ParamsOf, QueryOf, ResponseOf } from '@/lib/schemas/endpoint';
+import { plainWords } from '@/lib/schemas/plain-words';
 import { once } from '@/lib/services/idempotency';
 import { readJson } from './body';
 import { fieldErrorsOf, toProblem } from './problem';
@@ -108,14 +109,14 @@ function queryOf(request: Request): Record<string, string | string[]> {
 /** A parameter that can't be an id names nothing, so it is not found; a bad query is said to be one. */
 function parsePart(schema: z.ZodType | undefined, value: unknown, part: 'params' | 'query'): unknown {
   if (!schema) return undefined;
-  const result = schema.safeParse(value);
+  const result = schema.safeParse(value, { error: plainWords });
   if (result.success) return result.data;
   if (part === 'params') throw new DomainError('not-found', 'There is nothing at this address.');
   throw invalid(fieldErrorsOf(result.error, ['query']));
 }
 
 function parseBody(schema: z.ZodType, value: unknown): unknown {
-  const result = schema.safeParse(value);
+  const result = schema.safeParse(value, { error: plainWords });
   if (result.success) return result.data;
   throw invalid(fieldErrorsOf(result.error));
 }

@@ -10,53 +10,64 @@ const finite = z.number();
 const activityField = z.enum(['ideal', 'davies', 'extended-debye-huckel']).default('davies');
 const temperatureField = finite.min(10, 'At least 10 °C.').max(40, 'At most 40 °C.').default(25);
 const speciesIdField = z.string().min(1).max(60);
-const amountField = finite.min(-1000, 'Absurdly small.').max(1000, 'No more than 1000 mol.');
-const coefficientField = finite.min(-40).max(40);
+const MOST_MOL = 1000;
+const amountField = finite.min(0, 'Only H+ may be negative.').max(MOST_MOL, 'No more than 1000 mol.');
+/** mol by component; H+ counts the protons beyond those of water, so that it alone may be negative. */
+const amountsField = z
+  .object({
+    'H+': finite.min(-MOST_MOL, 'No less than −1000 mol.').max(MOST_MOL, 'No more than 1000 mol.').optional(),
+  })
+  .catchall(amountField)
+  .refine((amounts) => Object.keys(amounts).length > 0, 'Give at least one amount.')
+  .refine((amounts) => Object.keys(amounts).length <= 60, 'At most 60 components.')
+  .refine(
+    (amounts) => Object.keys(amounts).every((id) => id.length > 0 && id.length <= 60),
+    'The name of a component has 1 to 60 characters.',
+  ) as unknown as z.ZodType<Record<string, number>, Record<string, number>>;
+const coefficientField = finite.min(-40, 'At least −40.').max(40, 'At most 40.');
 
 const reactionSchema = z.strictObject({
   species: speciesIdField,
   phase: z.enum(['aq', 's', 'g']),
   stoich: z
     .record(speciesIdField, coefficientField)
-    .refine((stoich) => Object.keys(stoich).length > 0, 'Say what it is formed from.'),
+    .refine(
+      (stoich) => Object.entries(stoich).some(([id, count]) => id !== 'H2O' && count !== 0),
+      'Say which components it is formed from.',
+    ),
   logK: finite.min(-200, 'Beyond any constant.').max(200, 'Beyond any constant.'),
 });
 
-export const speciationSchema = z
-  .strictObject({
-    volumeL: finite
-      .positive('Must be more than 0.')
-      .min(1e-9, 'Less than a nanolitre.')
-      .max(10_000, 'At most 10 000 L.')
-      .default(1),
-    amounts: z
-      .record(speciesIdField, amountField)
-      .refine((amounts) => Object.keys(amounts).length > 0, 'Give at least one amount.')
-      .refine((amounts) => Object.keys(amounts).length <= 60, 'At most 60 components.'),
-    reactions: z
-      .union([z.literal('catalogue'), z.array(reactionSchema).max(400, 'At most 400 reactions.')])
-      .default('catalogue'),
-    pH: finite.min(-2).max(16).nullable().default(null),
-    suppress: z.array(speciesIdField).max(200).default([]),
-    activity: activityField,
-    temperatureC: temperatureField,
-    headspace: z
-      .discriminatedUnion('kind', [
-        z.strictObject({ kind: z.literal('none') }),
-        z.strictObject({ kind: z.literal('sealed'), volumeL: finite.positive().max(10_000) }),
-        z.strictObject({
-          kind: z.literal('open'),
-          partialPressuresBar: z.record(speciesIdField, finite.positive().max(100)),
-        }),
-      ])
-      .default({ kind: 'none' }),
-  })
-  .superRefine(({ amounts }, context) => {
-    for (const [id, amount] of Object.entries(amounts)) {
-      if (amount < 0 && id !== 'H+')
-        context.addIssue({ code: 'custom', path: ['amounts', id], message: 'Only H+ may be negative.' });
-    }
-  });
+export const speciationSchema = z.strictObject({
+  volumeL: finite.min(1e-9, 'At least 1e-9 L.').max(10_000, 'At most 10 000 L.').default(1),
+  amounts: amountsField,
+  reactions: z
+    .union(
+      [z.literal('catalogue'), z.array(reactionSchema).max(400, 'At most 400 reactions.')],
+      'Say "catalogue", or give a list of reactions.',
+    )
+    .default('catalogue'),
+  pH: finite.min(-2, 'At least −2.').max(16, 'At most 16.').nullable().default(null),
+  suppress: z.array(speciesIdField).max(200).default([]),
+  activity: activityField,
+  temperatureC: temperatureField,
+  headspace: z
+    .discriminatedUnion('kind', [
+      z.strictObject({ kind: z.literal('none') }),
+      z.strictObject({
+        kind: z.literal('sealed'),
+        volumeL: finite.min(1e-9, 'At least 1e-9 L.').max(10_000, 'At most 10 000 L.'),
+      }),
+      z.strictObject({
+        kind: z.literal('open'),
+        partialPressuresBar: z.record(
+          speciesIdField,
+          finite.positive('Must be more than 0.').max(100, 'At most 100 bar.'),
+        ),
+      }),
+    ])
+    .default({ kind: 'none' }),
+});
 export type SpeciationBody = z.output<typeof speciationSchema>;
 
 const noteSchema = z.object({ code: z.string(), message: z.string() });
@@ -103,10 +114,7 @@ const soluteSchema = z.strictObject({
 export const portionSchema = z.strictObject({
   label: z.string().trim().min(1, 'Give it a label.').max(120),
   solutes: z.array(soluteSchema).max(20, 'At most 20 solutes.'),
-  volumeMl: finite
-    .positive('Must be more than 0 mL.')
-    .min(0.001, 'At least 0.001 mL.')
-    .max(100_000, 'At most 100 000 mL.'),
+  volumeMl: finite.min(0.001, 'At least 0.001 mL.').max(100_000, 'At most 100 000 mL.'),
 });
 
 export const mixPreviewSchema = z.strictObject({

@@ -1,6 +1,7 @@
 import 'server-only';
+import { gasId } from '@/lib/chemistry/reaction-system';
 import { speciate } from '@/lib/chemistry/speciation';
-import { isMasterComponent } from '@/lib/chemistry/species-catalogue';
+import { findReaction, isMasterComponent } from '@/lib/chemistry/species-catalogue';
 import { findSubstance } from '@/lib/chemistry/substances';
 import type { EquilibriumState, NotConverged } from '@/lib/chemistry/types';
 import { DomainError, invalid } from '@/lib/domain/errors';
@@ -20,35 +21,51 @@ function refuse(outcome: NotConverged): never {
   });
 }
 
-/** @throws DomainError `invalid` where a component is not in the catalogue, `not-converged` */
-export function computeSpeciation(body: SpeciationBody): EquilibriumState {
-  const unknown: FieldError[] = [];
-  if (body.reactions === 'catalogue') {
-    for (const id of Object.keys(body.amounts)) {
-      if (!isMasterComponent(id))
-        unknown.push({
+function strangersIn(body: SpeciationBody): FieldError[] {
+  return body.reactions === 'catalogue'
+    ? Object.keys(body.amounts)
+        .filter((id) => !isMasterComponent(id))
+        .map((id) => ({
           pointer: `#/amounts/${escapePointer(id)}`,
           detail: 'This is not a component of the catalogue.',
-        });
-    }
-  } else {
-    const components = new Set([
-      ...Object.keys(body.amounts),
-      ...body.reactions.flatMap(({ stoich }) => Object.keys(stoich)),
-    ]);
-    const seen = new Set<string>();
-    body.reactions.forEach(({ species }, index) => {
-      if (components.has(species))
-        unknown.push({
-          pointer: `#/reactions/${index}/species`,
-          detail: 'This species is also a component.',
-        });
-      if (seen.has(species))
-        unknown.push({ pointer: `#/reactions/${index}/species`, detail: 'This species is formed twice.' });
-      seen.add(species);
-    });
-  }
-  if (unknown.length > 0) throw invalid(unknown);
+        }))
+    : repeatedIn(body.reactions, Object.keys(body.amounts));
+}
+
+function repeatedIn(
+  reactions: Exclude<SpeciationBody['reactions'], string>,
+  totals: readonly string[],
+): FieldError[] {
+  const components = new Set([...totals, ...reactions.flatMap(({ stoich }) => Object.keys(stoich))]);
+  const seen = new Set<string>();
+  return reactions.flatMap(({ species }, index) => {
+    const pointer = `#/reactions/${index}/species`;
+    const isRepeated = seen.has(species);
+    seen.add(species);
+    if (components.has(species)) return [{ pointer, detail: 'This species is also a component.' }];
+    return isRepeated ? [{ pointer, detail: 'This species is formed twice.' }] : [];
+  });
+}
+
+/** Open gases that nothing forms. */
+function groundlessGasesIn({ headspace, reactions }: SpeciationBody): FieldError[] {
+  if (headspace.kind !== 'open') return [];
+  return Object.keys(headspace.partialPressuresBar)
+    .filter((name) =>
+      reactions === 'catalogue'
+        ? findReaction(gasId(name)) === null
+        : !reactions.some(({ species, phase }) => phase === 'g' && species === gasId(name)),
+    )
+    .map((name) => ({
+      pointer: `#/headspace/partialPressuresBar/${escapePointer(name)}`,
+      detail: `No reaction forms ${gasId(name)}.`,
+    }));
+}
+
+/** @throws DomainError `invalid` where a component or gas is not known or a species stands twice, `not-converged` */
+export function computeSpeciation(body: SpeciationBody): EquilibriumState {
+  const errors = [...strangersIn(body), ...groundlessGasesIn(body)];
+  if (errors.length > 0) throw invalid(errors);
   const outcome = speciate(body);
   return outcome.converged ? outcome : refuse(outcome);
 }
