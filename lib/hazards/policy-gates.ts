@@ -1,7 +1,7 @@
 import { screenedBottle } from './contents';
 import type { ScreenedBottle, ScreenedSolute } from './contents';
 import { sortFindings } from './screen';
-import { POLICY_GATES } from './tables';
+import { findSubstanceHazards, POLICY_GATES } from './tables';
 import type { BottleContent, Finding, Severity } from './types';
 
 interface Gate {
@@ -10,6 +10,9 @@ interface Gate {
   readonly severity: Severity;
   readonly trips: (solute: ScreenedSolute, bottle: ScreenedBottle) => boolean;
 }
+
+/** Restricted substances whose gate is their own; ammonium nitrate is restricted as a solid. */
+const OWN_GATE = ['cyanide', 'azide', 'mercury_salt', 'chromate', 'perchlorate', 'ammonia_or_ammonium'];
 
 /** When each gate of the policy table trips; amounts are ours, to be confirmed locally. */
 const GATES: readonly Gate[] = [
@@ -41,6 +44,15 @@ const GATES: readonly Gate[] = [
     title: 'Perchlorate',
     severity: 'review',
     trips: ({ groups, molarity }) => groups.has('perchlorate') && molarity > 0.1,
+  },
+  {
+    id: 'restricted',
+    title: 'Restricted substance',
+    severity: 'controlled',
+    trips: ({ groups, molarity, substance }) =>
+      molarity > 0.1 &&
+      !OWN_GATE.some((group) => groups.has(group)) &&
+      (findSubstanceHazards(substance.id)?.restricted ?? false),
   },
   {
     id: 'silver_ammonia',

@@ -1,6 +1,6 @@
 import { pourMix } from '../chemistry/mixing';
-import { findSubstance } from '../chemistry/substances';
-import type { ActivityModel, Mix, NotConverged, Solute } from '../chemistry/types';
+import type { ActivityModel, Mix, NotConverged } from '../chemistry/types';
+import { solutesAfterReaction } from './classification/after-reaction';
 import { classifySolution } from './classification/classify-solution';
 import { screenPolicy } from './policy-gates';
 import { decide, screenMix, sortFindings } from './screen';
@@ -43,25 +43,13 @@ export function previewMix({
     equilibrium: mix.equilibrium,
     appearance: mix.appearance,
     findings,
-    classification: classifySolution({ solutes: leftAfterNeutralising(mix), pH: mix.equilibrium.pH }),
+    classification: classifySolution({
+      solutes: solutesAfterReaction(mix.diluted, mix.equilibrium),
+      pH: mix.equilibrium.pH,
+    }),
     decision: decide(findings),
     ...(slips ? { slips: checkSlips({ portions, others: [], activity, temperatureC, room }) } : {}),
   };
-}
-
-/** Acids and bases that neutralised each other no longer count as what they were; the excess does. */
-function leftAfterNeutralising({ diluted }: Mix): Solute[] {
-  const protons = diluted.map(
-    ({ substance, molarity }) => (findSubstance(substance)?.releases?.['H+'] ?? 0) * molarity,
-  );
-  const acid = protons.reduce((sum, value) => sum + Math.max(0, value), 0);
-  const base = protons.reduce((sum, value) => sum + Math.max(0, -value), 0);
-  const used = Math.min(acid, base);
-  return diluted.flatMap(({ substance, molarity }, index) => {
-    const own = protons[index] ?? 0;
-    const share = own === 0 ? 1 : 1 - used / (own > 0 ? acid : base);
-    return share > 1e-9 ? [{ substance, molarity: molarity * share }] : [];
-  });
 }
 
 const MOST_PORTIONS_FOR_ORDERS = 4;

@@ -1,5 +1,6 @@
 import { findSubstance } from '../../../lib/chemistry/substances';
 import { classifySolution, massPercent } from '../../../lib/hazards/classification/classify-solution';
+import { previewMix } from '../../../lib/hazards/preview';
 import { MOST_PRECAUTIONS, precautionText } from '../../../lib/hazards/classification/statements';
 import bandData from './classification-bands.json';
 
@@ -148,4 +149,38 @@ test('an unknown substance is refused', () => {
   expect(() => classifySolution({ solutes: [{ substance: 'unobtainium', molarity: 1 }] })).toThrow(
     RangeError,
   );
+});
+
+describe('a mix is classified by what is left after neutralising', () => {
+  const codesOf = (...portions: (readonly [string, number])[]) => {
+    const outcome = previewMix({
+      portions: portions.map(([substance, molarity], index) => ({
+        label: String(index),
+        volumeMl: 50,
+        solutes: [{ substance, molarity }],
+      })),
+      activity: 'davies',
+      temperatureC: 25,
+      room: { volumeM3: 150, airChangesPerHour: 6, fumeCupboard: false },
+    });
+    if (!('decision' in outcome)) throw new Error(outcome.message);
+    return outcome.classification.hazards.map(({ code }) => code);
+  };
+  test('equal amounts of strong acid and alkali leave salt water', () => {
+    expect(codesOf(['hydrochloric-acid', 4], ['sodium-hydroxide', 4])).toEqual([]);
+  });
+  test('an excess of alkali still corrodes', () => {
+    expect(codesOf(['hydrochloric-acid', 1], ['sodium-hydroxide', 5])).toContain('H314');
+  });
+  test('barium stays poisonous when its hydroxide is neutralised', () => {
+    expect(codesOf(['hydrochloric-acid', 0.4], ['barium-hydroxide', 0.2]).length).toBeGreaterThan(0);
+  });
+  test('ammonia set free from its salt counts as ammonia', () => {
+    // 2 mol/L of ammonia: about pH 11.8, past the limit of 11.5.
+    expect(codesOf(['ammonium-chloride', 4], ['sodium-hydroxide', 4])).toContain('H314');
+    expect(codesOf(['ammonium-chloride', 4], ['sodium-chloride', 4])).not.toContain('H314');
+  });
+  test('sulfide does not lose its class to the acid', () => {
+    expect(codesOf(['sodium-sulfide', 1], ['hydrochloric-acid', 1])).toContain('H314');
+  });
 });

@@ -155,9 +155,13 @@ export function aquaticClasses({ ingredients, regime }: Mixture): AssignedClass[
   const chronic3 = sum('Aquatic Chronic 3', one);
   const chronic4 = sum('Aquatic Chronic 4', one);
   const THRESHOLD = 25;
+  const named = ingredients
+    .filter(({ classes }) => classes.some((name) => name.startsWith('Aquatic')))
+    .map(({ name, percent }) => `${percentText(percent)} ${name}`)
+    .join(', ');
   const say = (name: string, value: number): AssignedClass => ({
     class: name,
-    because: `weighted sum ${Number(value.toPrecision(3))} % of 25 %`,
+    because: `${named}: weighted sum ${Number(value.toPrecision(3))} %, ${name} from ${THRESHOLD} %`,
   });
   const acute: readonly (readonly [string, number])[] = [
     ['Aquatic Acute 1', acute1],
