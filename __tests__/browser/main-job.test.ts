@@ -78,8 +78,8 @@ async function makeBatch(page: Page, solution: string, requestCode: string): Pro
   }
   const steps = page.getByRole('checkbox');
   for (let step = 0; step < (await steps.count()); step += 1) {
-    await steps.nth(step).check();
-    await page.waitForLoadState('networkidle');
+    await steps.nth(step).click();
+    await page.getByRole('checkbox', { checked: true }).nth(step).waitFor();
   }
   await page.getByRole('button', { name: 'Mark as checked' }).click();
   await page.getByRole('button', { name: 'Fill these bottles' }).click();
@@ -146,7 +146,7 @@ test('(a) a copper(II)-ammonia demonstration is agreed at once, made, labelled a
     /P-\d{4}/.exec(await purchasing.getByRole('heading', { level: 1 }).innerText())?.[0] ?? '';
   await purchasing.getByRole('button', { name: /^Approve/ }).click();
   await purchasing.getByRole('button', { name: 'Send to the supplier' }).click();
-  await purchasing.getByText('acknowledged', { exact: true }).first().waitFor();
+  await purchasing.locator('main header').getByText('acknowledged').waitFor();
   await purchasing.getByRole('button', { name: /^Pay/ }).click();
   await purchasing.getByText(/^yes, pi_/).waitFor();
   const letters = (await (await fetch(`${standInUrl()}/mail/messages.json`)).json()) as {
@@ -178,7 +178,7 @@ test('(a) a copper(II)-ammonia demonstration is agreed at once, made, labelled a
   for (const sheet of sheets) {
     await prep.goto(sheet);
     await prep.getByRole('button', { name: `Hand over to ${code}` }).click();
-    await prep.getByText('handed over', { exact: true }).first().waitFor();
+    await prep.getByRole('table', { name: 'Bottles' }).getByText('handed over').first().waitFor();
   }
   await instructor.goto(requestPath);
   await instructor.getByText('handed over', { exact: true }).first().waitFor();

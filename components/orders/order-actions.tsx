@@ -64,6 +64,7 @@ export function OrderActions({
     } catch (error) {
       if (!(error instanceof ApiProblem)) throw error;
       setFailure(error.errors[0]?.detail ?? error.message);
+      if (error.status === 409) router.refresh();
     } finally {
       setBusy(null);
     }
