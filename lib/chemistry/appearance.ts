@@ -1,5 +1,5 @@
 import { findSpecies } from './species-catalogue';
-import type { Appearance, EquilibriumState } from './types';
+import type { Appearance, SolidState, SpeciesState } from './types';
 
 /**
  * What the eye will see. An approximation: each coloured species has one representative colour at one
@@ -41,8 +41,14 @@ function strengthFor(id: string): number {
   return STRONG_COLOURS.find(([pattern]) => pattern.test(id))?.[1] ?? USUAL_STRENGTH;
 }
 
+/** What of a state is looked at. */
+interface Seen {
+  readonly species: readonly Pick<SpeciesState, 'id' | 'molarity'>[];
+  readonly solids: readonly Pick<SolidState, 'id' | 'grams'>[];
+}
+
 /** Colour of the solution, in words too, and each solid that would be seen, heaviest first. */
-export function appearanceOf(state: EquilibriumState): Appearance {
+export function appearanceOf(state: Seen): Appearance {
   const absorbance: [number, number, number] = [0, 0, 0];
   let strongest = '';
   let strongestShare = 0;

@@ -36,7 +36,8 @@ export class DissolvedPart {
   iterations = 0;
   ionicStrength = 0;
   private isCoupled = false;
-  private readonly slope: Float64Array;
+  /** dlnγ/dI by solute. */
+  readonly slope: Float64Array;
   private readonly free: Int32Array;
   /** Place of a row among the free ones, −1 where a phase stands. */
   private readonly placeOf: Int32Array;
@@ -214,7 +215,15 @@ export class DissolvedPart {
 
   /** Newton's direction, shortened where it would leave the range of numbers. @returns the largest change; NaN where there is none */
   private newtonStep(): number {
-    const { table, amounts, placeOf, made, madeOf, matrix, step, residual, freeCount: f } = this;
+    const { step, residual } = this;
+    const size = this.fillMatrix();
+    for (let r = 0; r < size; r += 1) step[r] = -(residual[r] ?? 0);
+    return solveInPlace(this.matrix, step, size) ? this.limitStep() : NaN;
+  }
+
+  /** Derivatives of the balances by the unknowns. @returns how many unknowns there are */
+  private fillMatrix(): number {
+    const { table, amounts, placeOf, made, madeOf, matrix, freeCount: f } = this;
     const { entryStart, entryRow, entryValue } = table;
     const size = this.isCoupled ? f + 1 : f;
     this.unknownCount = size;
@@ -244,8 +253,29 @@ export class DissolvedPart {
       if (perMol) matrix[f * size + f] = (matrix[f * size + f] ?? 0) + ofStrength * byStrength;
     }
     if (perMol) matrix[f * size + f] = (matrix[f * size + f] ?? 0) - 1;
-    for (let r = 0; r < size; r += 1) step[r] = -(residual[r] ?? 0);
-    return solveInPlace(matrix, step, size) ? this.limitStep() : NaN;
+    return size;
+  }
+
+  /**
+   * How the unknowns answer a shift of the balances, at the answer (implicit function theorem).
+   * @param shift - mol by row of the basis, made less total; then that of ln(ionic strength)
+   * @param answer - receives the change of y by row of the basis; then that of u
+   * @returns false where the answer is singular
+   */
+  respond(shift: Float64Array, answer: Float64Array): boolean {
+    const { problem, free, step, matrix, freeCount: f } = this;
+    const n = problem.componentCount;
+    answer.fill(0);
+    if (f === 0) return true;
+    this.isCoupled = problem.activity !== null;
+    this.computeBalances();
+    const size = this.fillMatrix();
+    for (let r = 0; r < f; r += 1) step[r] = -(shift[free[r] ?? 0] ?? 0) / (this.made[r] ?? 1);
+    if (size > f) step[f] = -(shift[n] ?? 0);
+    if (!solveInPlace(matrix, step, size)) return false;
+    for (let r = 0; r < f; r += 1) answer[free[r] ?? 0] = step[r] ?? 0;
+    answer[n] = size > f ? (step[f] ?? 0) : 0;
+    return true;
   }
 
   private limitStep(): number {

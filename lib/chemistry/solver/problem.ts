@@ -56,3 +56,23 @@ export interface EquilibriumFailure {
 }
 
 export type EquilibriumResult = EquilibriumSolution | EquilibriumFailure;
+
+/** A small change of a problem, as a direction. */
+export interface EquilibriumChange {
+  /** d lnK by column, solutes and phases. */
+  readonly lnK: Float64Array;
+  /** d total by component, mol. */
+  readonly totals: Float64Array;
+  /** d ln of the ionic strength per mol: minus that of the volume. */
+  readonly lnStrengthPerMol: number;
+}
+
+/** How an answer follows such a change while the same solids stay. */
+export interface EquilibriumResponse {
+  /** d ln amount by solute. */
+  readonly lnAmounts: Float64Array;
+  /** d ln activity by component. */
+  readonly lnActivity: Float64Array;
+  /** d mol by phase. */
+  readonly phaseAmounts: Float64Array;
+}

@@ -1,6 +1,13 @@
 import { DissolvedPart } from './dissolved';
 import { driveToCompletion } from './drive';
-import type { EquilibriumFailure, EquilibriumProblem, EquilibriumResult } from './problem';
+import type {
+  EquilibriumChange,
+  EquilibriumFailure,
+  EquilibriumProblem,
+  EquilibriumResponse,
+  EquilibriumResult,
+} from './problem';
+import { respondTo } from './respond';
 import type { Tableau } from './tableau';
 
 /**
@@ -61,6 +68,11 @@ export class EquilibriumSolver {
     this.search = cold.status === 'converged' ? search : null;
     return cold;
   }
+
+  /** How the last answer follows a small change. @returns null where there is none or it is singular */
+  respond(change: EquilibriumChange): EquilibriumResponse | null {
+    return this.search?.respond(change) ?? null;
+  }
 }
 
 function noAmountsFit({ soluteCount, phaseCount }: EquilibriumProblem): EquilibriumFailure {
@@ -112,6 +124,10 @@ class Search {
       if (!this.activate(joining)) return this.failure('infeasible');
     }
     return this.failure('iteration-limit');
+  }
+
+  respond(change: EquilibriumChange): EquilibriumResponse | null {
+    return respondTo(change, this.problem, this.table, this.dissolved);
   }
 
   private setScale(): void {
