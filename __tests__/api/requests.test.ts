@@ -21,11 +21,36 @@ let cyanide: RequestLineInput;
 let acid: RequestLineInput;
 
 beforeAll(async () => {
-  [instructor, other, prep, safety] = await Promise.all(['instructor', 't.renwick', 'prep', 'safety'].map((mailbox) => signIn(mailbox)) as [Promise<Caller>, Promise<Caller>, Promise<Caller>, Promise<Caller>]);
-  copper = { kind: 'solution', solutionId: (await recipe(instructor, 'Copper(II) sulfate 0.1 mol/L')).id, volumePerBenchMl: 40, spareBenches: 1 };
-  acid = { kind: 'solution', solutionId: (await recipe(instructor, 'Hydrochloric acid 0.1 mol/L')).id, volumePerBenchMl: 30, spareBenches: 0 };
-  ammine = { kind: 'demonstration', demonstrationId: (await demonstration(instructor, 'Copper hydroxide to deep blue ammine')).id, performances: 2 };
-  cyanide = { kind: 'demonstration', demonstrationId: (await demonstration(instructor, 'Silver into its cyanide complex')).id, performances: 1 };
+  [instructor, other, prep, safety] = await Promise.all(
+    ['instructor', 't.renwick', 'prep', 'safety'].map((mailbox) => signIn(mailbox)) as [
+      Promise<Caller>,
+      Promise<Caller>,
+      Promise<Caller>,
+      Promise<Caller>,
+    ],
+  );
+  copper = {
+    kind: 'solution',
+    solutionId: (await recipe(instructor, 'Copper(II) sulfate 0.1 mol/L')).id,
+    volumePerBenchMl: 40,
+    spareBenches: 1,
+  };
+  acid = {
+    kind: 'solution',
+    solutionId: (await recipe(instructor, 'Hydrochloric acid 0.1 mol/L')).id,
+    volumePerBenchMl: 30,
+    spareBenches: 0,
+  };
+  ammine = {
+    kind: 'demonstration',
+    demonstrationId: (await demonstration(instructor, 'Copper hydroxide to deep blue ammine')).id,
+    performances: 2,
+  };
+  cyanide = {
+    kind: 'demonstration',
+    demonstrationId: (await demonstration(instructor, 'Silver into its cyanide complex')).id,
+    performances: 1,
+  };
 });
 
 const planOf = (request: RequestDetail) => request.plan as unknown as RequestPlan;
@@ -45,7 +70,11 @@ describe('who may ask', () => {
 
   it.each(['purchasing', 'safety', 'admin'])('%s asks for nothing', async (mailbox) => {
     const caller = await signIn(mailbox);
-    problemOf(await caller.post('/api/requests', { sessionId: NO_SUCH_ID, note: null, lines: [copper] }), 403, 'forbidden');
+    problemOf(
+      await caller.post('/api/requests', { sessionId: NO_SUCH_ID, note: null, lines: [copper] }),
+      403,
+      'forbidden',
+    );
     expect((await caller.get('/api/requests')).status).toBe(200);
   });
 
@@ -59,15 +88,44 @@ describe('who may ask', () => {
   it('another instructor can read a request but not change, submit or withdraw it', async () => {
     const draft = await buildDraft(instructor, YEAR, [copper]);
     expect(bodyOf<RequestDetail>(await other.get(`/api/requests/${draft.id}`)).mayChange).toBe(false);
-    problemOf(await other.patch(`/api/requests/${draft.id}`, { note: 'mine now', lines: [acid], version: draft.version }), 403, 'forbidden');
-    problemOf(await other.post(`/api/requests/${draft.id}/submit`, { version: draft.version }), 403, 'forbidden');
-    problemOf(await other.post(`/api/requests/${draft.id}/withdraw`, { version: draft.version }), 403, 'forbidden');
-    expect(bodyOf<RequestDetail>(await instructor.get(`/api/requests/${draft.id}`))).toMatchObject({ state: 'draft', note: null, version: draft.version, mayChange: true });
+    problemOf(
+      await other.patch(`/api/requests/${draft.id}`, {
+        note: 'mine now',
+        lines: [acid],
+        version: draft.version,
+      }),
+      403,
+      'forbidden',
+    );
+    problemOf(
+      await other.post(`/api/requests/${draft.id}/submit`, { version: draft.version }),
+      403,
+      'forbidden',
+    );
+    problemOf(
+      await other.post(`/api/requests/${draft.id}/withdraw`, { version: draft.version }),
+      403,
+      'forbidden',
+    );
+    expect(bodyOf<RequestDetail>(await instructor.get(`/api/requests/${draft.id}`))).toMatchObject({
+      state: 'draft',
+      note: null,
+      version: draft.version,
+      mayChange: true,
+    });
   });
 
   it('a page of another site can not ask in somebody’s name', async () => {
-    problemOf(await instructor.post('/api/requests', {}).set('origin', 'https://elsewhere.example'), 403, 'foreign-origin');
-    problemOf(await instructor.post('/api/requests', {}).set('sec-fetch-site', 'cross-site'), 403, 'foreign-origin');
+    problemOf(
+      await instructor.post('/api/requests', {}).set('origin', 'https://elsewhere.example'),
+      403,
+      'foreign-origin',
+    );
+    problemOf(
+      await instructor.post('/api/requests', {}).set('sec-fetch-site', 'cross-site'),
+      403,
+      'foreign-origin',
+    );
   });
 
   it.each([NO_SUCH_ID, 'not-an-id', '1'])('nothing is at /api/requests/%s', async (id) => {
@@ -96,7 +154,11 @@ describe('what can not be asked for', () => {
     ['half a spare bench', () => line({ spareBenches: 0.5 }), ['#/lines/0/spareBenches']],
     ['a recipe that is not there', () => line({ solutionId: NO_SUCH_ID }), ['#/lines/0/solutionId']],
     ['a recipe named by words', () => line({ solutionId: 'copper' }), ['#/lines/0/solutionId']],
-    ['a demonstration that is not there', () => bad({ lines: [copper, { ...ammine, demonstrationId: NO_SUCH_ID }] }), ['#/lines/1/demonstrationId']],
+    [
+      'a demonstration that is not there',
+      () => bad({ lines: [copper, { ...ammine, demonstrationId: NO_SUCH_ID }] }),
+      ['#/lines/1/demonstrationId'],
+    ],
     ['a field we do not know', () => bad({ colour: 'blue' }), ['#/colour']],
     ['two faults at once', () => bad({ lines: [], note: 'x'.repeat(2001) }), ['#/lines', '#/note']],
   ])('%s is refused by name, and nothing is kept', async (_name, body, pointers) => {
@@ -106,13 +168,24 @@ describe('what can not be asked for', () => {
 
   it('a number that is none is named too', async () => {
     const text = JSON.stringify(line({ volumePerBenchMl: 123456 })).replace('123456', 'NaN');
-    const response = await instructor.post('/api/requests').set('content-type', 'application/json').send(text);
+    const response = await instructor
+      .post('/api/requests')
+      .set('content-type', 'application/json')
+      .send(text);
     expect(pointersOf(response)).toEqual(['#/lines/0/volumePerBenchMl']);
   });
 
   it('a body that is no JSON, of another type or too large is refused', async () => {
-    problemOf(await instructor.post('/api/requests').set('content-type', 'application/json').send('{"lines": ['), 400, 'malformed');
-    problemOf(await instructor.post('/api/requests').set('content-type', 'text/plain').send('copper please'), 415, 'unsupported-type');
+    problemOf(
+      await instructor.post('/api/requests').set('content-type', 'application/json').send('{"lines": ['),
+      400,
+      'malformed',
+    );
+    problemOf(
+      await instructor.post('/api/requests').set('content-type', 'text/plain').send('copper please'),
+      415,
+      'unsupported-type',
+    );
     problemOf(await instructor.post('/api/requests', bad({ note: 'x'.repeat(400_000) })), 413, 'too-large');
   });
 
@@ -129,10 +202,19 @@ describe('asking', () => {
     const session = await buildSession(instructor, YEAR);
     const body = { sessionId: session.id, note: 'once', lines: [copper] };
     const key = `twice-${session.id}`;
-    const [first, second] = await Promise.all([instructor.post('/api/requests', body).set('idempotency-key', key), instructor.post('/api/requests', body).set('idempotency-key', key)]);
+    const [first, second] = await Promise.all([
+      instructor.post('/api/requests', body).set('idempotency-key', key),
+      instructor.post('/api/requests', body).set('idempotency-key', key),
+    ]);
     expect(bodyOf<RequestDetail>(second, 201).id).toBe(bodyOf<RequestDetail>(first, 201).id);
-    expect(bodyOf<LabSession>(await instructor.get(`/api/lab-sessions/${session.id}`)).requests).toHaveLength(1);
-    problemOf(await instructor.post('/api/requests', { ...body, note: 'other' }).set('idempotency-key', key), 409, 'conflict');
+    expect(bodyOf<LabSession>(await instructor.get(`/api/lab-sessions/${session.id}`)).requests).toHaveLength(
+      1,
+    );
+    problemOf(
+      await instructor.post('/api/requests', { ...body, note: 'other' }).set('idempotency-key', key),
+      409,
+      'conflict',
+    );
   });
 
   it('gathers the volume for benches, spare benches and demonstrations, and the mass it takes', async () => {
@@ -154,7 +236,11 @@ describe('asking', () => {
     expect(request.planHash).toMatch(/^[0-9a-f]{64}$/);
     expect(request.review).toBeNull();
     expect(request.story.map(({ toState }) => toState)).toEqual(['draft', 'asked', 'agreed']);
-    expect(request.story.every(({ actorName, at }) => actorName === 'Ines Calloway' && !Number.isNaN(Date.parse(at)))).toBe(true);
+    expect(
+      request.story.every(
+        ({ actorName, at }) => actorName === 'Ines Calloway' && !Number.isNaN(Date.parse(at)),
+      ),
+    ).toBe(true);
   });
 
   it('silver in cyanide beside a dilute acid goes to safety with the hydrogen cyanide it could give', async () => {
@@ -171,10 +257,21 @@ describe('asking', () => {
 
   it('what is asked by others for the same room and hour is screened together', async () => {
     const session = await buildSession(instructor, YEAR);
-    const ask = async (lines: RequestLineInput[]) => submit(instructor, bodyOf<RequestDetail>(await instructor.post('/api/requests', { sessionId: session.id, note: null, lines }), 201));
+    const ask = async (lines: RequestLineInput[]) =>
+      submit(
+        instructor,
+        bodyOf<RequestDetail>(
+          await instructor.post('/api/requests', { sessionId: session.id, note: null, lines }),
+          201,
+        ),
+      );
     expect((await ask([acid])).state).toBe('agreed');
     const second = await ask([cyanide]);
-    expect(planOf(second).findings.some(({ scope, gas }) => scope === 'neighbours' && gas !== null && /HCN/.test(gas.species))).toBe(true);
+    expect(
+      planOf(second).findings.some(
+        ({ scope, gas }) => scope === 'neighbours' && gas !== null && /HCN/.test(gas.species),
+      ),
+    ).toBe(true);
   });
 
   it.each<[string, () => RequestLineInput]>([
@@ -183,17 +280,32 @@ describe('asking', () => {
   ])('a request that is %s is not submitted a second time', async (_state, line) => {
     const draft = await buildDraft(instructor, YEAR, [line()]);
     const submitted = await submit(instructor, draft);
-    const stale = problemOf(await instructor.post(`/api/requests/${draft.id}/submit`, { version: draft.version }), 409, 'conflict');
+    const stale = problemOf(
+      await instructor.post(`/api/requests/${draft.id}/submit`, { version: draft.version }),
+      409,
+      'conflict',
+    );
     expect(stale.current?.version).toBeGreaterThan(draft.version);
-    problemOf(await instructor.post(`/api/requests/${draft.id}/submit`, { version: submitted.version }), 409, 'wrong-state');
-    expect(bodyOf<RequestDetail>(await instructor.get(`/api/requests/${draft.id}`)).review).toEqual(submitted.review);
+    problemOf(
+      await instructor.post(`/api/requests/${draft.id}/submit`, { version: submitted.version }),
+      409,
+      'wrong-state',
+    );
+    expect(bodyOf<RequestDetail>(await instructor.get(`/api/requests/${draft.id}`)).review).toEqual(
+      submitted.review,
+    );
   });
 
   it('shows a plan before anything is saved, the same as the one that is frozen later', async () => {
     const session = await buildSession(instructor, YEAR);
-    const preview = bodyOf<RequestPlan>(await instructor.post('/api/requests/plan-preview', { sessionId: session.id, lines: [copper, ammine] }));
+    const preview = bodyOf<RequestPlan>(
+      await instructor.post('/api/requests/plan-preview', { sessionId: session.id, lines: [copper, ammine] }),
+    );
     expect(bodyOf<LabSession>(await instructor.get(`/api/lab-sessions/${session.id}`)).requests).toEqual([]);
-    const draft = bodyOf<RequestDetail>(await instructor.post('/api/requests', { sessionId: session.id, note: null, lines: [copper, ammine] }), 201);
+    const draft = bodyOf<RequestDetail>(
+      await instructor.post('/api/requests', { sessionId: session.id, note: null, lines: [copper, ammine] }),
+      201,
+    );
     expect(planOf(await submit(instructor, draft))).toEqual(preview);
   });
 });
@@ -201,7 +313,8 @@ describe('asking', () => {
 describe('changing', () => {
   it('of two who change the same request the second is told and sees the newer one', async () => {
     const draft = await buildDraft(instructor, YEAR, [copper]);
-    const change = (note: string) => instructor.patch(`/api/requests/${draft.id}`, { note, lines: [copper], version: draft.version });
+    const change = (note: string) =>
+      instructor.patch(`/api/requests/${draft.id}`, { note, lines: [copper], version: draft.version });
     const answers = await Promise.all([change('first'), change('second')]);
     expect(answers.map(({ status }) => status).sort()).toEqual([200, 409]);
     const kept = bodyOf<RequestDetail>(await instructor.get(`/api/requests/${draft.id}`));
@@ -212,7 +325,13 @@ describe('changing', () => {
   it('a change of an agreed request is judged again', async () => {
     const agreed = await submit(instructor, await buildDraft(instructor, YEAR, [copper]));
     expect(agreed.state).toBe('agreed');
-    const changed = bodyOf<RequestDetail>(await instructor.patch(`/api/requests/${agreed.id}`, { note: null, lines: [cyanide], version: agreed.version }));
+    const changed = bodyOf<RequestDetail>(
+      await instructor.patch(`/api/requests/${agreed.id}`, {
+        note: null,
+        lines: [cyanide],
+        version: agreed.version,
+      }),
+    );
     expect(changed.state).toBe('in-review');
     expect(changed.planHash).not.toBe(agreed.planHash);
   });
@@ -220,7 +339,13 @@ describe('changing', () => {
   it('a change of the plan makes the waiting review lapse', async () => {
     const waiting = await submit(instructor, await buildDraft(instructor, YEAR, [cyanide]));
     const reviewId = waiting.review?.id;
-    const changed = bodyOf<RequestDetail>(await instructor.patch(`/api/requests/${waiting.id}`, { note: null, lines: [cyanide, copper], version: waiting.version }));
+    const changed = bodyOf<RequestDetail>(
+      await instructor.patch(`/api/requests/${waiting.id}`, {
+        note: null,
+        lines: [cyanide, copper],
+        version: waiting.version,
+      }),
+    );
     expect(bodyOf<ReviewCase>(await safety.get(`/api/reviews/${reviewId}`)).state).toBe('lapsed');
     expect(changed.review).toMatchObject({ state: 'waiting' });
     expect(changed.review?.id).not.toBe(reviewId);
@@ -228,21 +353,42 @@ describe('changing', () => {
 
   it('a withdrawn request stays withdrawn and its review lapses', async () => {
     const waiting = await submit(instructor, await buildDraft(instructor, YEAR, [cyanide]));
-    const withdrawn = bodyOf<RequestDetail>(await instructor.post(`/api/requests/${waiting.id}/withdraw`, { version: waiting.version, reason: 'The course changed.' }));
+    const withdrawn = bodyOf<RequestDetail>(
+      await instructor.post(`/api/requests/${waiting.id}/withdraw`, {
+        version: waiting.version,
+        reason: 'The course changed.',
+      }),
+    );
     expect(withdrawn).toMatchObject({ state: 'withdrawn', mayChange: false, review: { state: 'lapsed' } });
     expect(withdrawn.story.at(-1)).toMatchObject({ toState: 'withdrawn', reason: 'The course changed.' });
-    problemOf(await instructor.post(`/api/requests/${waiting.id}/submit`, { version: withdrawn.version }), 409, 'wrong-state');
-    problemOf(await instructor.patch(`/api/requests/${waiting.id}`, { note: null, lines: [copper], version: withdrawn.version }), 409, 'wrong-state');
+    problemOf(
+      await instructor.post(`/api/requests/${waiting.id}/submit`, { version: withdrawn.version }),
+      409,
+      'wrong-state',
+    );
+    problemOf(
+      await instructor.patch(`/api/requests/${waiting.id}`, {
+        note: null,
+        lines: [copper],
+        version: withdrawn.version,
+      }),
+      409,
+      'wrong-state',
+    );
   });
 });
 
 describe('the list', () => {
   it('is filtered, sorted and paged on the server', async () => {
     await buildDraft(other, YEAR, [copper]);
-    const mine = bodyOf<Page<RequestRow>>(await other.get('/api/requests?whose=mine&state=draft&sort=-code&pageSize=2'));
+    const mine = bodyOf<Page<RequestRow>>(
+      await other.get('/api/requests?whose=mine&state=draft&sort=-code&pageSize=2'),
+    );
     expect(mine.items.length).toBeGreaterThan(0);
     expect(mine.items.length).toBeLessThanOrEqual(2);
-    expect(mine.items.every(({ requesterName, state }) => requesterName === 'Tobias Renwick' && state === 'draft')).toBe(true);
+    expect(
+      mine.items.every(({ requesterName, state }) => requesterName === 'Tobias Renwick' && state === 'draft'),
+    ).toBe(true);
     const codes = mine.items.map(({ code }) => code);
     expect(codes).toEqual([...codes].sort().reverse());
     const all = bodyOf<Page<RequestRow>>(await other.get('/api/requests?pageSize=1&page=2'));
@@ -252,7 +398,9 @@ describe('the list', () => {
 
   it('finds a request by its code', async () => {
     const draft = await buildDraft(instructor, YEAR, [copper]);
-    const found = bodyOf<Page<RequestRow>>(await instructor.get(`/api/requests?search=${encodeURIComponent(draft.code)}`));
+    const found = bodyOf<Page<RequestRow>>(
+      await instructor.get(`/api/requests?search=${encodeURIComponent(draft.code)}`),
+    );
     expect(found.items.map(({ id }) => id)).toEqual([draft.id]);
     expect(bodyOf<Page<RequestRow>>(await instructor.get('/api/requests?search=no-such-code')).total).toBe(0);
   });
@@ -263,7 +411,9 @@ describe('the list', () => {
     expect(response.get('content-disposition')).toMatch(/attachment/);
     const workbook = new ExcelJS.Workbook();
     const data = response.body as Buffer;
-    await workbook.xlsx.load(data.buffer.slice(data.byteOffset, data.byteOffset + data.byteLength) as ArrayBuffer);
+    await workbook.xlsx.load(
+      data.buffer.slice(data.byteOffset, data.byteOffset + data.byteLength) as ArrayBuffer,
+    );
     const rows = workbook.worksheets[0]?.getSheetValues() as (unknown[] | undefined)[];
     expect(rows[1]?.slice(1)).toEqual(['Request', 'Session', 'Starts', 'Asked by', 'State', 'Waits for']);
     expect(rows.slice(2).length).toBeGreaterThan(0);
