@@ -13,7 +13,8 @@ interface Speciation {
   readonly species: readonly { readonly id: string; readonly molarity: number }[];
   readonly solids: readonly { readonly id: string; readonly moles: number }[];
 }
-const molarityOf = ({ species }: Speciation, id: string) => species.find((one) => one.id === id)?.molarity ?? NaN;
+const molarityOf = ({ species }: Speciation, id: string) =>
+  species.find((one) => one.id === id)?.molarity ?? NaN;
 const ideal = { activity: 'ideal' };
 
 describe('speciation of bare systems, by the figures of hand-worked examples (drive to completion, then back: common practice)', () => {
@@ -105,8 +106,16 @@ describe('bad input names its field', () => {
     ['a negative volume', portion({ volumeMl: -1 }), '#/portions/0/volumeMl'],
     ['an absurd volume', portion({ volumeMl: 1e9 }), '#/portions/0/volumeMl'],
     ['a volume as text', portion({ volumeMl: '25' }), '#/portions/0/volumeMl'],
-    ['an absurd strength', portion({ solutes: [{ substance: '7761-88-8', molarity: 500 }] }), '#/portions/0/solutes/0/molarity'],
-    ['an unknown substance', portion({ solutes: [{ substance: 'unobtainium', molarity: 1 }] }), '#/portions/0/solutes/0/substance'],
+    [
+      'an absurd strength',
+      portion({ solutes: [{ substance: '7761-88-8', molarity: 500 }] }),
+      '#/portions/0/solutes/0/molarity',
+    ],
+    [
+      'an unknown substance',
+      portion({ solutes: [{ substance: 'unobtainium', molarity: 1 }] }),
+      '#/portions/0/solutes/0/substance',
+    ],
     ['an unknown field', portion({ colour: 'blue' }), '#/portions/0/colour'],
     ['an absurd temperature', { ...portion({}), temperatureC: 4000 }, '#/temperatureC'],
     ['no portions', { portions: [] }, '#/portions'],

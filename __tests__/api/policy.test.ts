@@ -69,17 +69,21 @@ test('nobody gets past 401 without signing in, but on what is open to anyone', a
   expect(wrong).toEqual([]);
 });
 
-test.each(ROLES)('%s is answered 403 on every call that is not its own, and on no other by its role', async (role) => {
-  const caller = await signIn(role);
-  const wrong: string[] = [];
-  for (const { method, path: at, action } of walked) {
-    const status = await statusOf(caller, method, at);
-    const isAllowed = mayByRole(viewerOf(role), action);
-    if (!isAllowed && status !== 403) wrong.push(`${method} ${at}: ${status}, not 403`);
-    if (isAllowed && (status === 401 || status >= 500)) wrong.push(`${method} ${at}: ${status}`);
-  }
-  expect(wrong).toEqual([]);
-}, 60_000);
+test.each(ROLES)(
+  '%s is answered 403 on every call that is not its own, and on no other by its role',
+  async (role) => {
+    const caller = await signIn(role);
+    const wrong: string[] = [];
+    for (const { method, path: at, action } of walked) {
+      const status = await statusOf(caller, method, at);
+      const isAllowed = mayByRole(viewerOf(role), action);
+      if (!isAllowed && status !== 403) wrong.push(`${method} ${at}: ${status}, not 403`);
+      if (isAllowed && (status === 401 || status >= 500)) wrong.push(`${method} ${at}: ${status}`);
+    }
+    expect(wrong).toEqual([]);
+  },
+  60_000,
+);
 
 test('every route file answers declared calls, and every declared call has its route file', () => {
   const found: string[] = [];
@@ -98,7 +102,8 @@ test('the OpenAPI document describes every declared call', async () => {
   const response = await request(serverUrl()).get('/api/openapi.json');
   expect(response.status).toBe(200);
   const { paths } = response.body as { paths: Record<string, Record<string, unknown>> };
-  for (const { method, path: at } of ALL_ENDPOINTS) expect(Object.keys(paths[at] ?? {})).toContain(method.toLowerCase());
+  for (const { method, path: at } of ALL_ENDPOINTS)
+    expect(Object.keys(paths[at] ?? {})).toContain(method.toLowerCase());
 });
 
 test('a call that changes something is refused when a browser says it comes from another site', async () => {

@@ -67,7 +67,9 @@ async function printed(page: Page, name: string): Promise<Set<string>> {
   execFileSync('pdftoppm', ['-r', String(DOTS_PER_INCH), '-png', file, path.join(folder, name)]);
   const pages = readdirSync(folder).filter((entry) => entry.startsWith(name) && entry.endsWith('.png'));
   expect(pages.length).toBeGreaterThan(0);
-  return new Set(pages.flatMap((entry) => [...codesOn(PNG.sync.read(readFileSync(path.join(folder, entry))))]));
+  return new Set(
+    pages.flatMap((entry) => [...codesOn(PNG.sync.read(readFileSync(path.join(folder, entry))))]),
+  );
 }
 
 test('a printed batch sheet and label sheet carry codes that decode to the right addresses', async () => {

@@ -1,6 +1,7 @@
 'use client';
 
 import { useSyncExternalStore } from 'react';
+import { RadioGroup } from '../ui/radio-group';
 
 const KEY = 'benchwright-paper';
 const CHOICES = [
@@ -34,21 +35,12 @@ export function ThemeChoice() {
     listeners.forEach((listener) => listener());
   };
   return (
-    <fieldset>
-      <legend className="mb-1 font-semibold">Paper</legend>
-      {CHOICES.map(([value, words]) => (
-        <label key={value} className="flex min-h-11 items-center gap-3">
-          <input
-            type="radio"
-            name="paper"
-            value={value}
-            checked={choice === value}
-            onChange={() => choose(value)}
-            className="size-5 accent-verdigris"
-          />
-          {words}
-        </label>
-      ))}
-    </fieldset>
+    <RadioGroup
+      name="paper"
+      legend="Paper"
+      value={choice}
+      onChange={choose}
+      choices={CHOICES.map(([value, label]) => ({ value, label }))}
+    />
   );
 }

@@ -1,6 +1,7 @@
 import { precautionText, statementText } from '@/lib/hazards/classification/statements';
 import type { BottleLabel } from '@/lib/schemas/bottles';
 import { GhsPictogram } from '../chemistry/ghs-pictogram';
+import { SignalWord } from '../chemistry/signal-word';
 
 /** Signs and statements of a solution as diluted, each statement with its reason. */
 export function HazardBlock({ classification }: { readonly classification: BottleLabel['classification'] }) {
@@ -15,7 +16,7 @@ export function HazardBlock({ classification }: { readonly classification: Bottl
         </div>
       )}
       <div className="min-w-0 flex-1">
-        {signalWord && <p className="text-lg font-bold tracking-wide uppercase">{signalWord}</p>}
+        {signalWord && <SignalWord word={signalWord} className="mb-1 text-lg" />}
         {hazards.length === 0 && incomplete.length === 0 && (
           <p>
             By calculation no hazard class is reached at this strength. That is no proof that it is harmless.

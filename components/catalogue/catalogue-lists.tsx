@@ -82,7 +82,7 @@ export function SolutionList() {
           header: 'Dissolved',
           cell: ({ solutes }) =>
             solutes.map(({ substance, formula, molarity }) => (
-              <span key={substance} className="mr-4 whitespace-nowrap">
+              <span key={substance} className="mr-4 block md:inline-block">
                 <Formula id={formula} />{' '}
                 <span className="font-mono text-soft">{formatMolarity(molarity)}</span>
               </span>

@@ -1,5 +1,6 @@
 import type { Classification } from '@/lib/hazards/types';
 import { GhsPictogram } from '../chemistry/ghs-pictogram';
+import { SignalWord } from '../chemistry/signal-word';
 import { Alert } from '../ui/alert';
 
 /** Signal word, pictograms and statements, each with its reason. */
@@ -20,7 +21,7 @@ export function LabelElements({ classification }: { readonly classification: Cla
           ))}
         </div>
       )}
-      {signalWord && <p className="mb-2 text-lg font-bold">{signalWord}</p>}
+      {signalWord && <SignalWord word={signalWord} className="mb-2 text-lg" />}
       <ul className="space-y-1.5">
         {hazards.map(({ code, text, because }) => (
           <li key={code}>

@@ -4,6 +4,9 @@ export interface FormulaPart {
   readonly place: 'base' | 'sub' | 'super';
 }
 
+/** A dot before added water or another part, also `.0.5H2O`, but not the point inside 0.5. */
+const HYDRATE_DOT = /(?<![.·*]\d+)[.·*](?=\d*(?:\.\d+)?[A-Z(])/g;
+
 /**
  * Splits a plain id such as `Cu(NH3)4+2`, `CuSO4.5H2O` or `PbI2(s)` into stretches to be set on, below or
  * above the line. A charge is a sign with an optional magnitude at the end, before a phase.
@@ -13,7 +16,7 @@ export function formulaParts(id: string): FormulaPart[] {
   const [, body = bodyAndCharge, sign = '', magnitude = ''] =
     /^(.+?)(?:([+-])(\d*))?$/.exec(bodyAndCharge) ?? [];
   const parts: FormulaPart[] = [];
-  for (const [text] of body.replaceAll(/[.·*](?=\d*[A-Z(])/g, '·').matchAll(/\d+|\D+/g)) {
+  for (const [text] of body.replaceAll(HYDRATE_DOT, '·').matchAll(/\d+(?:\.\d+)?|\D+/g)) {
     const before = parts.at(-1)?.text.at(-1);
     const isCount = /^\d/.test(text) && before !== undefined && before !== '·';
     parts.push({ text, place: isCount ? 'sub' : 'base' });

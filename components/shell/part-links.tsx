@@ -14,6 +14,9 @@ interface PartLink {
 const ITEM =
   'block min-h-11 px-4 py-2.5 text-ink no-underline outline-none data-[highlighted]:bg-copper-wash';
 
+/** A phone's bar has room for so many; the rest go under "More" there. */
+const ON_A_PHONE = 4;
+
 /** The parts: a line of words on a desk, a bar at the bottom of a phone. */
 export function PartLinks({
   daily,
@@ -33,8 +36,8 @@ export function PartLinks({
       className="max-md:fixed max-md:inset-x-0 max-md:bottom-0 max-md:z-30 max-md:overflow-x-auto max-md:border-t-4 max-md:border-double max-md:border-line max-md:bg-paper"
     >
       <ul className="flex max-md:justify-between">
-        {daily.map(({ name, href }) => (
-          <li key={href}>
+        {daily.map(({ name, href }, index) => (
+          <li key={href} className={index >= ON_A_PHONE ? 'max-md:hidden' : undefined}>
             <Link
               href={href}
               aria-current={isHere(href) ? 'page' : undefined}
@@ -66,6 +69,13 @@ export function PartLinks({
                   collisionPadding={8}
                   className="z-50 min-w-44 rounded border border-line bg-raised py-1 shadow-md"
                 >
+                  {daily.slice(ON_A_PHONE).map(({ name, href }) => (
+                    <DropdownMenu.Item key={href} asChild>
+                      <Link href={href} className={`${ITEM} md:hidden`}>
+                        {name}
+                      </Link>
+                    </DropdownMenu.Item>
+                  ))}
                   {more.map(({ name, href }) => (
                     <DropdownMenu.Item key={href} asChild>
                       <Link href={href} className={ITEM}>

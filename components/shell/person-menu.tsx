@@ -23,14 +23,12 @@ export function PersonMenu({ name, roles }: { readonly name: string; readonly ro
   };
   return (
     <DropdownMenu.Root>
-      <DropdownMenu.Trigger
-        className="min-h-11 max-w-52 rounded px-2 text-left leading-tight hover:bg-sunken"
-        aria-label={`${name}, your account`}
-      >
+      <DropdownMenu.Trigger className="min-h-11 max-w-52 rounded px-2 text-left leading-tight hover:bg-sunken">
         <span className="block truncate text-[0.95rem] font-semibold">{name}</span>
         <span className="block truncate text-xs text-soft">
           {roles.map((role) => ROLE_NAMES[role]).join(', ')}
         </span>
+        <span className="sr-only">, your account</span>
       </DropdownMenu.Trigger>
       <DropdownMenu.Portal>
         <DropdownMenu.Content

@@ -22,6 +22,8 @@ export function TextInput(props: Control<'input'>) {
 /** A number typed as text, so that a comma or a half-typed figure is not lost; its unit stands behind it. */
 export function NumberInput({ unit, ...props }: Control<'input'> & { readonly unit?: string }) {
   const { field, rest } = split(props);
+  const control = controlProps(field);
+  const described = [unit ? `${field.id}-unit` : null, control['aria-describedby']].filter(Boolean).join(' ');
   return (
     <Field {...field}>
       <span className="flex items-stretch">
@@ -30,12 +32,13 @@ export function NumberInput({ unit, ...props }: Control<'input'> & { readonly un
           inputMode="decimal"
           autoComplete="off"
           {...rest}
-          {...controlProps(field)}
+          {...control}
+          aria-describedby={described || undefined}
           className={classNames(CONTROL, 'text-right font-mono', unit && 'rounded-r-none border-r-0')}
         />
         {unit && (
           <span
-            aria-hidden
+            id={`${field.id}-unit`}
             className="flex items-center rounded-r border border-line bg-sunken px-2.5 text-sm text-soft"
           >
             {unit}

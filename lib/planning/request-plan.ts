@@ -8,7 +8,13 @@ import { previewMix } from '../hazards/preview';
 import { decide, screenNeighbours, screenSolutions, sortFindings } from '../hazards/screen';
 import type { BottleContent, Finding, MixPreview } from '../hazards/types';
 import { solutionNeeds } from './request-need';
-import type { PlannedDemonstration, PlannedSession, PlannedSolution, PlannedSubstance, RequestPlan } from './request-plan-types';
+import type {
+  PlannedDemonstration,
+  PlannedSession,
+  PlannedSolution,
+  PlannedSubstance,
+  RequestPlan,
+} from './request-plan-types';
 
 /** A recipe as the plan needs it. */
 export interface RecipeInPlan {
@@ -19,7 +25,12 @@ export interface RecipeInPlan {
 }
 
 export type LineInPlan =
-  | { readonly kind: 'solution'; readonly solution: RecipeInPlan; readonly volumePerBenchMl: number; readonly spareBenches: number }
+  | {
+      readonly kind: 'solution';
+      readonly solution: RecipeInPlan;
+      readonly volumePerBenchMl: number;
+      readonly spareBenches: number;
+    }
   | {
       readonly kind: 'demonstration';
       readonly id: string;
@@ -49,7 +60,12 @@ export function planRequest({ session, lines, neighbours }: RequestToPlan): Requ
   const needs = solutionNeeds(
     lines.map((line) =>
       line.kind === 'solution'
-        ? { kind: 'solution', solutionId: line.solution.id, volumePerBenchMl: line.volumePerBenchMl, spareBenches: line.spareBenches }
+        ? {
+            kind: 'solution',
+            solutionId: line.solution.id,
+            volumePerBenchMl: line.volumePerBenchMl,
+            spareBenches: line.spareBenches,
+          }
         : {
             kind: 'demonstration',
             demonstrationId: line.id,
@@ -63,19 +79,36 @@ export function planRequest({ session, lines, neighbours }: RequestToPlan): Requ
     const recipe = recipes.get(solutionId);
     return recipe ? [plannedSolution(recipe, volumeMl)] : [];
   });
-  const demonstrations = lines.flatMap((line) => (line.kind === 'demonstration' ? [plannedDemonstration(line, session)] : []));
-  const own: BottleContent[] = solutions.map(({ name, volumeMl, solutes }) => ({ label: name, volumeMl, solutes: plainSolutes(solutes) }));
+  const demonstrations = lines.flatMap((line) =>
+    line.kind === 'demonstration' ? [plannedDemonstration(line, session)] : [],
+  );
+  const own: BottleContent[] = solutions.map(({ name, volumeMl, solutes }) => ({
+    label: name,
+    volumeMl,
+    solutes: plainSolutes(solutes),
+  }));
   const findings = sortFindings([
     ...demonstrations.flatMap((demonstration) => mixFindings(demonstration)),
     ...screenSolutions(own, session.room),
-    ...screenNeighbours([...own, ...neighbours], session.room).filter(({ concerns }) => concerns.some((label) => own.some((bottle) => bottle.label === label))),
+    ...screenNeighbours([...own, ...neighbours], session.room).filter(({ concerns }) =>
+      concerns.some((label) => own.some((bottle) => bottle.label === label)),
+    ),
     ...screenPolicy(own),
   ]);
-  return { session, solutions, demonstrations, substances: substancesOf(solutions), findings, decision: decide(findings) };
+  return {
+    session,
+    solutions,
+    demonstrations,
+    substances: substancesOf(solutions),
+    findings,
+    decision: decide(findings),
+  };
 }
 
 function recipesOf(lines: readonly LineInPlan[]): Map<string, RecipeInPlan> {
-  const all = lines.flatMap((line) => (line.kind === 'solution' ? [line.solution] : line.portions.map(({ solution }) => solution)));
+  const all = lines.flatMap((line) =>
+    line.kind === 'solution' ? [line.solution] : line.portions.map(({ solution }) => solution),
+  );
   return new Map(all.map((recipe) => [recipe.id, recipe]));
 }
 
@@ -83,7 +116,10 @@ function plainSolutes(solutes: readonly Solute[]): Solute[] {
   return solutes.map(({ substance, molarity }) => ({ substance, molarity }));
 }
 
-function plannedSolution({ id, name, solutes, shelfLifeDays }: RecipeInPlan, volumeMl: number): PlannedSolution {
+function plannedSolution(
+  { id, name, solutes, shelfLifeDays }: RecipeInPlan,
+  volumeMl: number,
+): PlannedSolution {
   const state = speciate({
     volumeL: 1,
     amounts: componentAmounts({ label: name, solutes, volumeMl: 1000 }),
@@ -107,9 +143,16 @@ function plannedSolution({ id, name, solutes, shelfLifeDays }: RecipeInPlan, vol
   };
 }
 
-function plannedDemonstration(line: Extract<LineInPlan, { kind: 'demonstration' }>, session: PlannedSession): PlannedDemonstration {
+function plannedDemonstration(
+  line: Extract<LineInPlan, { kind: 'demonstration' }>,
+  session: PlannedSession,
+): PlannedDemonstration {
   const outcome = previewMix({
-    portions: line.portions.map(({ solution, volumeMl }) => ({ label: solution.name, volumeMl, solutes: plainSolutes(solution.solutes) })),
+    portions: line.portions.map(({ solution, volumeMl }) => ({
+      label: solution.name,
+      volumeMl,
+      solutes: plainSolutes(solution.solutes),
+    })),
     activity: 'davies',
     temperatureC: TEMPERATURE_C,
     room: session.room,
@@ -121,7 +164,11 @@ function plannedDemonstration(line: Extract<LineInPlan, { kind: 'demonstration' 
     outcomeWanted: line.outcomeWanted,
     vesselMl: line.vesselMl,
     performances: line.performances,
-    portions: line.portions.map(({ solution, volumeMl }) => ({ solutionId: solution.id, label: solution.name, volumeMl })),
+    portions: line.portions.map(({ solution, volumeMl }) => ({
+      solutionId: solution.id,
+      label: solution.name,
+      volumeMl,
+    })),
     mix,
   };
 }
@@ -129,19 +176,57 @@ function plannedDemonstration(line: Extract<LineInPlan, { kind: 'demonstration' 
 /** Findings of a mix; policy is told once for the whole request. A mix that can't be computed is for a person. */
 function mixFindings({ name, mix, portions, vesselMl }: PlannedDemonstration): Finding[] {
   const labels = portions.map(({ label }) => label);
-  const found: Finding[] = mix ? mix.findings.filter(({ scope }) => scope !== 'policy').map((finding) => ({ ...finding, title: `${name}: ${finding.title}` })) : [];
+  const found: Finding[] = mix
+    ? mix.findings
+        .filter(({ scope }) => scope !== 'policy')
+        .map((finding) => ({ ...finding, title: `${name}: ${finding.title}` }))
+    : [];
   if (!mix) {
-    found.push(houseFinding('no-equilibrium', 'review', `${name}: no equilibrium was found`, 'The computation did not converge, so nothing is predicted for this mix. Unknown is not safe.', labels));
+    found.push(
+      houseFinding(
+        'no-equilibrium',
+        'review',
+        `${name}: no equilibrium was found`,
+        'The computation did not converge, so nothing is predicted for this mix. Unknown is not safe.',
+        labels,
+      ),
+    );
   }
   const volumeMl = portions.reduce((sum, portion) => sum + portion.volumeMl, 0);
   if (volumeMl > vesselMl) {
-    found.push(houseFinding('overfull', 'caution', `${name}: the vessel overflows`, `${volumeMl} mL are poured into a vessel of ${vesselMl} mL.`, labels));
+    found.push(
+      houseFinding(
+        'overfull',
+        'caution',
+        `${name}: the vessel overflows`,
+        `${volumeMl} mL are poured into a vessel of ${vesselMl} mL.`,
+        labels,
+      ),
+    );
   }
   return found;
 }
 
-function houseFinding(rule: string, severity: Finding['severity'], title: string, reason: string, concerns: readonly string[]): Finding {
-  return { rule, severity, scope: 'mix', title, reason, mustNot: null, gas: null, precautions: [], alternative: null, source: 'House rule', concerns };
+function houseFinding(
+  rule: string,
+  severity: Finding['severity'],
+  title: string,
+  reason: string,
+  concerns: readonly string[],
+): Finding {
+  return {
+    rule,
+    severity,
+    scope: 'mix',
+    title,
+    reason,
+    mustNot: null,
+    gas: null,
+    precautions: [],
+    alternative: null,
+    source: 'House rule',
+    concerns,
+  };
 }
 
 /** Grams of pure substance for all solutions, by substance. */
@@ -150,7 +235,11 @@ function substancesOf(solutions: readonly PlannedSolution[]): PlannedSubstance[]
   for (const { solutes, volumeMl } of solutions) {
     for (const { substance, molarity } of solutes) {
       const known = findSubstance(substance);
-      if (known) grams.set(known.id, (grams.get(known.id) ?? 0) + (molarity * volumeMl * known.molarMassGPerMol) / 1000);
+      if (known)
+        grams.set(
+          known.id,
+          (grams.get(known.id) ?? 0) + (molarity * volumeMl * known.molarMassGPerMol) / 1000,
+        );
     }
   }
   return [...grams].map(([substance, mass]) => {
