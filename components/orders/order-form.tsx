@@ -28,6 +28,7 @@ export function OrderForm({ budgets }: { readonly budgets: readonly { id: string
   const [note, setNote] = useState('');
   const [problem, setProblem] = useState<ApiProblem | null>(null);
   const [isBusy, setBusy] = useState(false);
+  const [found, setFound] = useState<readonly OfferRow[]>([]);
   const [key] = useState(newIdempotencyKey);
   const supplier = lines[0]?.offer;
   const total = lines.reduce((sum, { offer, packs }) => sum + offer.priceMinor * (Number(packs) || 0), 0);
@@ -37,14 +38,13 @@ export function OrderForm({ budgets }: { readonly budgets: readonly { id: string
       query: { search: text, pageSize: 15, ...(supplier ? { supplierId: supplier.supplierId } : {}) },
       signal,
     });
-    found.current = items;
+    setFound(items);
     return items.map((offer) => ({
       value: offer.id,
       label: `${offer.packSize} ${offer.substanceName}`,
       detail: `${offer.supplierName}, ${formatMoney(offer.priceMinor, 'GBP', 'en-GB')}`,
     }));
   };
-  const [found] = useState<{ current: readonly OfferRow[] }>({ current: [] });
 
   const save = async (event: FormEvent) => {
     event.preventDefault();
@@ -122,7 +122,7 @@ export function OrderForm({ budgets }: { readonly budgets: readonly { id: string
         placeholder="Substance, CAS or stock number"
         chosen={null}
         onChoose={({ value }) => {
-          const offer = found.current.find(({ id }) => id === value);
+          const offer = found.find(({ id }) => id === value);
           if (offer)
             setLines((all) => [
               ...all,
