@@ -117,7 +117,7 @@ export async function openPrepRoom(): Promise<PrepRoom> {
   };
 }
 
-async function buildSubstance(id: string): Promise<SubstanceModel> {
+export async function buildSubstance(id: string): Promise<SubstanceModel> {
   const known = await SubstanceModel.findByPk(id);
   if (known) return known;
   const substance = findSubstance(id);

@@ -91,7 +91,7 @@ export function OrderActions({
         </div>
       )}
       <div className="flex flex-wrap gap-3">
-        {mayDraft && order.state === 'draft' && button('submit', 'Put up for approval')}
+        {mayDraft && order.mayChange && order.state === 'draft' && button('submit', 'Put up for approval')}
         {mayApprove && !blocked && order.state === 'for-approval' && (
           <>
             {button('approve', `Approve ${formatMoney(order.totalMinor, order.currency, 'en-GB')}`)}

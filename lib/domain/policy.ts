@@ -26,6 +26,9 @@ const has = (viewer: Viewer, ...roles: Role[]) => roles.some((role) => viewer.ro
 const owns = (viewer: Viewer, record: Owned) => record.ownerId === viewer.id;
 /** Nobody judges their own request, order or review. */
 const isAnothers = (viewer: Viewer, record: Owned) => record.ownerId !== null && !owns(viewer, record);
+/** Nor moves more money than their limit. */
+const isAnothersWithinLimit = (viewer: Viewer, record: Approvable) =>
+  isAnothers(viewer, record) && record.totalMinor <= viewer.approvalLimitMinor;
 
 export const POLICY = {
   'session:sign-in': { roles: 'anyone' },
@@ -83,15 +86,15 @@ export const POLICY = {
   'waste:write': { roles: ['prep'] },
   'order:read': { roles: ['prep', 'purchasing', 'admin'] },
   'order:draft': { roles: ['prep', 'purchasing'] },
-  'order:update': { roles: ['prep', 'purchasing'] },
-  'order:approve': {
-    roles: ['purchasing'],
-    when: (viewer: Viewer, record: Approvable) =>
-      isAnothers(viewer, record) && record.totalMinor <= viewer.approvalLimitMinor,
+  'order:update': { roles: ['prep', 'purchasing'], when: owns },
+  'order:cancel': {
+    roles: ['prep', 'purchasing'],
+    when: (viewer: Viewer, record: Owned) => has(viewer, 'purchasing') || owns(viewer, record),
   },
+  'order:approve': { roles: ['purchasing'], when: isAnothersWithinLimit },
   'order:refuse': { roles: ['purchasing'], when: isAnothers },
-  'order:send': { roles: ['purchasing'], when: isAnothers },
-  'order:pay': { roles: ['purchasing'], when: isAnothers },
+  'order:send': { roles: ['purchasing'], when: isAnothersWithinLimit },
+  'order:pay': { roles: ['purchasing'], when: isAnothersWithinLimit },
   'order:receive': { roles: ['prep', 'purchasing'] },
   'outbox:read': { roles: ['purchasing', 'admin'] },
   'outbox:resend': { roles: ['purchasing', 'admin'] },

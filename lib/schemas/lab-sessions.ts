@@ -29,15 +29,26 @@ const shape = {
   roomId: idField,
   benches: z.number().int('Whole benches.').min(1, 'At least one bench.').max(60, 'At most 60 benches.'),
 };
-const endsAfterStart = ({ startsAt, endsAt }: { startsAt: string; endsAt: string }) =>
-  new Date(endsAt) > new Date(startsAt);
+const LONGEST_HOURS = 24;
+interface Times {
+  readonly startsAt: string;
+  readonly endsAt: string;
+}
+const hoursOf = ({ startsAt, endsAt }: Times) => (Date.parse(endsAt) - Date.parse(startsAt)) / 3_600_000;
+const endsAfterStart = (times: Times) => hoursOf(times) > 0;
 const endRule = { path: ['endsAt'], message: 'It must end after it starts.' };
+const isNoLongerThanADay = (times: Times) => hoursOf(times) <= LONGEST_HOURS;
+const lengthRule = { path: ['endsAt'], message: 'A session lasts a day at most. Is the date right?' };
 
-export const labSessionCreateSchema = z.strictObject(shape).refine(endsAfterStart, endRule);
+export const labSessionCreateSchema = z
+  .strictObject(shape)
+  .refine(endsAfterStart, endRule)
+  .refine(isNoLongerThanADay, lengthRule);
 export type LabSessionCreate = z.output<typeof labSessionCreateSchema>;
 export const labSessionPatchSchema = z
   .strictObject({ ...shape, isCancelled: z.boolean(), version: versionField })
-  .refine(endsAfterStart, endRule);
+  .refine(endsAfterStart, endRule)
+  .refine(isNoLongerThanADay, lengthRule);
 export type LabSessionPatch = z.output<typeof labSessionPatchSchema>;
 
 export const labSessionListQuerySchema = listQuery(['startsAt', 'course', 'title'], 'startsAt', {

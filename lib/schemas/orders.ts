@@ -1,6 +1,12 @@
 import { z } from 'zod';
 import { LEDGER_UNITS } from '@/lib/domain/quantities';
-import { INVOICE_STATES, ORDER_STATES, PAYMENT_STATES, SHORTAGE_STATES } from '@/lib/domain/states';
+import {
+  INVOICE_STATES,
+  ORDER_STATES,
+  OUTBOX_STATES,
+  PAYMENT_STATES,
+  SHORTAGE_STATES,
+} from '@/lib/domain/states';
 import { endpoint } from './endpoint';
 import { dayField, idField, idParams, noteField, versionField } from './fields';
 import { listQuery, pageOf } from './list';
@@ -110,11 +116,22 @@ export const orderSchema = orderRowSchema.extend({
     z.object({ id: z.uuid(), number: z.string(), amountMinor: money, state: z.enum(INVOICE_STATES) }),
   ),
   sending: z
-    .object({ state: z.string(), attempts: z.number().int(), lastError: z.string().nullable() })
+    .object({
+      id: z.uuid(),
+      state: z.enum(OUTBOX_STATES),
+      attempts: z.number().int(),
+      lastError: z.string().nullable(),
+    })
     .nullable(),
   story: z.array(recordEntrySchema),
   /** Why this person can't approve, send or pay it; null where they can. */
   whyNotApprove: z.string().nullable(),
+  /** What this person may do with it in its present state. */
+  mayChange: z.boolean(),
+  mayCancel: z.boolean(),
+  /** The limits that apply: of this person, and what its budget has left, this order counted once it is approved. */
+  yourLimitMinor: money,
+  budgetLeftMinor: money,
 });
 export type OrderDetail = z.infer<typeof orderSchema>;
 
@@ -208,7 +225,7 @@ export type BudgetRow = z.infer<typeof budgetSchema>;
 const move = (
   verb: string,
   summary: string,
-  action: 'order:update' | 'order:approve' | 'order:send' | 'order:pay',
+  action: 'order:update' | 'order:cancel' | 'order:approve' | 'order:send' | 'order:pay',
   ownTransaction = false,
 ) =>
   endpoint({
@@ -314,7 +331,7 @@ export const orderEndpoints = {
     response: orderSchema,
   }),
   submit: move('submit', 'Put it up for approval', 'order:update'),
-  cancel: move('cancel', 'Cancel it', 'order:update'),
+  cancel: move('cancel', 'Cancel it', 'order:cancel'),
   approve: move('approve', 'Approve it', 'order:approve'),
   refuse: endpoint({
     method: 'POST',

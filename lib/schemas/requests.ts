@@ -47,7 +47,7 @@ export const planPreviewSchema = z.strictObject({
 export type PlanPreviewBody = z.output<typeof planPreviewSchema>;
 export const requestMoveSchema = z.strictObject({
   version: versionField,
-  reason: z.string().trim().max(500).default(''),
+  reason: noteField.default(''),
 });
 export type RequestMove = z.output<typeof requestMoveSchema>;
 
@@ -88,7 +88,7 @@ export const requestSchema = requestRowSchema.extend({
 });
 export type RequestDetail = z.infer<typeof requestSchema>;
 
-export const requestListQuerySchema = listQuery(['code', 'state', 'createdAt'], '-createdAt', {
+export const requestListQuerySchema = listQuery(['code', 'state', 'createdAt', 'startsAt'], '-createdAt', {
   whose: z.enum(['mine', 'all']).default('all'),
   state: z.enum(REQUEST_STATES).optional(),
 });

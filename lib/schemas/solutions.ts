@@ -29,26 +29,33 @@ export const solutionDetailSchema = solutionSchema.extend({
   classification: classificationSchema,
   pH: z.number().nullable(),
   /** What should be confirmed before it becomes a batch. */
-  questions: z.array(z.string()),
+  questions: z.array(z.string()).readonly(),
 });
 export type SolutionDetail = z.infer<typeof solutionDetailSchema>;
+
+const solutesField = z
+  .array(
+    z.strictObject({
+      substance: z.string().trim().min(1, 'Choose a substance.').max(80),
+      molarity: molarityField,
+    }),
+  )
+  .min(1, 'A solution needs at least one solute.')
+  .max(12, 'At most 12 solutes.');
 
 const shape = {
   name: nameField,
   shelfLifeDays: z.number().int('Whole days.').min(0).max(3650, 'At most ten years.'),
   storageNote: noteField.nullable(),
   toleranceClass: z.enum(TOLERANCE_CLASSES),
-  solutes: z
-    .array(
-      z.strictObject({
-        substance: z.string().trim().min(1, 'Choose a substance.').max(80),
-        molarity: molarityField,
-      }),
-    )
-    .min(1, 'A solution needs at least one solute.')
-    .max(12, 'At most 12 solutes.'),
+  solutes: solutesField,
 };
-export const solutionCreateSchema = z.strictObject(shape);
+/** Left out, the shelf life and the storage note are those the catalogue knows of the solutes. */
+export const solutionCreateSchema = z.strictObject({
+  ...shape,
+  shelfLifeDays: shape.shelfLifeDays.optional(),
+  storageNote: shape.storageNote.optional(),
+});
 export type SolutionCreate = z.output<typeof solutionCreateSchema>;
 export const solutionPatchSchema = z.strictObject({
   ...shape,
@@ -56,6 +63,18 @@ export const solutionPatchSchema = z.strictObject({
   version: versionField,
 });
 export type SolutionPatch = z.output<typeof solutionPatchSchema>;
+
+export const solutionPreviewSchema = z.strictObject({ solutes: solutesField });
+export type SolutionPreviewBody = z.output<typeof solutionPreviewSchema>;
+export const solutionPreviewAnswerSchema = z.object({
+  classification: classificationSchema,
+  pH: z.number().nullable(),
+  questions: z.array(z.string()).readonly(),
+  /** What the catalogue knows of how long it keeps; null where it knows nothing. */
+  shelfLifeDays: z.number().int().nullable(),
+  storageNote: z.string().nullable(),
+});
+export type SolutionPreview = z.infer<typeof solutionPreviewAnswerSchema>;
 
 export const solutionListQuerySchema = listQuery(['name', 'shelfLifeDays'], 'name', {
   archived: z.enum(['no', 'yes']).default('no'),
@@ -102,5 +121,13 @@ export const solutionEndpoints = {
     params: idParams,
     body: solutionPatchSchema,
     response: solutionDetailSchema,
+  }),
+  preview: endpoint({
+    method: 'POST',
+    path: '/api/solutions/preview',
+    action: 'catalogue:read',
+    summary: 'Label, pH, shelf life and questions of a recipe that is not saved yet',
+    body: solutionPreviewSchema,
+    response: solutionPreviewAnswerSchema,
   }),
 };

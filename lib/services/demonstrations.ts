@@ -12,12 +12,11 @@ import type { Page } from '@/lib/schemas/list';
 import { write } from '@/models/db';
 import { DemonstrationModel } from '@/models/demonstration';
 import { DemonstrationPortionModel } from '@/models/demonstration-portion';
-import { RequestLineModel } from '@/models/request-line';
 import { SolutionModel } from '@/models/solution';
 import { contains, orderOf } from './lists';
 import { refuseStale } from './moves';
 import { record } from './record';
-import { recomputeRequests } from './request-plans';
+import { recomputeRequestsShowing } from './request-changes';
 import { presentSolutions } from './solutions';
 
 /** Rows with their portions in order of pouring. */
@@ -153,15 +152,7 @@ export async function updateDemonstration(
       subjectLabel: row.name,
       action: isArchived ? 'archived' : 'changed',
     });
-    const lines = await RequestLineModel.findAll({
-      where: { demonstrationId: row.id },
-      attributes: ['requestId'],
-    });
-    await recomputeRequests(
-      viewer,
-      lines.map(({ requestId }) => requestId),
-      `the demonstration ${row.name} changed`,
-    );
+    await recomputeRequestsShowing(viewer, row.id, row.name);
     return presentOne(row);
   });
 }

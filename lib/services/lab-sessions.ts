@@ -21,7 +21,7 @@ import { UserModel } from '@/models/user';
 import { contains, orderOf } from './lists';
 import { refuseStale } from './moves';
 import { record } from './record';
-import { recomputeRequestsOf } from './request-plans';
+import { followSession } from './request-changes';
 
 /** Rows with their room, instructor and requests. */
 async function present(sessions: readonly SessionModel[]): Promise<LabSession[]> {
@@ -135,6 +135,7 @@ export async function updateLabSession(
     );
     if (session.version !== patch.version) refuseStale(session, patch.version, await presentOne(session));
     await requireRoom(patch.roomId);
+    const before = { roomId: session.roomId, startsAt: session.startsAt, endsAt: session.endsAt };
     const { isCancelled, version, startsAt, endsAt, ...rest } = patch;
     await session.update({
       ...rest,
@@ -149,7 +150,7 @@ export async function updateLabSession(
       subjectLabel: `${session.course} ${session.title}`,
       action: isCancelled ? 'cancelled' : 'changed',
     });
-    await recomputeRequestsOf(viewer, session);
+    await followSession(viewer, session, before);
     return presentOne(session);
   });
 }

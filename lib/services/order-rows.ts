@@ -4,6 +4,7 @@ import { may } from '@/lib/domain/policy';
 import { fromMicro } from '@/lib/domain/quantities';
 import type { LedgerUnit } from '@/lib/domain/quantities';
 import type { Viewer } from '@/lib/domain/roles';
+import { ORDER_STATES, ORDER_MOVES } from '@/lib/domain/states';
 import type { OrderDetail, OrderRow } from '@/lib/schemas/orders';
 import { BudgetModel } from '@/models/budget';
 import { InvoiceModel } from '@/models/invoice';
@@ -15,11 +16,14 @@ import { PaymentModel } from '@/models/payment';
 import { SubstanceModel } from '@/models/substance';
 import { SupplierModel } from '@/models/supplier';
 import { UserModel } from '@/models/user';
+import { budgetLeftMinor } from './budgets';
 import { rowsById } from './lookup';
 import { storyOf } from './records';
 
 /** The college keeps its books in one currency. */
 export const CURRENCY = 'GBP';
+
+const CANCELLABLE = ORDER_STATES.filter((state) => ORDER_MOVES[state].includes('cancelled'));
 
 export function packSizeOf(packMicro: number, unit: LedgerUnit): string {
   return `${fromMicro(packMicro)} ${unit}`;
@@ -120,9 +124,16 @@ export async function presentOrder(viewer: Viewer, order: OrderModel): Promise<O
       : null,
     invoices: invoices.map(({ id, number, amountMinor, state }) => ({ id, number, amountMinor, state })),
     sending: message
-      ? { state: message.state, attempts: message.attempts, lastError: message.lastError }
+      ? { id: message.id, state: message.state, attempts: message.attempts, lastError: message.lastError }
       : null,
     story,
     whyNotApprove: whyNotApprove(viewer, order),
+    mayChange: order.state === 'draft' && may(viewer, 'order:update', { ownerId: order.draftedById }),
+    mayCancel:
+      CANCELLABLE.includes(order.state) &&
+      (payment === null || payment.state === 'failed') &&
+      may(viewer, 'order:cancel', { ownerId: order.draftedById }),
+    yourLimitMinor: viewer.approvalLimitMinor,
+    budgetLeftMinor: budget ? await budgetLeftMinor(budget) : 0,
   };
 }

@@ -21,9 +21,10 @@ import { deliverOrder } from './supplier-delivery';
  * afterwards; a service that is down or slow delays it and nothing else.
  */
 
-const MAX_ATTEMPTS = 8;
 const FIRST_WAIT_SECONDS = 5;
 const LONGEST_WAIT_SECONDS = 3600;
+/** Ten tries in the first hour and a half, then one an hour: given up after about a day. */
+const MAX_ATTEMPTS = 34;
 const AT_ONCE = 20;
 
 interface Outgoing {

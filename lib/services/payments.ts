@@ -8,7 +8,7 @@ import { OrderModel } from '@/models/order';
 import { PaymentModel } from '@/models/payment';
 import { WebhookEventModel } from '@/models/webhook-event';
 import { refuseStale } from './moves';
-import { loadOrder, presentOrder } from './order-rows';
+import { loadOrder, presentOrder, whyNotApprove } from './order-rows';
 import { payNow, readPaymentEvent } from './outside/payments';
 import type { PaymentOutcome } from './outside/payments';
 import { record } from './record';
@@ -25,8 +25,8 @@ export async function payOrder(viewer: Viewer, id: string, { version }: OrderMov
     authorise(
       viewer,
       'order:pay',
-      { ownerId: order.draftedById },
-      'You drafted it; another person must pay it.',
+      { ownerId: order.draftedById, totalMinor: order.totalMinor },
+      whyNotApprove(viewer, order) ?? undefined,
     );
     if (order.paidAt) throw new DomainError('wrong-state', 'It is paid already.');
     if (order.version !== version) refuseStale(order, version, await presentOrder(viewer, order));
@@ -59,7 +59,7 @@ export async function payOrder(viewer: Viewer, id: string, { version }: OrderMov
 async function settle(actor: Viewer | null, paymentId: string, outcome: PaymentOutcome): Promise<void> {
   await write(async () => {
     const payment = await PaymentModel.findByPk(paymentId);
-    if (!payment || payment.state === 'succeeded') return;
+    if (!payment || payment.state === 'succeeded' || payment.state === outcome.status) return;
     const failure = outcome.status === 'failed' ? outcome.failure : null;
     await payment.update({
       state: outcome.status,

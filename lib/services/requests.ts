@@ -1,20 +1,16 @@
 import 'server-only';
-import type { WhereOptions } from 'sequelize';
 import { DomainError, invalid } from '@/lib/domain/errors';
 import { authorise, may } from '@/lib/domain/policy';
 import type { Viewer } from '@/lib/domain/roles';
 import type { RequestState } from '@/lib/domain/states';
 import type { RequestPlan } from '@/lib/planning/request-plan-types';
-import type { Page } from '@/lib/schemas/list';
 import type {
   PlanPreviewBody,
   RequestCreate,
   RequestDetail,
   RequestLineInput,
-  RequestListQuery,
   RequestMove,
   RequestPatch,
-  RequestRow,
 } from '@/lib/schemas/requests';
 import { write } from '@/models/db';
 import { DemonstrationModel } from '@/models/demonstration';
@@ -22,78 +18,24 @@ import { PlanModel } from '@/models/plan';
 import { RequestModel } from '@/models/request';
 import { RequestLineModel } from '@/models/request-line';
 import { ReviewModel } from '@/models/review';
+import { ReviewMessageModel } from '@/models/review-message';
 import { SessionModel } from '@/models/session';
 import { SolutionModel } from '@/models/solution';
-import { UserModel } from '@/models/user';
 import { nextCode } from './codes';
-import { contains, orderOf } from './lists';
 import { changeState, refuseStale } from './moves';
 import { record } from './record';
 import { storyOf } from './records';
-import { computePlan, judge, linesOf } from './request-plans';
+import { judgeAgain, recomputeNeighboursOf, withdraw } from './request-changes';
+import { linesOf } from './request-lines';
+import { presentRows } from './request-list';
+import { computePlan, judge } from './request-plans';
 import { lapseReviews } from './reviews';
 
-const WAITS_FOR: Readonly<Record<RequestState, string>> = {
-  draft: 'you to submit it',
-  asked: 'the check',
-  'in-review': 'the safety officer',
-  agreed: 'the prep room',
-  'in-work': 'the batches',
-  ready: 'the session',
-  'handed-over': 'leftovers to come back',
-  closed: 'nothing',
-  returned: 'your answer',
-  withdrawn: 'nothing',
-};
 /** States in which its lines can still change. */
 const CHANGEABLE: readonly RequestState[] = ['draft', 'returned', 'asked', 'in-review', 'agreed'];
 
 /** Later states are judged again only because something changed, never because somebody presses the button twice. */
 const SUBMITTABLE: readonly RequestState[] = ['draft', 'returned'];
-
-async function presentRows(requests: readonly RequestModel[]): Promise<RequestRow[]> {
-  const [sessions, people, lines] = await Promise.all([
-    SessionModel.findAll({ where: { id: requests.map(({ sessionId }) => sessionId) } }),
-    UserModel.findAll({
-      where: { id: requests.map(({ requesterId }) => requesterId) },
-      attributes: ['id', 'name'],
-    }),
-    linesOf(requests.map(({ id }) => id)),
-  ]);
-  const sessionById = new Map(sessions.map((session) => [session.id, session]));
-  const names = new Map(people.map(({ id, name }) => [id, name]));
-  return requests.map((request) => {
-    const session = sessionById.get(request.sessionId);
-    return {
-      id: request.id,
-      code: request.code,
-      state: request.state,
-      sessionId: request.sessionId,
-      session: session ? `${session.course} ${session.title}` : '',
-      startsAt: session?.startsAt.toISOString() ?? '',
-      requesterId: request.requesterId,
-      requesterName: names.get(request.requesterId) ?? '',
-      lineCount: lines.get(request.id)?.length ?? 0,
-      waitsFor: WAITS_FOR[request.state],
-      version: request.version,
-    };
-  });
-}
-
-export async function listRequests(viewer: Viewer, query: RequestListQuery): Promise<Page<RequestRow>> {
-  const where: WhereOptions = {
-    ...(query.whose === 'mine' ? { requesterId: viewer.id } : {}),
-    ...(query.state ? { state: query.state } : {}),
-    ...(query.search ? contains('code', query.search) : {}),
-  };
-  const { rows, count } = await RequestModel.findAndCountAll({
-    where,
-    order: orderOf(query.sort),
-    limit: query.pageSize,
-    offset: (query.page - 1) * query.pageSize,
-  });
-  return { items: await presentRows(rows), total: count, page: query.page, pageSize: query.pageSize };
-}
 
 async function lineNames(lines: readonly RequestLineInput[]): Promise<string[]> {
   const [solutions, demonstrations] = await Promise.all([
@@ -225,17 +167,24 @@ export async function updateRequest(viewer: Viewer, id: string, patch: RequestPa
       action: 'changed',
     });
     if (request.state === 'in-review' || request.state === 'agreed') {
-      await lapseReviews(viewer, request, 'its request changed');
-      await changeState(viewer, 'request', request, 'asked', {
-        label: request.code,
-        reason: 'the request changed',
-      });
-      await judge(viewer, request);
+      await judgeAgain(viewer, request, 'the request changed');
+      await recomputeNeighboursOf(viewer, request, `${request.code} beside it changed`);
     }
     return detail(viewer, request);
   });
 }
 
+/** The answer to a question stands in the conversation it was asked in. */
+async function keepAnswer(viewer: Viewer, request: RequestModel, answer: string): Promise<void> {
+  if (answer === '') return;
+  const asked = await ReviewModel.findOne({
+    where: { requestId: request.id, state: 'returned' },
+    order: [['createdAt', 'DESC']],
+  });
+  if (asked) await ReviewMessageModel.create({ reviewId: asked.id, authorId: viewer.id, body: answer });
+}
+
+/** Agreed at once or put before safety; an answer to a returned request goes with it. */
 export async function submitRequest(
   viewer: Viewer,
   id: string,
@@ -249,11 +198,16 @@ export async function submitRequest(
         'wrong-state',
         `The request is ${request.state.replaceAll('-', ' ')}; it was submitted already.`,
       );
-    if (request.state === 'returned')
+    const session = await SessionModel.findByPk(request.sessionId, { rejectOnEmpty: true });
+    if (session.cancelledAt) throw new DomainError('wrong-state', 'Its session is cancelled.');
+    if (request.state === 'returned') {
+      await keepAnswer(viewer, request, reason);
       await lapseReviews(viewer, request, 'it was answered and submitted again');
+    }
     request.submittedAt = new Date();
     await changeState(viewer, 'request', request, 'asked', { label: request.code, reason: reason || null });
     await judge(viewer, request);
+    await recomputeNeighboursOf(viewer, request, `${request.code} was asked for in the same room`);
     return detail(viewer, request);
   });
 }
@@ -266,12 +220,7 @@ export async function withdrawRequest(
   return write(async () => {
     const request = await loadOwn(viewer, id);
     if (request.version !== version) refuseStale(request, version, await detail(viewer, request));
-    request.closedAt = new Date();
-    await changeState(viewer, 'request', request, 'withdrawn', {
-      label: request.code,
-      reason: reason || null,
-    });
-    await lapseReviews(viewer, request, 'its request was withdrawn');
+    await withdraw(viewer, request, reason || null);
     return detail(viewer, request);
   });
 }

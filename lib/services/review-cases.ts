@@ -149,13 +149,14 @@ async function earlierCases(review: ReviewModel): Promise<ReviewRow[]> {
   return presentRows(reviews);
 }
 
-/** One case with its evidence. */
+/** One case with its evidence, and what was said about the request so far. */
 export async function getReview(viewer: Viewer, id: string): Promise<ReviewCase> {
   const { review, request, plan } = await loadReview(id);
   const [row] = await presentRows([review]);
   if (!row) throw new Error(`Review ${id} can't be presented`);
+  const sameRequest = await ReviewModel.findAll({ where: { requestId: request.id }, attributes: ['id'] });
   const messages = await ReviewMessageModel.findAll({
-    where: { reviewId: id },
+    where: { reviewId: sameRequest.map((row) => row.id) },
     order: [['createdAt', 'ASC']],
   });
   const authors = await byId(

@@ -13,6 +13,7 @@ import { confirmPassword } from './accounts';
 import { changeState, refuseStale } from './moves';
 import { enqueueLetter } from './outbox';
 import { record } from './record';
+import { recomputeNeighboursOf } from './request-changes';
 import { getReview, loadReview, whyNotAgree } from './review-cases';
 
 /** An agreement is good for a year; after that the pattern is looked at afresh. */
@@ -72,6 +73,9 @@ export async function decideReview(
     });
     if (decision.verdict === 'returned') {
       await ReviewMessageModel.create({ reviewId: review.id, authorId: viewer.id, body: decision.text });
+    }
+    if (!isAgreement) {
+      await recomputeNeighboursOf(viewer, request, `${request.code} beside it was ${decision.verdict}`);
     }
     await tellRequester(request.requesterId, request.id, request.code, review.id, decision);
   });

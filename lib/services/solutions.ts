@@ -7,7 +7,8 @@ import { DomainError, invalid } from '@/lib/domain/errors';
 import { authorise } from '@/lib/domain/policy';
 import type { Viewer } from '@/lib/domain/roles';
 import { classifySolution } from '@/lib/hazards/classification/classify-solution';
-import { questionQuantities } from '@/lib/planning/sanity';
+import { adviseRecipe } from '@/lib/planning/recipe-advice';
+import type { RecipeAdvice } from '@/lib/planning/recipe-advice';
 import type { Page } from '@/lib/schemas/list';
 import type {
   Solution,
@@ -15,6 +16,8 @@ import type {
   SolutionDetail,
   SolutionListQuery,
   SolutionPatch,
+  SolutionPreview,
+  SolutionPreviewBody,
 } from '@/lib/schemas/solutions';
 import { write } from '@/models/db';
 import { SolutionModel } from '@/models/solution';
@@ -22,7 +25,10 @@ import { SolutionSoluteModel } from '@/models/solution-solute';
 import { contains, orderOf } from './lists';
 import { refuseStale } from './moves';
 import { record } from './record';
-import { recomputeRequestsUsing } from './request-plans';
+import { recomputeRequestsUsing } from './request-changes';
+
+/** A week, where neither the writer nor the catalogue says how long a solution keeps. */
+const CAUTIOUS_LIFE_DAYS = 7;
 
 /** Rows with their solutes in order. */
 export async function presentSolutions(rows: readonly SolutionModel[]): Promise<Solution[]> {
@@ -61,7 +67,7 @@ async function detail(row: SolutionModel): Promise<SolutionDetail> {
     ...solution,
     pH,
     classification: classifySolution({ solutes: solution.solutes, pH }),
-    questions: questionsFor(solution.solutes),
+    questions: adviceOn(solution.solutes).questions,
   };
 }
 
@@ -82,14 +88,26 @@ export function solutionPh(
   return outcome.converged ? outcome.pH : null;
 }
 
-function questionsFor(
+/** What the catalogue says of solutes; those it does not know are left out. */
+function adviceOn(
   solutes: readonly { readonly substance: string; readonly molarity: number }[],
-): string[] {
-  const known = solutes.flatMap(({ substance: id, molarity }) => {
-    const substance = findSubstance(id);
-    return substance ? [{ substance, molarity, solubleMolarity: null }] : [];
-  });
-  return questionQuantities({ solutes: known, volumeMl: 1000 }).map(({ message }) => message);
+): RecipeAdvice {
+  return adviseRecipe(
+    solutes.flatMap(({ substance: id, molarity }) => {
+      const substance = findSubstance(id);
+      return substance ? [{ substance, molarity }] : [];
+    }),
+  );
+}
+
+/** The label, pH and keeping of a recipe while it is being written; nothing is kept. */
+export function previewSolution({ solutes }: SolutionPreviewBody): SolutionPreview {
+  const resolved = resolveSolutes(solutes).map(({ substanceId, molarity }) => ({
+    substance: substanceId,
+    molarity,
+  }));
+  const pH = solutionPh(resolved);
+  return { ...adviceOn(resolved), pH, classification: classifySolution({ solutes: resolved, pH }) };
 }
 
 export async function listSolutions(_viewer: Viewer, query: SolutionListQuery): Promise<Page<Solution>> {
@@ -142,10 +160,15 @@ async function saveSolutes(
 }
 
 export async function createSolution(viewer: Viewer, input: SolutionCreate): Promise<SolutionDetail> {
-  const { solutes, ...rest } = input;
+  const { solutes, shelfLifeDays, storageNote, ...rest } = input;
   const resolved = resolveSolutes(solutes);
+  const advice = adviceOn(solutes);
+  const keeping = {
+    shelfLifeDays: shelfLifeDays ?? advice.shelfLifeDays ?? CAUTIOUS_LIFE_DAYS,
+    storageNote: storageNote === undefined ? advice.storageNote : storageNote,
+  };
   return write(async () => {
-    const row = await SolutionModel.create({ ...rest, ownerId: viewer.id });
+    const row = await SolutionModel.create({ ...rest, ...keeping, ownerId: viewer.id });
     await saveSolutes(row.id, resolved);
     await record(viewer, {
       subjectType: 'solution',
@@ -182,7 +205,7 @@ export async function updateSolution(
       subjectLabel: row.name,
       action: isArchived ? 'archived' : 'changed',
     });
-    await recomputeRequestsUsing(viewer, row.id);
+    await recomputeRequestsUsing(viewer, row.id, row.name);
     return detail(row);
   });
 }

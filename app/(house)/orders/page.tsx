@@ -7,7 +7,8 @@ import { PageHeader } from '@/components/ui/page-header';
 import { Section } from '@/components/ui/section';
 import { mayByRole } from '@/lib/domain/policy';
 import { pageViewer } from '@/lib/http/page';
-import { listBudgets, listOrders } from '@/lib/services/orders';
+import { listBudgets } from '@/lib/services/budgets';
+import { listOrders } from '@/lib/services/orders';
 
 export const metadata: Metadata = { title: 'Orders' };
 

@@ -6,6 +6,8 @@ import { PermanentFailure } from './failure';
 
 const ANSWER_WITHIN_MS = 8000;
 const SAID_AT_MOST = 200;
+/** Refusals of the moment, not of the order: time-out, too early, too many calls. */
+const TRY_AGAIN: readonly number[] = [408, 425, 429];
 
 const acknowledgementSchema = z.object({
   reference: z.string().min(1).max(80),
@@ -57,7 +59,7 @@ export async function placeOrder(order: OutgoingOrder, key: string): Promise<Ack
     throw new DomainError('unavailable', 'The ordering service did not answer.', { cause });
   }
   const text = await response.text().catch(() => '');
-  if (response.status >= 500)
+  if (response.status >= 500 || TRY_AGAIN.includes(response.status))
     throw new DomainError('unavailable', `The ordering service answered ${response.status}.`);
   if (!response.ok) throw new PermanentFailure(`The supplier refused it: ${text.slice(0, SAID_AT_MOST)}`);
   let value: unknown;
@@ -67,10 +69,21 @@ export async function placeOrder(order: OutgoingOrder, key: string): Promise<Ack
     throw new DomainError('unavailable', 'The ordering service answered something unreadable.', { cause });
   }
   const parsed = acknowledgementSchema.safeParse(value);
-  if (!parsed.success || parsed.data.order !== order.order)
+  if (!parsed.success || parsed.data.order !== order.order || !answersEveryLine(parsed.data, order))
     throw new DomainError(
       'unavailable',
       'The ordering service answered something that does not fit the order.',
     );
   return parsed.data;
+}
+
+function answersEveryLine(answer: Acknowledgement, order: OutgoingOrder): boolean {
+  const answered = answer.lines.map(({ line }) => line).sort();
+  return (
+    answered.join() ===
+    order.lines
+      .map(({ line }) => line)
+      .sort()
+      .join()
+  );
 }

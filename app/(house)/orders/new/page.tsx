@@ -2,7 +2,7 @@ import type { Metadata } from 'next';
 import { OrderForm } from '@/components/orders/order-form';
 import { PageHeader } from '@/components/ui/page-header';
 import { pageViewer } from '@/lib/http/page';
-import { listBudgets } from '@/lib/services/orders';
+import { listBudgets } from '@/lib/services/budgets';
 
 export const metadata: Metadata = { title: 'Draft an order' };
 

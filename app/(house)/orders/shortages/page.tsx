@@ -6,7 +6,7 @@ import { PageHeader } from '@/components/ui/page-header';
 import { Section } from '@/components/ui/section';
 import { mayByRole } from '@/lib/domain/policy';
 import { pageViewer } from '@/lib/http/page';
-import { listBudgets } from '@/lib/services/orders';
+import { listBudgets } from '@/lib/services/budgets';
 import { listShortages } from '@/lib/services/shortages';
 
 export const metadata: Metadata = { title: 'Shortages' };
