@@ -25,7 +25,7 @@ export function MakeWindows({
   const xOf = (isoDay: string) =>
     LABEL_WIDTH + Math.min(days, Math.max(0, dayNumber(isoDay) - first)) * DAY_WIDTH;
   return (
-    <figure className="overflow-x-auto">
+    <figure className="overflow-x-auto" tabIndex={0} aria-label="When each may be made">
       <svg
         viewBox={`0 0 ${width} ${height}`}
         width={width}
