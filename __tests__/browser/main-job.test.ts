@@ -215,6 +215,7 @@ test('(b) a silver-cyanide demonstration beside a dilute acid goes to safety wit
   // The officer agrees with conditions, signed by password; a wrong one is refused beside the field.
   await safety.goto('/reviews');
   await safety.getByLabel('Request code').fill(code);
+  await safety.waitForURL(/search=/);
   await safety.getByRole('link', { name: new RegExp(code) }).click();
   await safety.getByText(/mmol/).first().waitFor();
   await safety.getByRole('button', { name: 'Agree with conditions' }).click();

@@ -97,6 +97,33 @@ describe('mean activity coefficients', () => {
   );
 });
 
+describe('a saturated solution at a held pH', () => {
+  it('takes the coefficients of its own ionic strength though every activity is fixed', () => {
+    const reactions: Reaction[] = [
+      { species: 'OH-', phase: 'aq', stoich: { 'H+': -1 }, logK: -14 },
+      { species: 'Mg(OH)2(s)', phase: 's', stoich: { 'Mg+2': 1, 'H+': -2 }, logK: -17 },
+    ];
+    const state = solved({
+      volumeL: 1,
+      amounts: { 'Mg+2': 1 },
+      reactions,
+      pH: 9.5,
+      suppress: [],
+      activity: 'davies',
+      temperatureC: 25,
+      headspace: { kind: 'none' },
+    });
+    const strength = state.species.reduce(
+      (sum, { id, molarity }) => sum + (molarity * (findSpecies(id)?.charge ?? NaN) ** 2) / 2,
+      0,
+    );
+    const magnesium = state.species.find(({ id }) => id === 'Mg+2');
+    expect(magnesium?.activity).toBeCloseTo(10 ** (17 - 19), 10);
+    expect(state.ionicStrength).toBeCloseTo(strength, 12);
+    expect(Math.log(magnesium?.gamma ?? NaN)).toBeCloseTo(lnGamma('davies', 2, null, strength, 25), 9);
+  });
+});
+
 describe('activity models', () => {
   it('leave the ideal answer alone and tend to it at infinite dilution', () => {
     expect(lnGamma('ideal', 2, 600, 0.3, 25)).toBe(0);

@@ -1,7 +1,9 @@
-import { speciate } from '@/lib/chemistry/speciation';
-import type { EquilibriumState, SpeciationInput } from '@/lib/chemistry/types';
+import Decimal from 'decimal.js';
+import { chargeOf } from '@/lib/chemistry/formula';
+import type { SpeciationInput } from '@/lib/chemistry/types';
 import { strainedSystem, SystemSource } from '@/scripts/bench/random-systems';
 import { solveToHighPrecision } from './high-precision';
+import { litre, molarity, solved } from './kit';
 
 jest.setTimeout(120_000);
 
@@ -12,27 +14,11 @@ const LEAST = 1e-300;
 /** Solids are what is left of the totals, so their error is measured against those. */
 const OF_TOTAL = 1e-13;
 
-function solved(input: SpeciationInput): EquilibriumState {
-  const outcome = speciate(input);
-  if (!outcome.converged) throw new Error(outcome.message);
-  return outcome;
-}
-
-function bare(amounts: SpeciationInput['amounts'], reactions: SpeciationInput['reactions']): SpeciationInput {
-  return {
-    volumeL: 1,
-    amounts,
-    reactions,
-    pH: null,
-    suppress: [],
-    activity: 'ideal',
-    temperatureC: 25,
-    headspace: { kind: 'none' },
-  };
-}
-
-function molarity(state: EquilibriumState, id: string): number {
-  return state.species.find((species) => species.id === id)?.molarity ?? NaN;
+/** Davies' equation (b = 0.3, A = 0.509), held from 1 mol/L on; 0.1 I in log γ for neutral species. */
+function daviesLnGamma(charge: number, ionicStrength: number): number {
+  const held = Math.min(ionicStrength, 1);
+  const root = Math.sqrt(held);
+  return Math.LN10 * (charge === 0 ? 0.1 * held : -0.509 * charge ** 2 * (root / (1 + root) - 0.3 * held));
 }
 
 describe('digits of the answer', () => {
@@ -59,11 +45,36 @@ describe('digits of the answer', () => {
     expect(withSolids).toBeGreaterThan(SYSTEMS / 10);
   });
 
+  it('agrees with it just as well under Davies, at the ionic strength it reports', () => {
+    const source = new SystemSource(7);
+    for (let count = 0; count < 25; count += 1) {
+      const input: SpeciationInput = { ...strainedSystem(source), activity: 'davies' };
+      const state = solved(input);
+      const strength = state.species.reduce(
+        (sum, { id, molarity: c }) => sum + (c * chargeOf(id) ** 2) / 2,
+        0,
+      );
+      expect(Math.abs(state.ionicStrength - strength)).toBeLessThanOrEqual(1e-11 * strength);
+      const exact = solveToHighPrecision(
+        input,
+        state,
+        (id) => new Decimal(daviesLnGamma(chargeOf(id), strength)),
+      );
+      const wrong = state.species.filter(({ id, molarity: found }) => {
+        const right = exact.molarity.get(id);
+        if (right?.lt(LEAST)) return found > LEAST;
+        return !right || right.minus(found).div(right).abs().gt(RELATIVE);
+      });
+      expect({ count, wrong }).toEqual({ count, wrong: [] });
+    }
+  });
+
   it('keeps every digit of the free metal where a 1:2 complex with K = 1e40 uses up both exactly', () => {
     const state = solved(
-      bare({ 'Ag+': 0.02, 'CN-': 0.04 }, [
-        { species: 'Ag(CN)2-', phase: 'aq', stoich: { 'Ag+': 1, 'CN-': 2 }, logK: 40 },
-      ]),
+      litre({
+        amounts: { 'Ag+': 0.02, 'CN-': 0.04 },
+        reactions: [{ species: 'Ag(CN)2-', phase: 'aq', stoich: { 'Ag+': 1, 'CN-': 2 }, logK: 40 }],
+      }),
     );
     const closedForm = Math.cbrt(0.02 / (4 * 1e40));
     expect(closedForm).toBeCloseTo(7.937005e-15, 20);
@@ -75,7 +86,10 @@ describe('digits of the answer', () => {
     'gives the root of the quadratic for a 1:1 complex with log K = %d',
     (logK) => {
       const state = solved(
-        bare({ 'M+2': 0.03, L: 0.03 }, [{ species: 'ML+2', phase: 'aq', stoich: { 'M+2': 1, L: 1 }, logK }]),
+        litre({
+          amounts: { 'M+2': 0.03, L: 0.03 },
+          reactions: [{ species: 'ML+2', phase: 'aq', stoich: { 'M+2': 1, L: 1 }, logK }],
+        }),
       );
       const free = (2 * 0.03) / (1 + Math.sqrt(1 + 4 * 10 ** logK * 0.03));
       expect(Math.abs(molarity(state, 'M+2') / free - 1)).toBeLessThan(1e-12);

@@ -6,8 +6,11 @@ const MOST_STEPS = 120;
 const MOST_SAFE_STEPS = 400;
 const MOST_ROUNDS = 60;
 /** A last step this short leaves an error of about its square. */
-const STEP_DONE = 1e-7;
+const STEP_DONE = 1e-6;
 const BALANCE_DONE = 1e-6;
+const ROUGH = 1e-2;
+/** A step is halved until it helps, but not below this share. */
+const LEAST_SHARE = 1 / 64;
 /** A species this many times as abundant as a basis species it contains takes its place. */
 const TOO_ABUNDANT = 3;
 const LONGEST_STEP = 60;
@@ -39,7 +42,9 @@ export class DissolvedPart {
   /** dlnγ/dI by solute. */
   readonly slope: Float64Array;
   private readonly free: Int32Array;
-  /** Place of a row among the free ones, −1 where a phase stands. */
+  /** Place, among the free rows, of each entry of the tableau; −1 where a phase stands. */
+  private readonly entryPlace: Int32Array;
+  /** The same by row. */
   private readonly placeOf: Int32Array;
   private freeCount = 0;
   private unknownCount = 0;
@@ -60,6 +65,7 @@ export class DissolvedPart {
     this.lnGamma = new Float64Array(soluteCount);
     this.slope = new Float64Array(soluteCount);
     this.free = new Int32Array(n);
+    this.entryPlace = new Int32Array(soluteCount * n);
     this.placeOf = new Int32Array(n);
     this.made = new Float64Array(n);
     this.madeOf = new Float64Array(n);
@@ -79,35 +85,45 @@ export class DissolvedPart {
     this.y[row] = this.isPhase(column) ? 0 : Math.log(Math.max(amount, LEAST)) + (this.lnGamma[column] ?? 0);
   }
 
-  /** @returns false where no step helps; never leaves an answer that is not settled */
-  solve(): boolean {
-    this.refresh();
+  /**
+   * @param roughly - ends as soon as the balances are near enough to tell which solids will be there
+   * @returns false where no step helps; never leaves an answer that is not settled
+   */
+  solve(roughly: boolean): boolean {
+    this.table.settle();
+    this.computeAmounts();
+    this.keepAbundantBasis();
+    this.listPlaces();
+    let worst = this.computeBalances();
     for (let count = 0; count < MOST_STEPS; count += 1) {
-      this.iterations += 1;
-      this.computeAmounts();
-      if (this.keepAbundantBasis()) this.refresh();
-      if (this.freeCount === 0) return true;
-      const before = this.computeBalances();
-      if (this.problem.activity && !this.isCoupled && before < NEAR) {
+      if (this.freeCount === 0 && !this.problem.activity) return true;
+      if (this.problem.activity && !this.isCoupled && worst < NEAR) {
         this.isCoupled = true;
         this.setStrength(this.computedStrength());
-        continue;
+        this.computeAmounts();
+        worst = this.computeBalances();
       }
+      if (roughly && worst < ROUGH) return true;
+      this.iterations += 1;
       const length = this.newtonStep();
       if (!Number.isFinite(length)) break;
-      if (length < STEP_DONE && before < BALANCE_DONE) {
+      if (length < STEP_DONE && worst < BALANCE_DONE) {
         this.move(1);
         this.computeAmounts();
         return this.hasDigits();
       }
-      this.takeStep(before);
+      worst = this.takeStep(worst);
+      if (this.keepAbundantBasis()) {
+        this.listPlaces();
+        worst = this.computeBalances();
+      }
     }
     return this.solveSlowly() && this.hasDigits();
   }
 
-  private refresh(): void {
-    const { table, free, placeOf } = this;
-    table.settle();
+  /** Which rows are free, and where each entry of the tableau belongs among them. */
+  private listPlaces(): void {
+    const { table, free, placeOf, entryPlace } = this;
     this.freeCount = 0;
     for (let row = 0; row < table.n; row += 1) {
       const isFree = !this.isPhase(table.basis[row] ?? 0);
@@ -116,6 +132,9 @@ export class DissolvedPart {
       free[this.freeCount] = row;
       this.freeCount += 1;
     }
+    const { entryStart, entryRow } = table;
+    const entryCount = entryStart[entryStart.length - 1] ?? 0;
+    for (let k = 0; k < entryCount; k += 1) entryPlace[k] = placeOf[entryRow[k] ?? 0] ?? -1;
   }
 
   private hasDigits(): boolean {
@@ -181,8 +200,8 @@ export class DissolvedPart {
 
   /** What each free row makes and is made of, and the ln of their ratio. @returns the largest of those in size */
   private computeBalances(): number {
-    const { table, amounts, free, placeOf, made, madeOf, residual, freeCount: f } = this;
-    const { entryStart, entryRow, entryValue, totals } = table;
+    const { table, amounts, free, entryPlace, made, madeOf, residual, freeCount: f } = this;
+    const { entryStart, entryValue, totals } = table;
     for (let r = 0; r < f; r += 1) {
       const total = totals[free[r] ?? 0] ?? 0;
       made[r] = Math.max(-total, LEAST);
@@ -192,7 +211,7 @@ export class DissolvedPart {
       const amount = amounts[solute] ?? 0;
       const end = entryStart[solute + 1] ?? 0;
       for (let k = entryStart[solute] ?? 0; k < end; k += 1) {
-        const r = placeOf[entryRow[k] ?? 0] ?? -1;
+        const r = entryPlace[k] ?? -1;
         if (r < 0) continue;
         const part = (entryValue[k] ?? 0) * amount;
         if (part > 0) made[r] = (made[r] ?? 0) + part;
@@ -223,8 +242,8 @@ export class DissolvedPart {
 
   /** Derivatives of the balances by the unknowns. @returns how many unknowns there are */
   private fillMatrix(): number {
-    const { table, amounts, placeOf, made, madeOf, matrix, freeCount: f } = this;
-    const { entryStart, entryRow, entryValue } = table;
+    const { table, amounts, entryPlace, made, madeOf, matrix, freeCount: f } = this;
+    const { entryStart, entryValue } = table;
     const size = this.isCoupled ? f + 1 : f;
     this.unknownCount = size;
     matrix.fill(0, 0, size * size);
@@ -237,14 +256,15 @@ export class DissolvedPart {
       const byStrength = perMol ? -this.ionicStrength * (this.slope[solute] ?? 0) : 0;
       const ofStrength = perMol ? ((perMol[solute] ?? 0) * amount) / strength : 0;
       for (let k = begin; k < end; k += 1) {
-        const r = placeOf[entryRow[k] ?? 0] ?? -1;
+        const r = entryPlace[k] ?? -1;
         if (r < 0) continue;
         const value = entryValue[k] ?? 0;
         const weight = (value * amount) / ((value > 0 ? made[r] : madeOf[r]) ?? 1);
+        const line = r * size;
         for (let other = begin; other < end; other += 1) {
-          const column = placeOf[entryRow[other] ?? 0] ?? -1;
-          if (column >= 0)
-            matrix[r * size + column] = (matrix[r * size + column] ?? 0) + weight * (entryValue[other] ?? 0);
+          const column = entryPlace[other] ?? -1;
+          if (column < 0) continue;
+          matrix[line + column] = (matrix[line + column] ?? 0) + weight * (entryValue[other] ?? 0);
         }
         if (!perMol) continue;
         matrix[r * size + f] = (matrix[r * size + f] ?? 0) + weight * byStrength;
@@ -299,20 +319,18 @@ export class DissolvedPart {
     if (this.unknownCount > f) this.setStrength(this.ionicStrength * Math.exp(share * (step[f] ?? 0)));
   }
 
-  /** The whole step, or half of it as often as it makes the balances much worse. */
-  private takeStep(before: number): void {
+  /** The whole step, or half of it as often as it makes the balances much worse. @returns the largest balance after it */
+  private takeStep(before: number): number {
     this.kept.set(this.y);
     const strength = this.ionicStrength;
-    let share = 1;
-    for (let half = 0; half < 6; half += 1) {
+    for (let share = 1; ; share /= 2) {
       this.move(share);
       this.computeAmounts();
-      if (this.computeBalances() < Math.max(before * 1.5, NEAR)) return;
-      share /= 2;
+      const after = this.computeBalances();
+      if (share < LEAST_SHARE || after < Math.max(before * 1.5, NEAR)) return after;
       this.y.set(this.kept);
       if (this.isCoupled) this.setStrength(strength);
     }
-    this.move(share);
   }
 
   /** Safe steps at held coefficients, which then follow the composition until the two agree. */
@@ -344,7 +362,7 @@ export class DissolvedPart {
     for (let count = 0; count < MOST_SAFE_STEPS; count += 1) {
       this.iterations += 1;
       this.computeAmounts();
-      if (this.keepAbundantBasis()) this.refresh();
+      if (this.keepAbundantBasis()) this.listPlaces();
       if (this.freeCount === 0) return true;
       const worst = this.gradientStep();
       if (!Number.isFinite(worst)) return false;
@@ -370,8 +388,8 @@ export class DissolvedPart {
 
   /** Newton's direction of F. @returns the worst balance relative to its basis species */
   private gradientStep(): number {
-    const { table, amounts, free, placeOf, matrix, step, freeCount: f } = this;
-    const { entryStart, entryRow, entryValue, totals, basis } = table;
+    const { table, amounts, free, entryPlace, matrix, step, freeCount: f } = this;
+    const { entryStart, entryValue, totals, basis } = table;
     this.unknownCount = f;
     matrix.fill(0, 0, f * f);
     for (let r = 0; r < f; r += 1) step[r] = totals[free[r] ?? 0] ?? 0;
@@ -379,12 +397,12 @@ export class DissolvedPart {
       const begin = entryStart[solute] ?? 0;
       const end = entryStart[solute + 1] ?? 0;
       for (let k = begin; k < end; k += 1) {
-        const r = placeOf[entryRow[k] ?? 0] ?? -1;
+        const r = entryPlace[k] ?? -1;
         if (r < 0) continue;
         const part = (entryValue[k] ?? 0) * (amounts[solute] ?? 0);
         step[r] = (step[r] ?? 0) - part;
         for (let other = begin; other < end; other += 1) {
-          const column = placeOf[entryRow[other] ?? 0] ?? -1;
+          const column = entryPlace[other] ?? -1;
           if (column >= 0)
             matrix[r * f + column] = (matrix[r * f + column] ?? 0) + part * (entryValue[other] ?? 0);
         }

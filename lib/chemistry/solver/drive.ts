@@ -15,9 +15,19 @@ const SAME = 1e-11;
 export function driveToCompletion(problem: EquilibriumProblem): Tableau | null {
   const { componentCount: n, soluteCount, phaseCount } = problem;
   const real = soluteCount + phaseCount;
-  const short = [...problem.totals].flatMap((total, component) => (total < 0 ? [component] : []));
+  const short: number[] = [];
+  const opposites: number[] = [];
+  let scale = Number.MIN_VALUE;
+  problem.totals.forEach((total, component) => {
+    scale = Math.max(scale, Math.abs(total));
+    if (total >= 0) return;
+    const opposite = oppositeOf(problem, component);
+    if (opposite < 0) short.push(component);
+    else opposites.push(component, opposite);
+  });
   const widened = short.length === 0 ? problem : withArtificial(problem, short);
   const table = new Tableau(widened, real + short.length);
+  for (let k = 0; k < opposites.length; k += 2) table.pivot(opposites[k] ?? 0, opposites[k + 1] ?? 0);
   const free = new Uint8Array(real + short.length);
   problem.isReservoir.forEach((isReservoir, phase) => {
     if (!isReservoir) return;
@@ -31,7 +41,6 @@ export function driveToCompletion(problem: EquilibriumProblem): Tableau | null {
     if (row >= 0 && (table.totals[row] ?? 0) < 0) table.pivot(row, real + index);
   });
 
-  const scale = Math.max(...problem.totals.map(Math.abs), Number.MIN_VALUE);
   for (let step = 0; step < 50 * (n + 2); step += 1) {
     const column = bestColumn(table, real, step > 20 * n);
     if (column < 0) break;
@@ -46,35 +55,35 @@ export function driveToCompletion(problem: EquilibriumProblem): Tableau | null {
     if (column < 0) return null;
     table.pivot(row, column);
   }
-  return short.length === 0 ? table : copyOnto(problem, table, real);
+  table.narrowTo(problem);
+  return table;
+}
+
+/** A solute that is a component with its sign turned, as OH- is of H+; −1 where there is none. */
+function oppositeOf(
+  { componentCount: n, soluteCount, stoich }: EquilibriumProblem,
+  component: number,
+): number {
+  for (let solute = n; solute < soluteCount; solute += 1) {
+    if ((stoich[solute * n + component] ?? 0) >= 0) continue;
+    let isAlone = true;
+    for (let i = 0; i < n; i += 1) if (i !== component && stoich[solute * n + i] !== 0) isAlone = false;
+    if (isAlone) return solute;
+  }
+  return -1;
 }
 
 function withArtificial(problem: EquilibriumProblem, short: readonly number[]): EquilibriumProblem {
   const { componentCount: n, stoich, lnK } = problem;
   const widerStoich = new Float64Array(stoich.length + short.length * n);
   widerStoich.set(stoich);
-  const widerLnK = new Float64Array(lnK.length + short.length).fill(ARTIFICIAL_LNK);
+  const widerLnK = new Float64Array(lnK.length + short.length);
   widerLnK.set(lnK);
+  widerLnK.fill(ARTIFICIAL_LNK, lnK.length);
   short.forEach((component, index) => {
     widerStoich[stoich.length + index * n + component] = -1;
   });
   return { ...problem, stoich: widerStoich, lnK: widerLnK };
-}
-
-/** The same basis on the problem as given, without the artificial columns. */
-function copyOnto(problem: EquilibriumProblem, from: Tableau, real: number): Tableau {
-  const table = new Tableau(problem, real);
-  const wanted = new Set(from.basis);
-  for (const column of wanted) {
-    if ((table.rowOf[column] ?? -1) >= 0) continue;
-    for (let row = 0; row < table.n; row += 1) {
-      if (!wanted.has(table.basis[row] ?? -1) && Math.abs(table.at(row, column)) > 1e-9) {
-        table.pivot(row, column);
-        break;
-      }
-    }
-  }
-  return table;
 }
 
 /** The conversion that gains most; in a row of idle steps the first that gains, so that none repeat for ever. */

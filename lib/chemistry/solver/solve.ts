@@ -36,7 +36,11 @@ import type { Tableau } from './tableau';
  */
 
 const MOST_CHANGES = 200;
-const SUPERSATURATED = 1e-9;
+const MOST_ROUGH_CHANGES = 60;
+/** When a solid has to go or may come: below minus this share of the largest total, above this ln saturation. */
+const EXACTLY = { amount: 1e-13, lnSaturation: 1e-9 };
+/** The same while the dissolved part is only near its answer. */
+const ROUGHLY = { amount: 0.01, lnSaturation: 0.1 };
 /** A first guess for what the totals say is absent: about what water splits into. */
 const TRACE_MOL = 1e-9;
 
@@ -111,17 +115,20 @@ class Search {
   run(): EquilibriumResult {
     const { dissolved } = this;
     dissolved.iterations = 0;
+    this.table.refreshTotals();
     this.setScale();
+    let isRough = this.table.columnCount > this.solutes;
     for (let change = 0; change < MOST_CHANGES; change += 1) {
-      if (!dissolved.solve()) return this.failure('stalled');
-      const leaving = this.mostNegativeSolid();
+      if (!dissolved.solve(isRough)) return this.failure('stalled');
+      const tolerance = isRough ? ROUGHLY : EXACTLY;
+      const leaving = this.mostNegativeSolid(tolerance.amount);
+      const joining = leaving < 0 ? this.mostSupersaturated(tolerance.lnSaturation) : -1;
       if (leaving >= 0) {
         if (!this.deactivate(leaving)) return this.failure('stalled');
-        continue;
-      }
-      const joining = this.mostSupersaturated();
-      if (joining < 0) return this.success();
-      if (!this.activate(joining)) return this.failure('infeasible');
+      } else if (joining >= 0) {
+        if (!this.activate(joining)) return this.failure('infeasible');
+      } else if (!isRough) return this.success();
+      isRough = (leaving >= 0 || joining >= 0) && change < MOST_ROUGH_CHANGES;
     }
     return this.failure('iteration-limit');
   }
@@ -169,8 +176,8 @@ class Search {
     return sum;
   }
 
-  private mostNegativeSolid(): number {
-    let worst = -1e-13 * this.scale;
+  private mostNegativeSolid(tolerance: number): number {
+    let worst = -tolerance * this.scale;
     let found = -1;
     for (let row = 0; row < this.n; row += 1) {
       if (!this.isSolid(this.table.basis[row] ?? 0)) continue;
@@ -214,9 +221,9 @@ class Search {
     return ln;
   }
 
-  private mostSupersaturated(): number {
+  private mostSupersaturated(tolerance: number): number {
     let best = -1;
-    let highest = SUPERSATURATED;
+    let highest = tolerance;
     for (let phase = 0; phase < this.problem.phaseCount; phase += 1) {
       if ((this.table.rowOf[this.solutes + phase] ?? -1) >= 0) continue;
       const ln = this.lnSaturation(phase);
@@ -283,15 +290,18 @@ class Search {
       for (let k = 0; k < n; k += 1) ln += table.at(k, i) * (dissolved.y[k] ?? 0);
       lnActivity[i] = ln - (problem.lnK[i] ?? 0);
     }
+    const lnSaturation = new Float64Array(problem.phaseCount);
+    for (let phase = 0; phase < lnSaturation.length; phase += 1)
+      lnSaturation[phase] = this.lnSaturation(phase);
     return {
       status: 'converged',
       iterations: dissolved.iterations,
       lnActivity,
-      amounts: Float64Array.from(dissolved.amounts),
-      lnGamma: Float64Array.from(dissolved.lnGamma),
+      amounts: dissolved.amounts.slice(),
+      lnGamma: dissolved.lnGamma.slice(),
       ionicStrength: dissolved.ionicStrength,
       phaseAmounts: this.phaseAmounts(),
-      lnSaturation: Float64Array.from({ length: problem.phaseCount }, (_, phase) => this.lnSaturation(phase)),
+      lnSaturation,
     };
   }
 
@@ -299,7 +309,7 @@ class Search {
     return {
       status,
       iterations: this.dissolved.iterations,
-      amounts: Float64Array.from(this.dissolved.amounts),
+      amounts: this.dissolved.amounts.slice(),
       phaseAmounts: this.phaseAmounts(),
     };
   }

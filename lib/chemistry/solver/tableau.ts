@@ -14,7 +14,7 @@ const SNAP = 1e-9;
  */
 export class Tableau {
   readonly n: number;
-  readonly columnCount: number;
+  columnCount: number;
   /** W by column. */
   readonly w: Float64Array;
   /** Which column serves as basis element i. */
@@ -34,17 +34,16 @@ export class Tableau {
   private readonly pivotRows: Int32Array;
 
   constructor(
-    private readonly problem: EquilibriumProblem,
+    private problem: EquilibriumProblem,
     columnCount = problem.soluteCount + problem.phaseCount,
   ) {
     const { componentCount: n, soluteCount, stoich } = problem;
     this.n = n;
     this.columnCount = columnCount;
-    this.w = Float64Array.from(stoich.subarray(0, columnCount * n));
-    this.basis = Int32Array.from({ length: n }, (_, i) => i);
+    this.w = stoich.slice(0, columnCount * n);
+    this.basis = new Int32Array(n);
     this.rowOf = new Int32Array(columnCount).fill(-1);
-    for (let i = 0; i < n; i += 1) this.rowOf[i] = i;
-    this.totals = Float64Array.from(problem.totals);
+    this.totals = problem.totals.slice();
     this.lnK = new Float64Array(columnCount);
     this.entryStart = new Int32Array(soluteCount + 1);
     this.entryRow = new Int32Array(soluteCount * n);
@@ -52,8 +51,18 @@ export class Tableau {
     this.weights = new Float64Array(n * n);
     this.pivotColumn = new Float64Array(n);
     this.pivotRows = new Int32Array(n);
-    for (let k = 0; k < n; k += 1) this.weights[k * n + k] = DENOMINATOR;
-    this.settle();
+    for (let i = 0; i < n; i += 1) {
+      this.basis[i] = i;
+      this.rowOf[i] = i;
+      this.weights[i * n + i] = DENOMINATOR;
+    }
+    this.refreshConstants();
+  }
+
+  /** Leaves out columns beyond those of a problem, none of which may be in the basis, and takes its constants. */
+  narrowTo(problem: EquilibriumProblem): void {
+    this.problem = problem;
+    this.columnCount = problem.soluteCount + problem.phaseCount;
   }
 
   at(row: number, column: number): number {
@@ -101,28 +110,42 @@ export class Tableau {
     this.totals[row] = exactDot(weights, row, n, this.problem.totals) / DENOMINATOR;
   }
 
-  /**
-   * Brings constants, totals and the lists of entries up to date: after pivots, whose running constants carry
-   * rounding, and after the problem's totals or constants changed.
-   */
-  settle(): void {
-    const { n, w, basis, lnK, rowOf, columnCount, entryStart, entryRow, entryValue } = this;
-    const { lnK: given, soluteCount } = this.problem;
-    for (let row = 0; row < n; row += 1) this.refreshTotal(row);
-    let count = 0;
+  /** To be called after the problem's totals changed. */
+  refreshTotals(): void {
+    for (let row = 0; row < this.n; row += 1) this.refreshTotal(row);
+  }
+
+  /** lnK of every column as formed from the basis, without the rounding that pivots leave in it. */
+  private refreshConstants(): void {
+    const { n, w, basis, lnK, rowOf, columnCount } = this;
+    const given = this.problem.lnK;
     for (let c = 0; c < columnCount; c += 1) {
-      let sum = given[c] ?? 0;
+      let sum = 0;
+      if (rowOf[c] === -1) {
+        sum = given[c] ?? 0;
+        for (let i = 0; i < n; i += 1) {
+          const value = w[c * n + i] ?? 0;
+          if (value !== 0) sum -= value * (given[basis[i] ?? 0] ?? 0);
+        }
+      }
+      lnK[c] = sum;
+    }
+  }
+
+  /** Brings constants and the lists of entries up to date: after pivots, and after the problem's constants changed. */
+  settle(): void {
+    const { n, w, entryStart, entryRow, entryValue } = this;
+    this.refreshConstants();
+    let count = 0;
+    for (let c = 0; c + 1 < entryStart.length; c += 1) {
       for (let i = 0; i < n; i += 1) {
         const value = w[c * n + i] ?? 0;
         if (value === 0) continue;
-        sum -= value * (given[basis[i] ?? 0] ?? 0);
-        if (c >= soluteCount) continue;
         entryRow[count] = i;
         entryValue[count] = value;
         count += 1;
       }
-      lnK[c] = rowOf[c] === -1 ? sum : 0;
-      if (c < soluteCount) entryStart[c + 1] = count;
+      entryStart[c + 1] = count;
     }
   }
 }
