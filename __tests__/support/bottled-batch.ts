@@ -9,7 +9,7 @@ import { recipe } from './asking';
 /** Far enough ahead to be made, near enough that no lot has expired. */
 const DAYS_AHEAD = 12;
 
-/** A late hour in the lecture theatre, where nothing else stands. */
+/** A late hour in the demonstration theatre, where nothing else stands. */
 async function buildEvening(instructor: Caller): Promise<LabSession> {
   const { items } = bodyOf<{ items: RoomRow[] }>(await instructor.get('/api/rooms'));
   const day = formatISO(addDays(new Date(), DAYS_AHEAD), { representation: 'date' });
@@ -19,7 +19,7 @@ async function buildEvening(instructor: Caller): Promise<LabSession> {
       title: 'Printed matter',
       startsAt: `${day}T21:00:00Z`,
       endsAt: `${day}T22:00:00Z`,
-      roomId: items.find(({ name }) => name === 'Lecture theatre')?.id,
+      roomId: items.find(({ name }) => name === 'Demonstration theatre')?.id,
       benches: 10,
     }),
     201,

@@ -7,7 +7,7 @@ const ROOMS = [
   { name: 'Prep room', volumeM3: 110, airChangesPerHour: 8, fumeCupboards: 2, benches: 4 },
   { name: 'Laboratory 1', volumeM3: 180, airChangesPerHour: 6, fumeCupboards: 4, benches: 12 },
   { name: 'Laboratory 2', volumeM3: 150, airChangesPerHour: 6, fumeCupboards: 2, benches: 10 },
-  { name: 'Lecture theatre', volumeM3: 420, airChangesPerHour: 4, fumeCupboards: 0, benches: 1 },
+  { name: 'Demonstration theatre', volumeM3: 420, airChangesPerHour: 4, fumeCupboards: 0, benches: 1 },
 ];
 
 /** Storage groups are those of the storage table in lib/hazards. */

@@ -62,7 +62,7 @@ const WEEKLY: readonly {
     hour: 14,
     course: 'CH 110',
     title: 'Demonstration hour',
-    room: 'Lecture theatre',
+    room: 'Demonstration theatre',
     benches: 1,
     instructor: 'instructor',
   },
