@@ -2,7 +2,6 @@ import fc from 'fast-check';
 import {
   densityGPerMl,
   diluteStock,
-  interpolateRows,
   isTabulated,
   massPercentFromMolarity,
   molarityFromMassPercent,
