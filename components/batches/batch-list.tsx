@@ -2,12 +2,12 @@
 
 import Link from 'next/link';
 import type { Route } from 'next';
-import { BATCH_STATES, stateWords } from '@/lib/domain/states';
+import { BATCH_STATES, stateChoices } from '@/lib/domain/states';
 import { batchEndpoints } from '@/lib/schemas/batches';
 import type { BatchRow } from '@/lib/schemas/batches';
 import { Amount } from '../ui/amount';
+import { ChoiceFilter } from '../ui/choice-filter';
 import { EmptyState } from '../ui/empty-state';
-import { Select } from '../ui/inputs';
 import { ListTable } from '../ui/list-table';
 import { Moment } from '../ui/moment';
 import { StateMark } from '../ui/state-mark';
@@ -24,20 +24,14 @@ export function BatchList() {
       defaults={NEWEST_FIRST}
       empty={<EmptyState title="No batch yet">A batch comes here when it is planned.</EmptyState>}
       filters={(state, change) => (
-        <Select
-          id="batch-state"
+        <ChoiceFilter
           label="State"
-          value={state.state ?? ''}
-          onChange={(event) => change({ state: event.target.value })}
-          className="w-44"
-        >
-          <option value="">any</option>
-          {BATCH_STATES.map((name) => (
-            <option key={name} value={name}>
-              {stateWords(name)}
-            </option>
-          ))}
-        </Select>
+          field="state"
+          choices={stateChoices(BATCH_STATES)}
+          anyWords="any"
+          state={state}
+          change={change}
+        />
       )}
       columns={[
         {

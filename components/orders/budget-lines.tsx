@@ -1,5 +1,5 @@
 import { formatMoney } from '@/lib/client/format';
-import type { BudgetRow } from '@/lib/schemas/orders';
+import type { BudgetRow } from '@/lib/schemas/budgets';
 
 /** Each budget as a line: spent, promised, left. */
 export function BudgetLines({ budgets }: { readonly budgets: readonly BudgetRow[] }) {

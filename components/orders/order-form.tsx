@@ -7,8 +7,9 @@ import type { FormEvent } from 'react';
 import { toast } from 'sonner';
 import { ApiProblem, callApi, newIdempotencyKey } from '@/lib/client/api';
 import { formatMoney } from '@/lib/client/format';
+import { offerEndpoints } from '@/lib/schemas/offers';
+import type { OfferRow } from '@/lib/schemas/offers';
 import { orderEndpoints } from '@/lib/schemas/orders';
-import type { OfferRow } from '@/lib/schemas/orders';
 import { Alert } from '../ui/alert';
 import { Button } from '../ui/button';
 import { Combobox } from '../ui/combobox';
@@ -34,7 +35,7 @@ export function OrderForm({ budgets }: { readonly budgets: readonly { id: string
   const total = lines.reduce((sum, { offer, packs }) => sum + offer.priceMinor * (Number(packs) || 0), 0);
 
   const find = async (text: string, signal: AbortSignal) => {
-    const { items } = await callApi(orderEndpoints.offers, {
+    const { items } = await callApi(offerEndpoints.list, {
       query: { search: text, pageSize: 15, ...(supplier ? { supplierId: supplier.supplierId } : {}) },
       signal,
     });

@@ -2,12 +2,14 @@
 
 import Link from 'next/link';
 import { formatMoney, formatNumber } from '@/lib/client/format';
-import { ORDER_STATES, stateWords } from '@/lib/domain/states';
+import { ORDER_STATES, stateChoices, stateWords } from '@/lib/domain/states';
 import { orderEndpoints } from '@/lib/schemas/orders';
-import type { OrderRow, ShortageRow } from '@/lib/schemas/orders';
+import type { OrderRow } from '@/lib/schemas/orders';
+import { shortageEndpoints } from '@/lib/schemas/shortages';
+import type { ShortageRow } from '@/lib/schemas/shortages';
 import { LinkButton } from '../ui/button';
+import { ChoiceFilter } from '../ui/choice-filter';
 import { EmptyState } from '../ui/empty-state';
-import { Select } from '../ui/inputs';
 import { ListTable } from '../ui/list-table';
 import { Moment } from '../ui/moment';
 import { StateMark } from '../ui/state-mark';
@@ -27,20 +29,14 @@ export function OrderList() {
         </EmptyState>
       }
       filters={(state, change) => (
-        <Select
-          id="order-state"
+        <ChoiceFilter
           label="State"
-          value={state.state ?? ''}
-          onChange={(event) => change({ state: event.target.value })}
-          className="w-48"
-        >
-          <option value="">all</option>
-          {ORDER_STATES.map((name) => (
-            <option key={name} value={name}>
-              {stateWords(name)}
-            </option>
-          ))}
-        </Select>
+          field="state"
+          choices={stateChoices(ORDER_STATES)}
+          anyWords="any"
+          state={state}
+          change={change}
+        />
       )}
       columns={[
         {
@@ -90,7 +86,7 @@ const STATE_WORDS: Readonly<Record<ShortageRow['state'], string>> = {
 export function ShortageList() {
   return (
     <ListTable<ShortageRow>
-      endpoint={orderEndpoints.shortages}
+      endpoint={shortageEndpoints.list}
       label="Shortages"
       empty={
         <EmptyState title="Nothing is short">
@@ -98,20 +94,14 @@ export function ShortageList() {
         </EmptyState>
       }
       filters={(state, change) => (
-        <Select
-          id="shortage-state"
+        <ChoiceFilter
           label="State"
-          value={state.state ?? ''}
-          onChange={(event) => change({ state: event.target.value })}
-          className="w-44"
-        >
-          <option value="">all</option>
-          {Object.entries(STATE_WORDS).map(([name, words]) => (
-            <option key={name} value={name}>
-              {words}
-            </option>
-          ))}
-        </Select>
+          field="state"
+          choices={Object.entries(STATE_WORDS)}
+          anyWords="any"
+          state={state}
+          change={change}
+        />
       )}
       columns={[
         {

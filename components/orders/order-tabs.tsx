@@ -1,30 +1,11 @@
-import Link from 'next/link';
-import type { Route } from 'next';
-import { classNames } from '../ui/class-names';
+import { SectionLinks } from '../ui/section-links';
 
-const TABS = [
+const PAGES = [
   ['Orders', '/orders'],
   ['Shortages', '/orders/shortages'],
 ] as const;
 
-export function OrderTabs({ here }: { readonly here: (typeof TABS)[number][1] }) {
-  return (
-    <nav aria-label="Orders" className="no-print mb-6 flex flex-wrap gap-x-6 border-b border-line">
-      {TABS.map(([name, href]) => (
-        <Link
-          key={href}
-          href={href as Route}
-          aria-current={href === here ? 'page' : undefined}
-          className={classNames(
-            'min-h-11 py-2 no-underline',
-            href === here
-              ? 'font-bold text-ink shadow-[inset_0_-3px_0_var(--verdigris)]'
-              : 'text-soft hover:text-ink',
-          )}
-        >
-          {name}
-        </Link>
-      ))}
-    </nav>
-  );
+/** Orders, and what they are to answer. */
+export function OrderTabs({ here }: { readonly here: (typeof PAGES)[number][1] }) {
+  return <SectionLinks label="Orders" links={PAGES} here={here} />;
 }

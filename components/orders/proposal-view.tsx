@@ -8,7 +8,8 @@ import { toast } from 'sonner';
 import { ApiProblem, callApi, newIdempotencyKey } from '@/lib/client/api';
 import { formatMoney } from '@/lib/client/format';
 import { orderEndpoints } from '@/lib/schemas/orders';
-import type { Proposal } from '@/lib/schemas/orders';
+import { shortageEndpoints } from '@/lib/schemas/shortages';
+import type { Proposal } from '@/lib/schemas/shortages';
 import { Alert } from '../ui/alert';
 import { Button } from '../ui/button';
 import { Select } from '../ui/inputs';
@@ -29,7 +30,7 @@ export function ProposalView({
   const [keys] = useState(() => new Map<string, string>());
   const { data, error, isPending } = useQuery({
     queryKey: ['order-proposal'],
-    queryFn: ({ signal }) => callApi(orderEndpoints.proposal, { signal }),
+    queryFn: ({ signal }) => callApi(shortageEndpoints.proposal, { signal }),
     staleTime: 0,
   });
 

@@ -3,11 +3,10 @@
 import { useMutation, useQueryClient } from '@tanstack/react-query';
 import { toast } from 'sonner';
 import { callApi } from '@/lib/client/api';
-import { OUTBOX_STATES } from '@/lib/domain/states';
 import { outboxEndpoints } from '@/lib/schemas/outbox';
 import type { OutboxItem } from '@/lib/schemas/outbox';
 import { Button } from '../ui/button';
-import { Select } from '../ui/inputs';
+import { ChoiceFilter } from '../ui/choice-filter';
 import { ListTable } from '../ui/list-table';
 import { Moment } from '../ui/moment';
 import { StateMark } from '../ui/state-mark';
@@ -30,20 +29,14 @@ export function OutgoingList() {
       label="Outgoing messages"
       empty="Nothing has been sent yet."
       filters={(state, change) => (
-        <Select
-          id="outgoing-state"
+        <ChoiceFilter
           label="State"
-          value={state.state ?? ''}
-          onChange={(event) => change({ state: event.target.value })}
-          className="w-40"
-        >
-          <option value="">all</option>
-          {OUTBOX_STATES.map((name) => (
-            <option key={name} value={name}>
-              {WORDS[name]}
-            </option>
-          ))}
-        </Select>
+          field="state"
+          choices={Object.entries(WORDS)}
+          anyWords="any"
+          state={state}
+          change={change}
+        />
       )}
       columns={[
         { id: 'what', header: 'What', cell: ({ summary }) => summary },

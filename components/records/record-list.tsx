@@ -2,7 +2,8 @@
 
 import { recordEndpoints } from '@/lib/schemas/records';
 import type { RecordEntry } from '@/lib/schemas/records';
-import { Select, TextInput } from '../ui/inputs';
+import { TextInput } from '../ui/inputs';
+import { ChoiceFilter } from '../ui/choice-filter';
 import { ListTable } from '../ui/list-table';
 import { Moment } from '../ui/moment';
 
@@ -18,7 +19,7 @@ const KINDS = [
   'user',
   'session',
   'outgoing',
-];
+].map((kind) => [kind, kind] as const);
 
 export function RecordList() {
   return (
@@ -29,18 +30,14 @@ export function RecordList() {
       empty="Nothing has been recorded yet."
       filters={(state, change) => (
         <>
-          <Select
-            id="record-kind"
+          <ChoiceFilter
             label="Kind"
-            value={state.subjectType ?? ''}
-            onChange={(event) => change({ subjectType: event.target.value })}
-            className="w-40"
-          >
-            <option value="">all</option>
-            {KINDS.map((kind) => (
-              <option key={kind}>{kind}</option>
-            ))}
-          </Select>
+            field="subjectType"
+            choices={KINDS}
+            anyWords="any"
+            state={state}
+            change={change}
+          />
           <TextInput
             id="record-from"
             label="From"

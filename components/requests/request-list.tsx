@@ -1,12 +1,12 @@
 'use client';
 
 import Link from 'next/link';
-import { REQUEST_STATES, stateWords } from '@/lib/domain/states';
+import { REQUEST_STATES, stateChoices } from '@/lib/domain/states';
 import { requestEndpoints } from '@/lib/schemas/requests';
 import type { RequestRow } from '@/lib/schemas/requests';
 import { LinkButton } from '../ui/button';
+import { ChoiceFilter, WHOSE } from '../ui/choice-filter';
 import { EmptyState } from '../ui/empty-state';
-import { Select } from '../ui/inputs';
 import { ListTable } from '../ui/list-table';
 import { Moment } from '../ui/moment';
 import { StateMark } from '../ui/state-mark';
@@ -35,30 +35,15 @@ export function RequestList({
       }
       filters={(state, change) => (
         <>
-          <Select
-            id="request-whose"
-            label="Whose"
-            value={state.whose ?? whose}
-            onChange={(event) => change({ whose: event.target.value })}
-            className="w-36"
-          >
-            <option value="mine">mine</option>
-            <option value="all">everybody’s</option>
-          </Select>
-          <Select
-            id="request-state"
+          <ChoiceFilter label="Whose" field="whose" choices={WHOSE} state={state} change={change} />
+          <ChoiceFilter
             label="State"
-            value={state.state ?? ''}
-            onChange={(event) => change({ state: event.target.value })}
-            className="w-44"
-          >
-            <option value="">all</option>
-            {REQUEST_STATES.map((name) => (
-              <option key={name} value={name}>
-                {stateWords(name)}
-              </option>
-            ))}
-          </Select>
+            field="state"
+            choices={stateChoices(REQUEST_STATES)}
+            anyWords="any"
+            state={state}
+            change={change}
+          />
         </>
       )}
       columns={[

@@ -1,11 +1,11 @@
 'use client';
 
 import Link from 'next/link';
-import { REVIEW_STATES, stateWords } from '@/lib/domain/states';
+import { REVIEW_STATES, stateChoices, stateWords } from '@/lib/domain/states';
 import { reviewEndpoints } from '@/lib/schemas/reviews';
 import type { ReviewRow } from '@/lib/schemas/reviews';
+import { ChoiceFilter } from '../ui/choice-filter';
 import { EmptyState } from '../ui/empty-state';
-import { Select } from '../ui/inputs';
 import { ListTable } from '../ui/list-table';
 import { Moment } from '../ui/moment';
 import { StateMark } from '../ui/state-mark';
@@ -23,19 +23,13 @@ export function ReviewQueue() {
         <EmptyState title="Nothing waits">A plan comes here when a finding says review or stop.</EmptyState>
       }
       filters={(state, change) => (
-        <Select
-          id="review-state"
+        <ChoiceFilter
           label="State"
-          value={state.state ?? 'waiting'}
-          onChange={(event) => change({ state: event.target.value })}
-          className="w-56"
-        >
-          {REVIEW_STATES.map((name) => (
-            <option key={name} value={name}>
-              {stateWords(name)}
-            </option>
-          ))}
-        </Select>
+          field="state"
+          choices={stateChoices(REVIEW_STATES)}
+          state={state}
+          change={change}
+        />
       )}
       columns={[
         {

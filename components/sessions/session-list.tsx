@@ -3,8 +3,9 @@
 import Link from 'next/link';
 import { labSessionEndpoints } from '@/lib/schemas/lab-sessions';
 import type { LabSession } from '@/lib/schemas/lab-sessions';
+import { ChoiceFilter, WHOSE } from '../ui/choice-filter';
 import { EmptyState } from '../ui/empty-state';
-import { Select, TextInput } from '../ui/inputs';
+import { TextInput } from '../ui/inputs';
 import { ListTable } from '../ui/list-table';
 import { Moment } from '../ui/moment';
 import { StateMark } from '../ui/state-mark';
@@ -30,16 +31,7 @@ export function SessionList({
       }
       filters={(state, change) => (
         <>
-          <Select
-            id="session-whose"
-            label="Whose"
-            value={state.whose ?? whose}
-            onChange={(event) => change({ whose: event.target.value })}
-            className="w-36"
-          >
-            <option value="mine">mine</option>
-            <option value="all">everybody’s</option>
-          </Select>
+          <ChoiceFilter label="Whose" field="whose" choices={WHOSE} state={state} change={change} />
           <TextInput
             id="session-from"
             label="From"

@@ -2,12 +2,12 @@
 
 import Link from 'next/link';
 import type { Route } from 'next';
-import { BOTTLE_STATES, stateWords } from '@/lib/domain/states';
+import { BOTTLE_STATES, stateChoices } from '@/lib/domain/states';
 import { bottleEndpoints } from '@/lib/schemas/bottles';
 import type { BottleRow } from '@/lib/schemas/bottles';
 import { Amount } from '../ui/amount';
+import { ChoiceFilter } from '../ui/choice-filter';
 import { EmptyState } from '../ui/empty-state';
-import { Select } from '../ui/inputs';
 import { ListTable } from '../ui/list-table';
 import { Moment } from '../ui/moment';
 import { StateMark } from '../ui/state-mark';
@@ -23,20 +23,14 @@ export function BottleList() {
         <EmptyState title="No bottle yet">Bottles come here when a checked batch is divided.</EmptyState>
       }
       filters={(state, change) => (
-        <Select
-          id="bottle-state"
+        <ChoiceFilter
           label="State"
-          value={state.state ?? ''}
-          onChange={(event) => change({ state: event.target.value })}
-          className="w-44"
-        >
-          <option value="">any</option>
-          {BOTTLE_STATES.map((name) => (
-            <option key={name} value={name}>
-              {stateWords(name)}
-            </option>
-          ))}
-        </Select>
+          field="state"
+          choices={stateChoices(BOTTLE_STATES)}
+          anyWords="any"
+          state={state}
+          change={change}
+        />
       )}
       columns={[
         {

@@ -7,8 +7,8 @@ import type { LotRow } from '@/lib/schemas/lots';
 import type { Place } from '@/lib/schemas/places';
 import { Formula } from '../chemistry/formula';
 import { Amount } from '../ui/amount';
+import { ChoiceFilter } from '../ui/choice-filter';
 import { EmptyState } from '../ui/empty-state';
-import { Select } from '../ui/inputs';
 import { ListTable } from '../ui/list-table';
 import { Moment } from '../ui/moment';
 import { StateMark } from '../ui/state-mark';
@@ -37,33 +37,15 @@ export function LotList({ places }: { readonly places: readonly Place[] }) {
       }
       filters={(state, change) => (
         <>
-          <Select
-            id="lot-show"
-            label="Lots"
-            value={state.show ?? 'in-stock'}
-            onChange={(event) => change({ show: event.target.value })}
-            className="w-56"
-          >
-            {SHOWN.map(([value, words]) => (
-              <option key={value} value={value}>
-                {words}
-              </option>
-            ))}
-          </Select>
-          <Select
-            id="lot-place"
+          <ChoiceFilter label="Lots" field="show" choices={SHOWN} state={state} change={change} />
+          <ChoiceFilter
             label="Place"
-            value={state.placeId ?? ''}
-            onChange={(event) => change({ placeId: event.target.value })}
-            className="w-56"
-          >
-            <option value="">anywhere</option>
-            {places.map(({ id, name, roomName }) => (
-              <option key={id} value={id}>
-                {name}, {roomName}
-              </option>
-            ))}
-          </Select>
+            field="placeId"
+            choices={places.map(({ id, name, roomName }) => [id, `${name}, ${roomName}`] as const)}
+            anyWords="anywhere"
+            state={state}
+            change={change}
+          />
         </>
       )}
       columns={[

@@ -1,7 +1,7 @@
 'use client';
 
 import { createColumnHelper, tableFeatures, useTable } from '@tanstack/react-table';
-import { useDeferredValue, useEffect, useId, useMemo, useState } from 'react';
+import { useEffect, useId, useMemo, useRef, useState } from 'react';
 import type { ReactNode } from 'react';
 import { exportAddress, useList, useListState } from '@/lib/client/lists';
 import type { Endpoint } from '@/lib/schemas/endpoint';
@@ -201,7 +201,7 @@ function HeaderCell<Row>({
   );
 }
 
-/** Waits until typing rests before it asks the server. */
+/** Waits until typing rests before it asks the server. Whoever follows a link meanwhile is not called back. */
 function SearchBox({
   label,
   value,
@@ -213,19 +213,50 @@ function SearchBox({
 }) {
   const id = useId();
   const [text, setText] = useState(value);
-  const settled = useDeferredValue(text);
+  const [asked, setAsked] = useState(value);
+  const [seen, setSeen] = useState(value);
+  // The address changed otherwise than by this box: with the Back button, say.
+  if (value !== seen) {
+    setSeen(value);
+    if (value !== asked) {
+      setAsked(value);
+      setText(value);
+    }
+  }
+
+  const timer = useRef<ReturnType<typeof setTimeout>>(undefined);
+  const search = useRef(onSearch);
   useEffect(() => {
-    if (settled === value) return undefined;
-    const timer = setTimeout(() => onSearch(settled), SEARCH_DELAY_MS);
-    return () => clearTimeout(timer);
-  }, [settled, value, onSearch]);
+    search.current = onSearch;
+  }, [onSearch]);
+  useEffect(() => {
+    const stop = (event: MouseEvent) => {
+      const opensElsewhere = event.ctrlKey || event.metaKey || event.shiftKey;
+      if (!opensElsewhere && event.target instanceof Element && event.target.closest('a[href]'))
+        clearTimeout(timer.current);
+    };
+    document.addEventListener('click', stop, true);
+    return () => {
+      document.removeEventListener('click', stop, true);
+      clearTimeout(timer.current);
+    };
+  }, []);
+
+  const change = (typed: string) => {
+    setText(typed);
+    clearTimeout(timer.current);
+    timer.current = setTimeout(() => {
+      setAsked(typed);
+      search.current(typed);
+    }, SEARCH_DELAY_MS);
+  };
   return (
     <TextInput
       id={id}
       label={label}
       type="search"
       value={text}
-      onChange={(event) => setText(event.target.value)}
+      onChange={(event) => change(event.target.value)}
       className="w-full sm:w-80"
     />
   );

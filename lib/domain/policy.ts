@@ -104,11 +104,11 @@ export const POLICY = {
 } as const satisfies Record<string, Rule<never>>;
 
 export type Action = keyof typeof POLICY;
-type RecordOf<A extends Action> = (typeof POLICY)[A] extends {
-  when: (viewer: Viewer, record: infer R) => boolean;
-}
-  ? R
-  : undefined;
+type RecordOf<A extends Action> = A extends Action
+  ? (typeof POLICY)[A] extends { when: (viewer: Viewer, record: infer R) => boolean }
+    ? R
+    : undefined
+  : never;
 
 /** Whether the roles alone allow it; true for a rule that also needs the record. */
 export function mayByRole(viewer: Viewer | null, action: Action): boolean {

@@ -133,3 +133,10 @@ export const BOTTLE_MOVES: Readonly<Record<BottleState, readonly BottleState[]>>
 export function stateWords(state: string): string {
   return state.replaceAll('-', ' ');
 }
+
+/** States with their words, for a choice. */
+export function stateChoices(
+  states: readonly string[],
+): readonly (readonly [state: string, words: string])[] {
+  return states.map((state) => [state, stateWords(state)]);
+}

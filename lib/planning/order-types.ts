@@ -16,7 +16,7 @@ export interface Offer {
   readonly packMicro: number;
   /** Price of one pack in minor units, for orders of at least `fromPacks`; the first from 1, ascending. */
   readonly prices: readonly { readonly fromPacks: number; readonly priceMinor: number }[];
-  /** Packs the supplier has; null: any number. */
+  /** Packs the supplier has; null where it sets no limit. */
   readonly maxPacks: number | null;
   /** Days it keeps after arrival; null: longer than any plan. */
   readonly shelfLifeDays: number | null;

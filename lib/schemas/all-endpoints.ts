@@ -6,16 +6,20 @@ import { needEndpoints } from './needs';
 import { placeEndpoints } from './places';
 import type { Endpoint } from './endpoint';
 import { dataSheetEndpoints } from './data-sheets';
+import { budgetEndpoints } from './budgets';
 import { demonstrationEndpoints } from './demonstrations';
 import { houseEndpoints } from './house';
 import { labSessionEndpoints } from './lab-sessions';
 import { mixEndpoints } from './mixes';
+import { offerEndpoints } from './offers';
 import { orderEndpoints } from './orders';
 import { outboxEndpoints } from './outbox';
+import { paymentEndpoints } from './payments';
 import { recordEndpoints } from './records';
 import { requestEndpoints } from './requests';
 import { reviewEndpoints } from './reviews';
 import { searchEndpoints } from './search';
+import { shortageEndpoints } from './shortages';
 import { solutionEndpoints } from './solutions';
 import { substanceEndpoints } from './substances';
 import { userEndpoints } from './users';
@@ -29,6 +33,10 @@ export const ALL_ENDPOINTS: readonly Endpoint[] = [
   labSessionEndpoints,
   mixEndpoints,
   orderEndpoints,
+  offerEndpoints,
+  budgetEndpoints,
+  paymentEndpoints,
+  shortageEndpoints,
   outboxEndpoints,
   recordEndpoints,
   requestEndpoints,

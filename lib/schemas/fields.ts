@@ -11,6 +11,8 @@ export const noteField = z.string().trim().max(2000);
 export const emailField = z.string().trim().toLowerCase().pipe(z.email('Not an e-mail address.').max(200));
 export const dayField = z.iso.date();
 export const momentField = z.iso.datetime({ offset: true });
+/** An amount of money in minor units: pence. */
+export const moneyField = z.number().int();
 export const roleField = z.enum(ROLES);
 
 /** Password to be set: long rather than odd. bcrypt reads 72 bytes at most, so no more are taken. */

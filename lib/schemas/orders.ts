@@ -1,70 +1,9 @@
 import { z } from 'zod';
-import { LEDGER_UNITS } from '@/lib/domain/quantities';
-import {
-  INVOICE_STATES,
-  ORDER_STATES,
-  OUTBOX_STATES,
-  PAYMENT_STATES,
-  SHORTAGE_STATES,
-} from '@/lib/domain/states';
+import { INVOICE_STATES, ORDER_STATES, OUTBOX_STATES, PAYMENT_STATES } from '@/lib/domain/states';
 import { endpoint } from './endpoint';
-import { dayField, idField, idParams, noteField, versionField } from './fields';
+import { dayField, idField, idParams, moneyField, noteField, versionField } from './fields';
 import { listQuery, pageOf } from './list';
 import { recordEntrySchema } from './records';
-
-const money = z.number().int();
-
-export const shortageRowSchema = z.object({
-  id: z.uuid(),
-  substanceId: z.string(),
-  substanceName: z.string(),
-  amount: z.number(),
-  unit: z.enum(LEDGER_UNITS),
-  neededOn: z.string(),
-  orderBy: z.string(),
-  state: z.enum(SHORTAGE_STATES),
-  requestId: z.uuid().nullable(),
-  requestCode: z.string().nullable(),
-  orderId: z.uuid().nullable(),
-  orderCode: z.string().nullable(),
-});
-export type ShortageRow = z.infer<typeof shortageRowSchema>;
-export const shortageListQuerySchema = listQuery(['orderBy', 'neededOn', 'state'], 'orderBy', {
-  state: z.enum(SHORTAGE_STATES).optional(),
-});
-export type ShortageListQuery = z.output<typeof shortageListQuerySchema>;
-
-export const proposalSchema = z.object({
-  status: z.enum(['nothing-short', 'planned', 'over-budget', 'no-plan']),
-  message: z.string(),
-  currency: z.string(),
-  totalMinor: money,
-  naiveMinor: money.nullable(),
-  savedMinor: money.nullable(),
-  gap: z.number(),
-  suppliers: z.array(
-    z.object({
-      supplierId: z.uuid(),
-      supplierName: z.string(),
-      goodsMinor: money,
-      extrasMinor: money,
-      totalMinor: money,
-      lines: z.array(
-        z.object({
-          offerId: z.uuid(),
-          substanceName: z.string(),
-          stockNumber: z.string(),
-          packs: z.number().int(),
-          packSize: z.string(),
-          lineTotalMinor: money,
-          reason: z.string(),
-        }),
-      ),
-    }),
-  ),
-  uncovered: z.array(z.string()),
-});
-export type Proposal = z.infer<typeof proposalSchema>;
 
 export const orderRowSchema = z.object({
   id: z.uuid(),
@@ -72,7 +11,7 @@ export const orderRowSchema = z.object({
   state: z.enum(ORDER_STATES),
   supplierName: z.string(),
   draftedByName: z.string(),
-  totalMinor: money,
+  totalMinor: moneyField,
   currency: z.string(),
   lineCount: z.number().int(),
   isPaid: z.boolean(),
@@ -86,8 +25,8 @@ export const orderSchema = orderRowSchema.extend({
   budgetId: z.uuid(),
   budgetName: z.string(),
   note: z.string().nullable(),
-  goodsMinor: money,
-  surchargeMinor: money,
+  goodsMinor: moneyField,
+  surchargeMinor: moneyField,
   supplierReference: z.string().nullable(),
   approvedByName: z.string().nullable(),
   lines: z.array(
@@ -98,8 +37,8 @@ export const orderSchema = orderRowSchema.extend({
       stockNumber: z.string(),
       packs: z.number().int(),
       packSize: z.string(),
-      priceMinor: money,
-      lineTotalMinor: money,
+      priceMinor: moneyField,
+      lineTotalMinor: moneyField,
       receivedPacks: z.number().int(),
       supplierStatus: z.string().nullable(),
       reason: z.string().nullable(),
@@ -113,7 +52,7 @@ export const orderSchema = orderRowSchema.extend({
     })
     .nullable(),
   invoices: z.array(
-    z.object({ id: z.uuid(), number: z.string(), amountMinor: money, state: z.enum(INVOICE_STATES) }),
+    z.object({ id: z.uuid(), number: z.string(), amountMinor: moneyField, state: z.enum(INVOICE_STATES) }),
   ),
   sending: z
     .object({
@@ -130,8 +69,8 @@ export const orderSchema = orderRowSchema.extend({
   mayChange: z.boolean(),
   mayCancel: z.boolean(),
   /** The limits that apply: of this person, and what its budget has left, this order counted once it is approved. */
-  yourLimitMinor: money,
-  budgetLeftMinor: money,
+  yourLimitMinor: moneyField,
+  budgetLeftMinor: moneyField,
 });
 export type OrderDetail = z.infer<typeof orderSchema>;
 
@@ -193,35 +132,6 @@ export const orderListQuerySchema = listQuery(['code', 'state', 'totalMinor', 'c
 });
 export type OrderListQuery = z.output<typeof orderListQuerySchema>;
 
-export const offerRowSchema = z.object({
-  id: z.uuid(),
-  supplierId: z.uuid(),
-  supplierName: z.string(),
-  substanceId: z.string(),
-  substanceName: z.string(),
-  stockNumber: z.string(),
-  packSize: z.string(),
-  priceMinor: money,
-  leadDays: z.number().int(),
-});
-export type OfferRow = z.infer<typeof offerRowSchema>;
-export const offerListQuerySchema = listQuery(['priceMinor', 'stockNumber'], 'priceMinor', {
-  supplierId: idField.optional(),
-  substanceId: z.string().max(80).optional(),
-});
-export type OfferListQuery = z.output<typeof offerListQuerySchema>;
-
-export const budgetSchema = z.object({
-  id: z.uuid(),
-  name: z.string(),
-  year: z.number().int(),
-  amountMinor: money,
-  committedMinor: money,
-  spentMinor: money,
-  currency: z.string(),
-});
-export type BudgetRow = z.infer<typeof budgetSchema>;
-
 const move = (
   verb: string,
   summary: string,
@@ -240,53 +150,6 @@ const move = (
   });
 
 export const orderEndpoints = {
-  shortages: endpoint({
-    method: 'GET',
-    path: '/api/shortages',
-    action: 'order:read',
-    summary: 'What planned use lacks, and by when to order',
-    query: shortageListQuerySchema,
-    response: pageOf(shortageRowSchema),
-    columns: [
-      { key: 'substanceName', header: 'Substance' },
-      { key: 'amount', header: 'Short' },
-      { key: 'unit', header: 'Unit' },
-      { key: 'neededOn', header: 'Needed on' },
-      { key: 'orderBy', header: 'Order by' },
-      { key: 'requestCode', header: 'For' },
-      { key: 'state', header: 'State' },
-    ],
-  }),
-  proposal: endpoint({
-    method: 'GET',
-    path: '/api/order-proposal',
-    action: 'order:read',
-    summary: 'The order of least cost for all open shortages',
-    response: proposalSchema,
-    cost: 'heavy',
-  }),
-  offers: endpoint({
-    method: 'GET',
-    path: '/api/offers',
-    action: 'order:read',
-    summary: 'Packs on offer',
-    query: offerListQuerySchema,
-    response: pageOf(offerRowSchema),
-    columns: [
-      { key: 'supplierName', header: 'Supplier' },
-      { key: 'substanceName', header: 'Substance' },
-      { key: 'stockNumber', header: 'Stock number' },
-      { key: 'packSize', header: 'Pack' },
-      { key: 'priceMinor', header: 'Price, minor units' },
-    ],
-  }),
-  budgets: endpoint({
-    method: 'GET',
-    path: '/api/budgets',
-    action: 'order:read',
-    summary: 'Budgets with what is committed and spent',
-    response: z.object({ items: z.array(budgetSchema) }),
-  }),
   list: endpoint({
     method: 'GET',
     path: '/api/orders',
@@ -363,13 +226,5 @@ export const orderEndpoints = {
     body: invoiceSchema,
     response: orderSchema,
     status: 201,
-  }),
-  webhook: endpoint({
-    method: 'POST',
-    path: '/api/payments/webhook',
-    action: 'webhook:receive',
-    summary: 'Events of the payment service, signed',
-    takes: 'raw',
-    response: z.object({ received: z.boolean() }),
   }),
 };

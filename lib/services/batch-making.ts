@@ -28,8 +28,7 @@ const isoDay = (date: Date): string => formatISO(date, { representation: 'date' 
 /** The batch as it is now, for somebody who may change it. */
 async function changing(viewer: Viewer, id: string, version?: number): Promise<BatchModel> {
   const { batch } = await loadBatch(viewer, id);
-  if (version !== undefined && batch.version !== version)
-    refuseStale(batch, version, await getBatch(viewer, id));
+  if (version !== undefined) await refuseStale(batch, version, () => getBatch(viewer, id));
   return batch;
 }
 
@@ -84,7 +83,7 @@ export async function enterTake(
     const amountMicro = toMicro(entry.amount);
     const explanation = entry.explanation === '' ? null : entry.explanation;
     if (take.actualMicro === amountMicro && take.explanation === explanation) return;
-    if (take.version !== entry.version) refuseStale(take, entry.version, await getBatch(viewer, batchId));
+    await refuseStale(take, entry.version, () => getBatch(viewer, batchId));
     refuseUnlessMaking(batch);
     await refuseStopped(batch);
     const lot = await usableLot(take);

@@ -53,7 +53,7 @@ export async function bottleBatch(
 ): Promise<Batch> {
   await write(async () => {
     const { batch } = await loadBatch(viewer, id);
-    if (batch.version !== version) refuseStale(batch, version, await getBatch(viewer, id));
+    await refuseStale(batch, version, () => getBatch(viewer, id));
     if (batch.state !== 'checked') {
       throw new DomainError(
         'wrong-state',
@@ -137,7 +137,7 @@ export async function handOver(viewer: Viewer, { requestId, bottleIds }: HandOve
 async function loadBottle(id: string, version: number): Promise<BottleModel> {
   const bottle = await BottleModel.findByPk(id);
   if (!bottle) throw new DomainError('not-found', 'There is no such bottle.');
-  refuseStale(bottle, version, (await presentBottles([bottle]))[0]);
+  await refuseStale(bottle, version, async () => (await presentBottles([bottle]))[0]);
   return bottle;
 }
 

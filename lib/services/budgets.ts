@@ -1,6 +1,6 @@
 import 'server-only';
 import { col, fn, Op } from 'sequelize';
-import type { BudgetRow } from '@/lib/schemas/orders';
+import type { BudgetRow } from '@/lib/schemas/budgets';
 import { BudgetModel } from '@/models/budget';
 import { OrderModel } from '@/models/order';
 

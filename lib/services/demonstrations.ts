@@ -138,7 +138,7 @@ export async function updateDemonstration(
     const row = await DemonstrationModel.findByPk(id);
     if (!row) throw new DomainError('not-found', 'There is no such demonstration.');
     authorise(viewer, 'recipe:update', { ownerId: row.ownerId }, 'It is the demonstration of somebody else.');
-    if (row.version !== version) refuseStale(row, version, await presentOne(row));
+    await refuseStale(row, version, () => presentOne(row));
     await requireSolutions(portions);
     await row.update({
       ...rest,

@@ -74,7 +74,7 @@ async function setHold(
   await write(async () => {
     const row = await find();
     if (!row) throw new DomainError('not-found', `There is no such ${kind}.`);
-    refuseStale(row, change.version, { version: row.version });
+    await refuseStale(row, change.version, () => ({ version: row.version }));
     if ((row.heldAt !== null) === change.isHeld) {
       throw new DomainError(
         'wrong-state',

@@ -133,7 +133,7 @@ export async function updateLabSession(
       { ownerId: session.instructorId },
       'It is the session of another instructor.',
     );
-    if (session.version !== patch.version) refuseStale(session, patch.version, await presentOne(session));
+    await refuseStale(session, patch.version, () => presentOne(session));
     await requireRoom(patch.roomId);
     const before = { roomId: session.roomId, startsAt: session.startsAt, endsAt: session.endsAt };
     const { isCancelled, version, startsAt, endsAt, ...rest } = patch;

@@ -181,7 +181,7 @@ export async function updateLot(viewer: Viewer, id: string, patch: LotPatch): Pr
   await write(async () => {
     const lot = await LotModel.findByPk(id);
     if (!lot) throw new DomainError('not-found', 'There is no such lot.');
-    if (lot.version !== patch.version) refuseStale(lot, patch.version, await getLot(viewer, id));
+    await refuseStale(lot, patch.version, () => getLot(viewer, id));
     if (!(await PlaceModel.findByPk(patch.placeId)))
       throw invalid([{ pointer: '#/placeId', detail: 'There is no such place.' }]);
     const { placeId, openedOn, expiresOn, reason } = patch;

@@ -62,15 +62,19 @@ export async function changeState<K extends keyof typeof MOVES, S extends keyof 
   });
 }
 
-/** @throws DomainError `conflict`, carrying the newer row, where somebody changed it meanwhile */
-export function refuseStale(row: { version: number }, version: number, current: unknown): void {
-  if (row.version !== version) {
-    throw new DomainError(
-      'conflict',
-      'Somebody changed this meanwhile. What you typed is kept; look at the newer state and try again.',
-      {
-        data: { current },
-      },
-    );
-  }
+/**
+ * @param current - reads the newer state, when it comes to that
+ * @throws DomainError `conflict`, carrying the newer state, where somebody changed it meanwhile
+ */
+export async function refuseStale(
+  row: { version: number },
+  version: number,
+  current: () => unknown,
+): Promise<void> {
+  if (row.version === version) return;
+  throw new DomainError(
+    'conflict',
+    'Somebody changed this meanwhile. What you typed is kept; look at the newer state and try again.',
+    { data: { current: await current() } },
+  );
 }

@@ -2,7 +2,7 @@ import 'server-only';
 import { Op } from 'sequelize';
 import type { Viewer } from '@/lib/domain/roles';
 import type { Page } from '@/lib/schemas/list';
-import type { OfferListQuery, OfferRow } from '@/lib/schemas/orders';
+import type { OfferListQuery, OfferRow } from '@/lib/schemas/offers';
 import { OfferModel } from '@/models/offer';
 import { SubstanceModel } from '@/models/substance';
 import { SupplierModel } from '@/models/supplier';

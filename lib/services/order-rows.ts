@@ -1,6 +1,6 @@
 import 'server-only';
 import { DomainError } from '@/lib/domain/errors';
-import { may } from '@/lib/domain/policy';
+import { authorise, may } from '@/lib/domain/policy';
 import { fromMicro } from '@/lib/domain/quantities';
 import type { LedgerUnit } from '@/lib/domain/quantities';
 import type { Viewer } from '@/lib/domain/roles';
@@ -18,6 +18,7 @@ import { SupplierModel } from '@/models/supplier';
 import { UserModel } from '@/models/user';
 import { budgetLeftMinor } from './budgets';
 import { rowsById } from './lookup';
+import { refuseStale } from './moves';
 import { storyOf } from './records';
 
 /** The college keeps its books in one currency. */
@@ -69,6 +70,41 @@ export function whyNotApprove(viewer: Viewer, order: OrderModel): string | null 
 export async function loadOrder(id: string): Promise<OrderModel> {
   const order = await OrderModel.findByPk(id);
   if (!order) throw new DomainError('not-found', 'There is no such order.');
+  return order;
+}
+
+type OrderAction = 'order:update' | 'order:cancel' | 'order:approve' | 'order:refuse' | 'order:send';
+
+/** Why a person can't do something with an order, in words. */
+function whyNot(viewer: Viewer, action: OrderAction, order: OrderModel): string | undefined {
+  switch (action) {
+    // Whoever drafted it is never who approves it, so nobody else may put lines into it.
+    case 'order:update':
+      return 'It is the draft of another person; only they change it.';
+    case 'order:cancel':
+      return 'Only who drafted it, or purchasing, can cancel it.';
+    case 'order:refuse':
+      return 'You drafted it; another person must judge it.';
+    case 'order:approve':
+    case 'order:send':
+      return whyNotApprove(viewer, order) ?? undefined;
+  }
+}
+
+/**
+ * An order to do something with, as the person saw it.
+ * @throws DomainError `not-found`, `forbidden`, or `conflict` where it changed meanwhile
+ */
+export async function orderToMove(
+  viewer: Viewer,
+  action: OrderAction,
+  id: string,
+  version: number,
+): Promise<OrderModel> {
+  const order = await loadOrder(id);
+  const { draftedById: ownerId, totalMinor } = order;
+  authorise(viewer, action, { ownerId, totalMinor }, whyNot(viewer, action, order));
+  await refuseStale(order, version, () => presentOrder(viewer, order));
   return order;
 }
 

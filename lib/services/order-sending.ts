@@ -2,7 +2,6 @@ import 'server-only';
 import { Op } from 'sequelize';
 import { environment } from '@/lib/config/env';
 import { DomainError } from '@/lib/domain/errors';
-import { authorise } from '@/lib/domain/policy';
 import type { Viewer } from '@/lib/domain/roles';
 import type { OrderDetail, OrderMove } from '@/lib/schemas/orders';
 import { write } from '@/models/db';
@@ -13,9 +12,9 @@ import { PaymentModel } from '@/models/payment';
 import { SubstanceModel } from '@/models/substance';
 import { SupplierModel } from '@/models/supplier';
 import { rowsById } from './lookup';
-import { changeState, refuseStale } from './moves';
+import { changeState } from './moves';
 import { releaseShortages } from './order-lines';
-import { loadOrder, packSizeOf, presentOrder, whyNotApprove } from './order-rows';
+import { orderToMove, packSizeOf, presentOrder } from './order-rows';
 import { enqueue, enqueueLetter } from './outbox';
 
 /**
@@ -24,14 +23,7 @@ import { enqueue, enqueueLetter } from './outbox';
  */
 export async function sendOrder(viewer: Viewer, id: string, { version }: OrderMove): Promise<OrderDetail> {
   return write(async () => {
-    const order = await loadOrder(id);
-    authorise(
-      viewer,
-      'order:send',
-      { ownerId: order.draftedById, totalMinor: order.totalMinor },
-      whyNotApprove(viewer, order) ?? undefined,
-    );
-    if (order.version !== version) refuseStale(order, version, await presentOrder(viewer, order));
+    const order = await orderToMove(viewer, 'order:send', id, version);
     const supplier = await SupplierModel.findByPk(order.supplierId, { rejectOnEmpty: true });
     if (!supplier.active) throw new DomainError('wrong-state', `${supplier.name} is closed.`);
     const lines = await OrderLineModel.findAll({
@@ -104,14 +96,7 @@ export async function cancelOrder(
   { version, reason }: OrderMove,
 ): Promise<OrderDetail> {
   return write(async () => {
-    const order = await loadOrder(id);
-    authorise(
-      viewer,
-      'order:cancel',
-      { ownerId: order.draftedById },
-      'Only who drafted it, or purchasing, can cancel it.',
-    );
-    if (order.version !== version) refuseStale(order, version, await presentOrder(viewer, order));
+    const order = await orderToMove(viewer, 'order:cancel', id, version);
     const payment = await PaymentModel.findOne({
       where: { orderId: order.id, state: ['requested', 'succeeded'] },
     });

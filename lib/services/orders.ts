@@ -1,6 +1,5 @@
 import 'server-only';
 import { DomainError, invalid } from '@/lib/domain/errors';
-import { authorise } from '@/lib/domain/policy';
 import type { Viewer } from '@/lib/domain/roles';
 import type { Page } from '@/lib/schemas/list';
 import type {
@@ -18,13 +17,10 @@ import { OrderModel } from '@/models/order';
 import { SupplierModel } from '@/models/supplier';
 import { nextCode } from './codes';
 import { contains, orderOf } from './lists';
-import { changeState, refuseStale } from './moves';
+import { changeState } from './moves';
 import { priceLines, saveLines } from './order-lines';
-import { CURRENCY, loadOrder, presentOrder, presentOrderRows } from './order-rows';
+import { CURRENCY, loadOrder, orderToMove, presentOrder, presentOrderRows } from './order-rows';
 import { record } from './record';
-
-/** Whoever drafted an order is never who approves it, so nobody else may put lines into it. */
-const NOT_YOUR_DRAFT = 'It is the draft of another person; only they change it.';
 
 export async function listOrders(_viewer: Viewer, query: OrderListQuery): Promise<Page<OrderRow>> {
   const suppliers = query.search
@@ -86,9 +82,7 @@ export async function createOrder(viewer: Viewer, input: OrderCreate): Promise<O
 
 export async function updateOrder(viewer: Viewer, id: string, patch: OrderPatch): Promise<OrderDetail> {
   return write(async () => {
-    const order = await loadOrder(id);
-    authorise(viewer, 'order:update', { ownerId: order.draftedById }, NOT_YOUR_DRAFT);
-    if (order.version !== patch.version) refuseStale(order, patch.version, await presentOrder(viewer, order));
+    const order = await orderToMove(viewer, 'order:update', id, patch.version);
     if (order.state !== 'draft') throw new DomainError('wrong-state', 'Only a draft can be changed.');
     const supplier = await SupplierModel.findByPk(order.supplierId, { rejectOnEmpty: true });
     await requireBudget(patch.budgetId);
@@ -118,9 +112,7 @@ export async function submitOrder(
   { version, reason }: OrderMove,
 ): Promise<OrderDetail> {
   return write(async () => {
-    const order = await loadOrder(id);
-    authorise(viewer, 'order:update', { ownerId: order.draftedById }, NOT_YOUR_DRAFT);
-    if (order.version !== version) refuseStale(order, version, await presentOrder(viewer, order));
+    const order = await orderToMove(viewer, 'order:update', id, version);
     await changeState(viewer, 'order', order, 'for-approval', {
       label: order.code,
       reason: reason || null,

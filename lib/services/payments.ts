@@ -29,7 +29,7 @@ export async function payOrder(viewer: Viewer, id: string, { version }: OrderMov
       whyNotApprove(viewer, order) ?? undefined,
     );
     if (order.paidAt) throw new DomainError('wrong-state', 'It is paid already.');
-    if (order.version !== version) refuseStale(order, version, await presentOrder(viewer, order));
+    await refuseStale(order, version, () => presentOrder(viewer, order));
     if (!PAYABLE.includes(order.state))
       throw new DomainError('wrong-state', 'Only an approved order can be paid.');
     const pending = await PaymentModel.findOne({ where: { orderId: order.id, state: 'requested' } });

@@ -21,7 +21,7 @@ const RECEIVABLE = ['sent', 'acknowledged', 'part-received'];
 export async function receivePacks(viewer: Viewer, id: string, input: ReceiptInput): Promise<OrderDetail> {
   return write(async () => {
     const order = await loadOrder(id);
-    if (order.version !== input.version) refuseStale(order, input.version, await presentOrder(viewer, order));
+    await refuseStale(order, input.version, () => presentOrder(viewer, order));
     if (!RECEIVABLE.includes(order.state))
       throw new DomainError(
         'wrong-state',
@@ -91,7 +91,7 @@ export async function enterInvoice(
 ): Promise<OrderDetail> {
   return write(async () => {
     const order = await loadOrder(id);
-    if (order.version !== version) refuseStale(order, version, await presentOrder(viewer, order));
+    await refuseStale(order, version, () => presentOrder(viewer, order));
     if (await InvoiceModel.findOne({ where: { orderId: order.id, number } }))
       throw invalid([{ pointer: '#/number', detail: 'This invoice is entered already.' }]);
     const isMatched = amountMinor === order.totalMinor;

@@ -151,7 +151,7 @@ export async function createRequest(viewer: Viewer, input: RequestCreate): Promi
 export async function updateRequest(viewer: Viewer, id: string, patch: RequestPatch): Promise<RequestDetail> {
   return write(async () => {
     const request = await loadOwn(viewer, id);
-    if (request.version !== patch.version) refuseStale(request, patch.version, await detail(viewer, request));
+    await refuseStale(request, patch.version, () => detail(viewer, request));
     if (!CHANGEABLE.includes(request.state))
       throw new DomainError(
         'wrong-state',
@@ -192,7 +192,7 @@ export async function submitRequest(
 ): Promise<RequestDetail> {
   return write(async () => {
     const request = await loadOwn(viewer, id);
-    if (request.version !== version) refuseStale(request, version, await detail(viewer, request));
+    await refuseStale(request, version, () => detail(viewer, request));
     if (!SUBMITTABLE.includes(request.state))
       throw new DomainError(
         'wrong-state',
@@ -219,7 +219,7 @@ export async function withdrawRequest(
 ): Promise<RequestDetail> {
   return write(async () => {
     const request = await loadOwn(viewer, id);
-    if (request.version !== version) refuseStale(request, version, await detail(viewer, request));
+    await refuseStale(request, version, () => detail(viewer, request));
     await withdraw(viewer, request, reason || null);
     return detail(viewer, request);
   });

@@ -46,8 +46,7 @@ export async function decideReview(
   await confirmPassword(viewer, decision.password);
   await write(async () => {
     const { review, request, plan } = await loadReview(id);
-    if (review.version !== decision.version)
-      refuseStale(review, decision.version, await getReview(viewer, id));
+    await refuseStale(review, decision.version, () => getReview(viewer, id));
     const isAgreement = decision.verdict === 'agreed' || decision.verdict === 'agreed-with-conditions';
     const obstacle = whyNotAgree(viewer, review, plan, request);
     if (isAgreement && obstacle)

@@ -6,7 +6,7 @@ import type { Viewer } from '@/lib/domain/roles';
 import { planOrder } from '@/lib/planning/order-plan';
 import type { OrderNeed } from '@/lib/planning/order-types';
 import type { Page } from '@/lib/schemas/list';
-import type { Proposal, ShortageListQuery, ShortageRow } from '@/lib/schemas/orders';
+import type { Proposal, ShortageListQuery, ShortageRow } from '@/lib/schemas/shortages';
 import { OfferModel } from '@/models/offer';
 import { OrderModel } from '@/models/order';
 import { OrderLineModel } from '@/models/order-line';

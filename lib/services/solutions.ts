@@ -192,7 +192,7 @@ export async function updateSolution(
     const row = await SolutionModel.findByPk(id);
     if (!row) throw new DomainError('not-found', 'There is no such solution.');
     authorise(viewer, 'recipe:update', { ownerId: row.ownerId }, 'It is the recipe of somebody else.');
-    if (row.version !== version) refuseStale(row, version, await detail(row));
+    await refuseStale(row, version, () => detail(row));
     await row.update({
       ...rest,
       archivedAt: isArchived ? (row.archivedAt ?? new Date()) : null,

@@ -97,7 +97,7 @@ export async function holdSubstance(
   return write(async () => {
     const row = await SubstanceModel.findByPk(id);
     if (!row) throw new DomainError('not-found', 'There is no such substance.');
-    if (row.version !== version) refuseStale(row, version, await presentOne(row));
+    await refuseStale(row, version, () => presentOne(row));
     await row.update({
       heldAt: isHeld ? (row.heldAt ?? new Date()) : null,
       heldReason: isHeld ? reason : null,

@@ -87,7 +87,7 @@ describe('shortages', () => {
     expect(findShortages([], [], [policy(5, 1)], today).shortages).toHaveLength(1);
   });
 
-  test('soonest-expiring first meets as much as any order of use could', () => {
+  test('soonest-expiring first meets as much as the best order of use could', () => {
     const dayOf = (n: number) => `2026-12-${String(n).padStart(2, '0')}`;
     const parcels = fc.array(
       fc.tuple(

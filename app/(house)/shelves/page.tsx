@@ -1,6 +1,6 @@
 import type { Metadata } from 'next';
 import { Cabinets } from '@/components/shelves/cabinets';
-import { ShelfNav } from '@/components/shelves/shelf-nav';
+import { ShelfTabs } from '@/components/shelves/shelf-tabs';
 import { PageHeader } from '@/components/ui/page-header';
 import { pageViewer } from '@/lib/http/page';
 import { listShelves } from '@/lib/services/places';
@@ -18,7 +18,7 @@ export default async function ShelvesPage() {
         title={`${lots.length} lots on ${shelves.length} shelves${stopped > 0 ? `, ${stopped} not to be used` : ''}`}
         lead="Each bottle is a lot, filled as far as it is; a cross means on hold or past its date."
       />
-      <ShelfNav current="Cabinets" />
+      <ShelfTabs here="/shelves" />
       <Cabinets shelves={shelves} />
     </>
   );

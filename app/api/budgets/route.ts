@@ -1,5 +1,5 @@
 import { route } from '@/lib/http/route';
-import { orderEndpoints } from '@/lib/schemas/orders';
+import { budgetEndpoints } from '@/lib/schemas/budgets';
 import { listBudgets } from '@/lib/services/budgets';
 
-export const GET = route(orderEndpoints.budgets, async () => ({ items: await listBudgets() }));
+export const GET = route(budgetEndpoints.list, async () => ({ items: await listBudgets() }));

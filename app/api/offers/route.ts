@@ -1,5 +1,5 @@
 import { listRoute } from '@/lib/http/list-route';
-import { orderEndpoints } from '@/lib/schemas/orders';
+import { offerEndpoints } from '@/lib/schemas/offers';
 import { listOffers } from '@/lib/services/offers';
 
-export const GET = listRoute(orderEndpoints.offers, ({ viewer, query }) => listOffers(viewer, query));
+export const GET = listRoute(offerEndpoints.list, ({ viewer, query }) => listOffers(viewer, query));

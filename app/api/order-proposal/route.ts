@@ -1,5 +1,5 @@
 import { route } from '@/lib/http/route';
-import { orderEndpoints } from '@/lib/schemas/orders';
+import { shortageEndpoints } from '@/lib/schemas/shortages';
 import { proposeOrders } from '@/lib/services/shortages';
 
-export const GET = route(orderEndpoints.proposal, ({ viewer }) => proposeOrders(viewer));
+export const GET = route(shortageEndpoints.proposal, ({ viewer }) => proposeOrders(viewer));

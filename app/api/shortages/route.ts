@@ -1,5 +1,5 @@
 import { listRoute } from '@/lib/http/list-route';
-import { orderEndpoints } from '@/lib/schemas/orders';
+import { shortageEndpoints } from '@/lib/schemas/shortages';
 import { listShortages } from '@/lib/services/shortages';
 
-export const GET = listRoute(orderEndpoints.shortages, ({ viewer, query }) => listShortages(viewer, query));
+export const GET = listRoute(shortageEndpoints.list, ({ viewer, query }) => listShortages(viewer, query));

@@ -29,7 +29,7 @@ import type { Tableau } from './tableau';
  * the basis species carries the sum, and its relative error is the relative error of the balance.
  *
  * **Steps.** Newton's method on the logarithms of the balances (dissolved.ts); should it fail, damped steps on F
- * itself: slow, but sure because F is convex.
+ * itself (safe-steps.ts): slow, but sure because F is convex.
  *
  * **Solids** join and leave the active set one at a time, the most supersaturated first, from the solution of
  * the problem without them.

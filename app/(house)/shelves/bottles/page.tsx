@@ -1,6 +1,6 @@
 import type { Metadata } from 'next';
 import { BottleList } from '@/components/shelves/bottle-list';
-import { ShelfNav } from '@/components/shelves/shelf-nav';
+import { ShelfTabs } from '@/components/shelves/shelf-tabs';
 import { PageHeader } from '@/components/ui/page-header';
 import { pageViewer } from '@/lib/http/page';
 import { listBottles } from '@/lib/services/bottle-rows';
@@ -20,7 +20,7 @@ export default async function BottlesPage() {
   return (
     <>
       <PageHeader title={`${total} ${total === 1 ? 'bottle stands' : 'bottles stand'} in the prep room`} />
-      <ShelfNav current="Bottles" />
+      <ShelfTabs here="/shelves/bottles" />
       <BottleList />
     </>
   );

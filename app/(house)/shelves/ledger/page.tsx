@@ -1,6 +1,6 @@
 import type { Metadata } from 'next';
 import { MovementList } from '@/components/shelves/movement-list';
-import { ShelfNav } from '@/components/shelves/shelf-nav';
+import { ShelfTabs } from '@/components/shelves/shelf-tabs';
 import { PageHeader } from '@/components/ui/page-header';
 import { pageViewer } from '@/lib/http/page';
 
@@ -14,7 +14,7 @@ export default async function LedgerPage() {
         title="Everything that came in and went out"
         lead="Lines are never changed; a mistake is put right by a further line."
       />
-      <ShelfNav current="Ledger" />
+      <ShelfTabs here="/shelves/ledger" />
       <MovementList />
     </>
   );

@@ -1,6 +1,6 @@
 import type { Metadata } from 'next';
 import { LotList } from '@/components/shelves/lot-list';
-import { ShelfNav } from '@/components/shelves/shelf-nav';
+import { ShelfTabs } from '@/components/shelves/shelf-tabs';
 import { LinkButton } from '@/components/ui/button';
 import { PageHeader } from '@/components/ui/page-header';
 import { mayByRole } from '@/lib/domain/policy';
@@ -29,7 +29,7 @@ export default async function LotsPage() {
           ) : null
         }
       />
-      <ShelfNav current="Lots" />
+      <ShelfTabs here="/shelves/lots" />
       <LotList places={places} />
     </>
   );
